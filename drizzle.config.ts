@@ -1,0 +1,8 @@
+import { defineConfig } from 'drizzle-kit';
+
+export default defineConfig({
+  dialect: 'postgresql',
+  schema: './server/database/schema/*.ts',
+  out: './migrations',
+  casing: 'snake_case',
+});

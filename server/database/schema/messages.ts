@@ -1,0 +1,53 @@
+import {
+  index,
+  integer,
+  jsonb,
+  pgEnum,
+  pgTable,
+  text,
+  uniqueIndex,
+  uuid,
+} from 'drizzle-orm/pg-core';
+import { users } from './accounts';
+import { id, instant, madeAt } from './columns';
+import { patients } from './patients';
+
+export const outboxStatus = pgEnum('outbox_status', [
+  'pending',
+  'sending',
+  'sent',
+  'uncertain',
+  'cancelled',
+  'failed',
+]);
+
+/** What is to be told to whom, written in the transaction that it tells of; facts are read again at sending. */
+export const outbox = pgTable(
+  'outbox',
+  {
+    id: id(),
+    kind: text().notNull(),
+    dedupeKey: text().notNull(),
+    patientId: uuid().references(() => patients.id),
+    userId: uuid().references(() => users.id),
+    /** Ids of what the message is about, never the text of it. */
+    subject: jsonb().$type<Record<string, string>>().notNull(),
+    dueAt: instant().notNull(),
+    status: outboxStatus().notNull().default('pending'),
+    attempts: integer().notNull().default(0),
+    lastError: text(),
+    sentAt: instant(),
+    createdAt: madeAt(),
+  },
+  (t) => [
+    uniqueIndex('outbox_dedupe_unique').on(t.dedupeKey),
+    index('outbox_due').on(t.status, t.dueAt),
+  ],
+);
+
+/** Addresses that refused mail for good; nothing more is sent to them. */
+export const suppressions = pgTable('suppressions', {
+  address: text().primaryKey(),
+  reason: text().notNull(),
+  createdAt: madeAt(),
+});
