@@ -3,6 +3,7 @@ import { defineConfig } from 'vitest/config';
 
 const alias = { '@shared': fileURLToPath(new URL('./shared', import.meta.url)) };
 const env = { TZ: 'UTC' };
+const globalSetup = fileURLToPath(new URL('./test/database/global-setup.ts', import.meta.url));
 
 /** The browser's own specs run under `ng test`; everything else runs here, a project a kind. */
 export default defineConfig({
@@ -17,6 +18,7 @@ export default defineConfig({
           name: 'server',
           include: ['{server,emails,scripts}/**/*.spec.ts', 'test/server/**/*.spec.ts'],
           env,
+          globalSetup,
           testTimeout: 30_000,
           hookTimeout: 60_000,
         },
@@ -31,6 +33,7 @@ export default defineConfig({
           name: 'e2e',
           include: ['test/e2e/**/*.spec.ts'],
           env,
+          globalSetup,
           testTimeout: 180_000,
           hookTimeout: 180_000,
           fileParallelism: false,
