@@ -1,0 +1,23 @@
+import type { LoadChildrenCallback, Route, Routes } from '@angular/router';
+import { allow, landing } from './core/access-guard';
+import { type AreaPath, areaOf } from './core/navigation';
+
+/** The lazy routes of an area, open to the roles that navigation.ts names; the rail shows it from then on. */
+export function area(path: AreaPath, loadChildren: LoadChildrenCallback): Route {
+  const { label, roles } = areaOf(path);
+  return { path, title: label, canMatch: [allow({ roles })], loadChildren };
+}
+
+export const routes: Routes = [
+  { path: '', pathMatch: 'full', redirectTo: landing },
+  {
+    path: 'not-allowed',
+    title: 'Not allowed',
+    loadComponent: async () => (await import('./core/refusals/not-allowed-page')).NotAllowedPage,
+  },
+  {
+    path: '**',
+    title: 'Not found',
+    loadComponent: async () => (await import('./core/refusals/not-found-page')).NotFoundPage,
+  },
+];
