@@ -1,4 +1,5 @@
 import type { LoadChildrenCallback, Route, Routes } from '@angular/router';
+import { accountsRoutes } from './accounts/accounts.routes';
 import { allow, landing } from './core/access-guard';
 import { type AreaPath, areaOf } from './core/navigation';
 
@@ -10,6 +11,7 @@ export function area(path: AreaPath, loadChildren: LoadChildrenCallback): Route 
 
 export const routes: Routes = [
   { path: '', pathMatch: 'full', redirectTo: landing },
+  ...accountsRoutes,
   {
     path: 'not-allowed',
     title: 'Not allowed',

@@ -1,0 +1,23 @@
+import type { Routes } from '@angular/router';
+import { signedOut } from '../core/access-guard';
+
+export const accountsRoutes: Routes = [
+  {
+    path: 'sign-in',
+    title: 'Sign in',
+    canMatch: [signedOut],
+    loadComponent: async () => (await import('./sign-in-page/sign-in-page')).SignInPage,
+  },
+  {
+    path: 'forgotten-password',
+    title: 'Forgotten password',
+    loadComponent: async () =>
+      (await import('./forgotten-password-page/forgotten-password-page')).ForgottenPasswordPage,
+  },
+  {
+    path: 'set-password',
+    title: 'Set your password',
+    loadComponent: async () =>
+      (await import('./set-password-page/set-password-page')).SetPasswordPage,
+  },
+];
