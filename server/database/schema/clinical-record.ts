@@ -11,6 +11,7 @@ import {
   text,
   uuid,
 } from 'drizzle-orm/pg-core';
+import type { AnyPgColumn } from 'drizzle-orm/pg-core';
 import { users } from './accounts';
 import { id, instant, madeAt } from './columns';
 import { diagnosisKind, patients } from './patients';
@@ -150,8 +151,9 @@ export const medications = pgTable(
     dose: text().notNull(),
     schedule: text().notNull(),
     startedOn: date({ mode: 'string' }).notNull(),
-    /** A change of dose stops one entry and starts the next. */
     stoppedOn: date({ mode: 'string' }),
+    /** A change of dose stops one entry and starts the next, which names it. */
+    replaces: uuid().references((): AnyPgColumn => medications.id),
     ...attribution(),
   },
   (t) => [
@@ -257,6 +259,8 @@ export const thresholds = pgTable(
     /** The highest work tolerated before onset, METs. */
     clearMets: real(),
     exerciseTestId: uuid().references(() => exerciseTests.id),
+    /** The threshold that this one took the place of. */
+    supersedes: uuid().references((): AnyPgColumn => thresholds.id),
     foundOn: date({ mode: 'string' }).notNull(),
     note: text(),
     status: thresholdStatus().notNull().default('active'),

@@ -2,6 +2,7 @@ import { sql } from 'drizzle-orm';
 import {
   boolean,
   check,
+  customType,
   date,
   index,
   integer,
@@ -14,6 +15,8 @@ import {
 import { users } from './accounts';
 import { id, madeAt, nameText } from './columns';
 import { sites } from './program';
+
+const searchVector = customType<{ data: string }>({ dataType: () => 'tsvector' });
 
 export const sexAtBirth = pgEnum('sex_at_birth', ['female', 'male', 'unknown']);
 
@@ -39,14 +42,17 @@ export const patients = pgTable(
     userId: uuid()
       .unique()
       .references(() => users.id),
+    /** Folded beginnings to search by; the functions of the migration say what stands in it. */
+    searchTerms: searchVector().generatedAlwaysAs(
+      sql`patient_search_terms(family_name, given_name, record_number, birth_date)`,
+    ),
     version: integer().notNull().default(1),
     createdAt: madeAt(),
   },
   (t) => [
     index('patients_name').on(t.familyName, t.givenName, t.id),
     index('patients_site_name').on(t.siteId, t.familyName, t.givenName, t.id),
-    index('patients_family_prefix').on(sql`lower(${t.familyName}) text_pattern_ops`),
-    index('patients_given_prefix').on(sql`lower(${t.givenName}) text_pattern_ops`),
+    index('patients_search').using('gin', t.searchTerms),
     check('patients_birth_date', sql`${t.birthDate} > '1900-01-01'`),
   ],
 );
