@@ -70,10 +70,14 @@ describe('settings that are right', () => {
     const config = loadConfig({
       ...demo,
       STRIPE_SECRET_KEY: 'sk_test_standin',
-      STRIPE_WEBHOOK_SECRET: 'whsec_0123456789abcdef',
+      STRIPE_WEBHOOK_SECRET: 'whsec_0123456789abcdef,whsec_fedcba9876543210',
       STRIPE_API_BASE: 'http://127.0.0.1:3001',
     });
     expect(config.stripe?.endpoint).toEqual({ host: '127.0.0.1', port: 3001 });
+    expect(config.stripe?.webhookSecrets).toEqual([
+      'whsec_0123456789abcdef',
+      'whsec_fedcba9876543210',
+    ]);
   });
 });
 

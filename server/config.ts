@@ -5,7 +5,8 @@ import { isLoopback, settings, type Settings } from './environment';
 /** The service that takes card payments; `endpoint` is set for the local stand-in alone. */
 export interface PaymentConfig {
   readonly secretKey: string;
-  readonly webhookSecret: string;
+  /** The secret in use and, during a rotation, the former one. */
+  readonly webhookSecrets: readonly string[];
   readonly endpoint: { readonly host: string; readonly port: number } | null;
 }
 
@@ -87,7 +88,7 @@ function paymentConfig(all: Settings): PaymentConfig | null {
   const base = all.STRIPE_API_BASE ? new URL(all.STRIPE_API_BASE) : null;
   return {
     secretKey: all.STRIPE_SECRET_KEY,
-    webhookSecret: all.STRIPE_WEBHOOK_SECRET,
+    webhookSecrets: all.STRIPE_WEBHOOK_SECRET.split(','),
     endpoint: base ? { host: base.hostname, port: Number(base.port || 80) } : null,
   };
 }

@@ -67,13 +67,14 @@ export const settings = z.object({
   PLIMSOLL_TRUST_PROXY: wholeNumber(0, 10).default(0),
   PLIMSOLL_SESSION_SECRET: secret.optional(),
   PLIMSOLL_CSRF_SECRET: secret.optional(),
+  /** A neutral name: what kind of care it is must not show in an inbox. */
   PLIMSOLL_MAIL_FROM: z
     .string()
     .regex(
       /^[^<>\r\n]*<?[^\s<>@]+@[^\s<>@]+>?$/,
       'expected an address like Program <desk@rehab.example>',
     )
-    .default('Harbor Lane Cardiac Rehab <no-reply@harborlane.example>'),
+    .default('Harbor Lane <no-reply@harborlane.example>'),
   DATABASE_URL: postgresUrl,
   DATABASE_OWNER_URL: postgresUrl.optional(),
   DATABASE_REPLICA_URL: postgresUrl.optional(),
@@ -83,7 +84,10 @@ export const settings = z.object({
     .optional(),
   STRIPE_WEBHOOK_SECRET: z
     .string()
-    .regex(/^whsec_\w{16,}$/, 'expected a signing secret that begins with whsec_')
+    .regex(
+      /^whsec_\w{16,}(,whsec_\w{16,})?$/,
+      'expected a signing secret that begins with whsec_, or during a rotation the new one, a comma and the old one',
+    )
     .optional(),
   STRIPE_API_BASE: paymentApi.optional(),
   SMTP_URL: smtpUrl.optional(),

@@ -65,13 +65,13 @@ afterEach(async () => {
   receiver.close();
 });
 
+const endpointOf = ({ port }: PaymentService) => ({ host: '127.0.0.1', port });
+
 function paymentsTo(target: PaymentService, timeoutMs = 2000): Payments {
-  return createPayments({
-    secretKey: key,
-    webhookSecrets: [secret, formerSecret],
-    apiBase: new URL(target.url),
+  return createPayments(
+    { secretKey: key, webhookSecrets: [secret, formerSecret], endpoint: endpointOf(target) },
     timeoutMs,
-  });
+  );
 }
 
 async function control(body: object): Promise<{
@@ -291,7 +291,7 @@ describe('what goes wrong comes as an outcome', () => {
     const wrong = createPayments({
       secretKey: 'sk_test_wrong',
       webhookSecrets: [secret],
-      apiBase: new URL(service.url),
+      endpoint: endpointOf(service),
     });
     await expect(wrong.createCheckoutSession(request)).rejects.toThrow(
       Stripe.errors.StripeAuthenticationError,
@@ -303,7 +303,7 @@ describe('what goes wrong comes as an outcome', () => {
       createPayments({
         secretKey: 'sk_live_x',
         webhookSecrets: [secret],
-        apiBase: new URL(service.url),
+        endpoint: endpointOf(service),
       }),
     ).toThrow('test key only');
   });

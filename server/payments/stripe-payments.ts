@@ -1,4 +1,5 @@
 import Stripe from 'stripe';
+import type { PaymentConfig } from '../config';
 import type {
   CheckoutRequest,
   CheckoutSession,
@@ -10,32 +11,23 @@ import type {
 import { readSession } from './session-view';
 import { createWebhookReader } from './webhook-reader';
 
-export interface PaymentsConfig {
-  secretKey: string;
-  /** The current signing secret, and during a rotation the former one after it. */
-  webhookSecrets: readonly [string, ...string[]];
-  /** Null is the real service; a local stand-in is on loopback. */
-  apiBase: URL | null;
-  /** Milliseconds for each of at most three tries; at most 10 000, the default. */
-  timeoutMs?: number;
-}
-
 const longestTimeout = 10_000;
 const retries = 2;
 
 /**
- * Payments through the official SDK.
+ * Payments through the official SDK, to the real service or to the stand-in that the config names.
+ * @param timeoutMs milliseconds for each of at most three tries, at most 10 000
  * @throws Error when a live key would be sent to a stand-in
  */
-export function createPayments(config: PaymentsConfig): Payments {
-  if (config.apiBase && !config.secretKey.startsWith('sk_test_')) {
+export function createPayments(config: PaymentConfig, timeoutMs = longestTimeout): Payments {
+  if (config.endpoint && config.secretKey.includes('_live_')) {
     throw new Error('A payment stand-in takes a test key only (sk_test_…).');
   }
   const stripe = new Stripe(config.secretKey, {
-    timeout: Math.min(config.timeoutMs ?? longestTimeout, longestTimeout),
+    timeout: Math.min(timeoutMs, longestTimeout),
     maxNetworkRetries: retries,
     telemetry: false,
-    ...addressOf(config.apiBase),
+    ...(config.endpoint ? { ...config.endpoint, protocol: 'http' } : {}),
   });
   return {
     createCheckoutSession: (request) => openSession(stripe, request),
@@ -46,12 +38,6 @@ export function createPayments(config: PaymentsConfig): Payments {
     createRefund: (request) => refund(stripe, request),
     readWebhook: createWebhookReader(config.webhookSecrets),
   };
-}
-
-function addressOf(base: URL | null): Stripe.StripeConfig {
-  if (!base) return {};
-  const protocol = base.protocol === 'http:' ? 'http' : 'https';
-  return { host: base.hostname, port: base.port || (protocol === 'http' ? 80 : 443), protocol };
 }
 
 function openSession(
