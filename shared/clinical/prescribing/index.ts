@@ -1,0 +1,4 @@
+export * from './answer';
+export * from './policy';
+export * from './request';
+export * from './request-bounds';

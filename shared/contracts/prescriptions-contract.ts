@@ -1,0 +1,3 @@
+export { prescriptionAnswerSchema } from './prescription-answer';
+export { prescriptionRequestSchema } from './prescription-request';
+export type { PrescriptionRequestInput } from './prescription-request';

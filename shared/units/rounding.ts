@@ -1,0 +1,26 @@
+/** Takes the noise of binary fractions out before a number is rounded whole: 90.80000000000001 is 90.8. */
+export function toMillionths(value: number): number {
+  return Math.round(value * 1e6) / 1e6;
+}
+
+/** The next whole number at or above; for the lower end of a range, which never widens by rounding. */
+export function roundUp(value: number): number {
+  return Math.ceil(toMillionths(value));
+}
+
+/** The next whole number at or below; for upper ends and ceilings. */
+export function roundDown(value: number): number {
+  return Math.floor(toMillionths(value));
+}
+
+/** The nearest multiple of `step` at or below `value`; `step` is above zero. */
+export function snapDown(value: number, step: number): number {
+  return toMillionths(roundDown(value / step) * step);
+}
+
+/** A number for reading with `digits` decimals, rounded toward the inside of its range; no trailing zeros are cut. */
+export function formatInward(value: number, digits: number, end: 'lower' | 'upper'): string {
+  const scale = 10 ** digits;
+  const whole = end === 'lower' ? roundUp(value * scale) : roundDown(value * scale);
+  return (whole / scale).toFixed(digits);
+}
