@@ -71,7 +71,6 @@ export class SignInPage {
       await this.#router.navigateByUrl(safeReturnPath(this.return(), location.origin) ?? '/');
     } catch (error) {
       this.problem.set(toProblem(error));
-      this.form.controls.password.reset();
     } finally {
       this.sending.set(false);
     }

@@ -1,8 +1,8 @@
 import { ChangeDetectionStrategy, Component, input } from '@angular/core';
 
-/** A fact's name, its value as content, and below them where it comes from and of when. */
+/** A fact's name, its value as content, and below them where it comes from and of when: `<dl><div appFact label="…">`. */
 @Component({
-  selector: 'app-fact',
+  selector: 'div[appFact]',
   template: `
     <dt>{{ label() }}</dt>
     <dd class="value"><ng-content /></dd>
