@@ -2,7 +2,8 @@ import { fileURLToPath } from 'node:url';
 import { defineConfig } from 'vitest/config';
 
 const alias = { '@shared': fileURLToPath(new URL('./shared', import.meta.url)) };
-const env = { TZ: 'UTC' };
+/** UTC unless `npm test` runs a suite in another zone on purpose. */
+const env = { TZ: process.env['TEST_TZ'] ?? 'UTC' };
 const globalSetup = fileURLToPath(new URL('./test/database/global-setup.ts', import.meta.url));
 
 /** The browser's own specs run under `ng test`; everything else runs here, a project a kind. */

@@ -7,6 +7,9 @@ import { spawn } from 'node:child_process';
  * @property {string} errors standard error
  */
 
+/** @type {Set<import('node:child_process').ChildProcess>} */
+const running = new Set();
+
 /**
  * Runs a program to its end and collects what it printed. Never rejects: the caller judges the status.
  * @param {string} program
@@ -17,15 +20,29 @@ import { spawn } from 'node:child_process';
 export function runCommand(program, args, { input, ...options } = {}) {
   return new Promise((resolve) => {
     const child = spawn(program, args, { ...options, stdio: ['pipe', 'pipe', 'pipe'] });
+    running.add(child);
     let output = '';
     let errors = '';
+    /** @param {number} code */
+    const end = (code) => {
+      running.delete(child);
+      resolve({ code, output, errors });
+    };
     child.stdout.setEncoding('utf8').on('data', (text) => (output += text));
     child.stderr.setEncoding('utf8').on('data', (text) => (errors += text));
-    child.on('error', (error) => resolve({ code: 127, output, errors: error.message }));
-    child.on('close', (code) => resolve({ code: code ?? 128, output, errors }));
+    child.on('error', (error) => {
+      errors += error.message;
+      end(127);
+    });
+    child.on('close', (code) => end(code ?? 128));
     // A program that ends before it has read its input is judged by its status, not by the broken pipe.
     child.stdin.on('error', () => undefined).end(input);
   });
+}
+
+/** Asks every program that is still running to end. */
+export function endCommands() {
+  for (const child of running) child.kill('SIGTERM');
 }
 
 /**

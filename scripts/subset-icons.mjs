@@ -5,7 +5,7 @@ import subsetFont from 'subset-font';
 
 const root = new URL('../', import.meta.url);
 const names = readFileSync(new URL('src/app/ui/icon/icon-names.ts', root), 'utf8');
-const characters = [...names.matchAll(/'\\u([0-9a-f]{4})'/g)].map(([, hex]) =>
+const characters = [...names.matchAll(/'\\u([0-9a-f]{4})'/g)].map(([, hex = '']) =>
   String.fromCharCode(Number.parseInt(hex, 16)),
 );
 const whole = fileURLToPath(

@@ -43,3 +43,12 @@ export async function ensureRoles(superuserUrl, passwords) {
 export async function ensureDatabase(superuserUrl, database) {
   await psql(superuserUrl, MAKE_DATABASE, { database, owner: OWNER_ROLE, app: APP_ROLE });
 }
+
+/**
+ * Removes a database, ending whatever is connected to it.
+ * @param {string} superuserUrl
+ * @param {string} database
+ */
+export async function dropDatabase(superuserUrl, database) {
+  await psql(superuserUrl, 'DROP DATABASE IF EXISTS :"database" WITH (FORCE);', { database });
+}

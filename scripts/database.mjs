@@ -1,0 +1,3 @@
+import { runMain } from './run-main.mjs';
+
+await runMain(() => import('./database/main.mjs'));

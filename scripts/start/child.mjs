@@ -1,0 +1,102 @@
+import { spawn } from 'node:child_process';
+import { createWriteStream, existsSync, mkdirSync, renameSync } from 'node:fs';
+import { join } from 'node:path';
+import { createInterface } from 'node:readline';
+import { setTimeout as sleep } from 'node:timers/promises';
+import { SetupFailure } from '../failure.mjs';
+import { ROOT } from '../paths.mjs';
+
+/** How long a process may take to finish what it has in hand before it is killed. */
+const PATIENCE_MS = 30_000;
+const LAST_LINES = 20;
+
+/**
+ * A process of the product, running beside this one. It ends with this one, even when this one is killed: the channel
+ * between the two closes, and each of them ends when that happens.
+ * @typedef {object} Child
+ * @property {string} name
+ * @property {Promise<number | null>} ended exit status
+ * @property {() => string} lastLines what it printed last
+ * @property {() => Promise<void>} stop
+ */
+
+/**
+ * @param {string} folder
+ * @param {string} name
+ */
+function openLog(folder, name) {
+  mkdirSync(folder, { recursive: true, mode: 0o700 });
+  const file = join(folder, `${name}.log`);
+  if (existsSync(file)) renameSync(file, `${file}.1`);
+  return createWriteStream(file, { mode: 0o600 });
+}
+
+/**
+ * Starts a bundled entry point. What it prints goes to a log; lines for people, that is, not JSON, also to `show`.
+ * @param {object} options
+ * @param {string} options.name of dist/server/NAME.js
+ * @param {NodeJS.ProcessEnv} options.env
+ * @param {string} options.logFolder
+ * @param {(line: string) => void} [options.show]
+ * @returns {Child}
+ */
+export function startChild({ name, env, logFolder, show = () => undefined }) {
+  const log = openLog(logFolder, name);
+  const child = spawn(process.execPath, ['--enable-source-maps', `dist/server/${name}.js`], {
+    cwd: ROOT,
+    env,
+    stdio: ['ignore', 'pipe', 'pipe', 'ipc'],
+  });
+  /** @type {string[]} */
+  const recent = [];
+  for (const stream of [child.stdout, child.stderr]) {
+    if (!stream) continue;
+    createInterface({ input: stream }).on('line', (line) => {
+      log.write(`${line}\n`);
+      recent.push(line);
+      if (recent.length > LAST_LINES) recent.shift();
+      if (line.trim() && !line.startsWith('{')) show(line);
+    });
+  }
+  const ended = new Promise((resolve) => {
+    child.once('error', () => resolve(null));
+    child.once('close', (code) => resolve(code));
+  });
+  return {
+    name,
+    ended,
+    lastLines: () => recent.join('\n'),
+    async stop() {
+      child.kill('SIGTERM');
+      const patience = new AbortController();
+      const killing = sleep(PATIENCE_MS, undefined, { signal: patience.signal })
+        .then(() => child.kill('SIGKILL'))
+        .catch(() => undefined);
+      await ended;
+      patience.abort();
+      await killing;
+    },
+  };
+}
+
+/**
+ * Waits until a process answers 200 at an address.
+ * @param {Child} child
+ * @param {string} url
+ * @param {number} [patience] milliseconds
+ */
+export async function waitUntilHealthy(child, url, patience = 60_000) {
+  const end = Date.now() + patience;
+  let over = false;
+  void child.ended.then(() => (over = true));
+  while (!over && Date.now() < end) {
+    const answer = await fetch(url).catch(() => null);
+    if (answer?.ok) return;
+    await sleep(50);
+  }
+  throw new SetupFailure({
+    did: `Started dist/server/${child.name}.js and asked ${url} whether it is well.`,
+    why: child.lastLines() || (over ? 'It ended at once.' : 'It gave no answer.'),
+    type: `less .plimsoll/logs/${child.name}.log`,
+  });
+}
