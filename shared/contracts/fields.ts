@@ -1,0 +1,64 @@
+import * as z from 'zod';
+import './zod';
+
+// Fields that requests share. PostgreSQL's text holds no NUL, and no field of one line needs a control character.
+
+/* eslint-disable-next-line no-control-regex -- to refuse them */
+const oneLine = /^[^\u0000-\u001f\u007f]*$/;
+/* eslint-disable-next-line no-control-regex -- to refuse them */
+const severalLines = /^[^\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f]*$/;
+
+/** One line of text, its ends trimmed, with at least one character. */
+export const textField = (maximum: number, empty = 'Fill this in') =>
+  z
+    .string(empty)
+    .trim()
+    .min(1, empty)
+    .max(maximum, `Use at most ${maximum} characters`)
+    .regex(oneLine, 'Use plain text on one line');
+
+/** Text of several lines, its ends trimmed. */
+export const noteField = (maximum: number) =>
+  z
+    .string()
+    .trim()
+    .max(maximum, `Use at most ${maximum} characters`)
+    .regex(severalLines, 'Use plain text');
+
+/** A date of the local calendar, YYYY-MM-DD. */
+export const localDateField = z.iso.date('Enter a date');
+
+/** A number within bounds, ends included; `unit` stands in the message. */
+export const numberField = (bounds: { lowest: number; highest: number }, unit: string) => {
+  const message = `Enter ${bounds.lowest} to ${bounds.highest}${unit === '' ? '' : ` ${unit}`}`;
+  return z.number(message).min(bounds.lowest, message).max(bounds.highest, message);
+};
+
+/** A whole number within bounds, ends included. */
+export const wholeNumberField = (bounds: { lowest: number; highest: number }, unit: string) => {
+  const message = `Enter ${bounds.lowest} to ${bounds.highest}${unit === '' ? '' : ` ${unit}`}`;
+  return z.int(message).min(bounds.lowest, message).max(bounds.highest, message);
+};
+
+/** As many rows of a list as a caller may ask for at once. */
+export const pageLimitField = z
+  .int('Enter a whole number')
+  .min(1, 'Ask for 1 to 100 rows')
+  .max(100, 'Ask for 1 to 100 rows')
+  .default(25);
+
+/** Where a list goes on, as the answer before gave it. */
+export const cursorField = z.string().min(1).max(2000);
+
+/** A page of a list; `nextCursor` is null at the end. */
+export const pageOf = <Item extends z.ZodType>(item: Item) =>
+  z.object({ items: z.array(item), nextCursor: z.string().nullable() });
+
+/** An IANA time zone that this runtime knows. */
+export const timeZoneField = z.string().refine((zone) => {
+  try {
+    return new Intl.DateTimeFormat('en-US', { timeZone: zone }).resolvedOptions().timeZone !== '';
+  } catch {
+    return false;
+  }
+}, 'Choose a time zone from the list');
