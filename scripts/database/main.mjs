@@ -15,7 +15,7 @@ import { migrate } from '../start/migration.mjs';
 import { step } from '../steps.mjs';
 
 /** What belongs to the demonstration beside its rows. */
-const DEMO_FILES = ['demo-data', 'payment-service.json', 'mail-catcher.json'];
+const DEMO_FILES = ['demo-data', 'payment-service.json', 'mail'];
 
 /**
  * Runs work on the own cluster, and leaves it as it was: running for a product that runs, else stopped.
@@ -69,7 +69,7 @@ async function resetDatabase(flags) {
     await step('Database: drop and make again', () =>
       resetOwnDatabase(folder, ensureSecrets(folder)),
     );
-    for (const file of DEMO_FILES) rmSync(join(folder, file), { force: true });
+    for (const file of DEMO_FILES) rmSync(join(folder, file), { recursive: true, force: true });
     await step('Database: migrate', () => migrate(urls));
   });
 }

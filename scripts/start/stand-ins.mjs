@@ -35,11 +35,10 @@ async function launch(name, settings, { folder, cleanup }) {
 
 /**
  * @param {Surroundings} surroundings
- * @param {Set<number>} taken
+ * @param {number} port
  * @returns {Promise<StandIn>}
  */
-async function startPaymentService(surroundings, taken) {
-  const port = await takePort(surroundings.port + 1, taken);
+async function startPaymentService(surroundings, port) {
   const webhookSecret = `whsec_${surroundings.webhookSecret}`;
   await launch(
     'payment-service',
@@ -64,18 +63,17 @@ async function startPaymentService(surroundings, taken) {
 
 /**
  * @param {Surroundings} surroundings
- * @param {Set<number>} taken
+ * @param {number} port
+ * @param {number} smtpPort
  * @returns {Promise<StandIn>}
  */
-async function startMailCatcher(surroundings, taken) {
-  const port = await takePort(surroundings.port + 2, taken);
-  const smtpPort = await takePort(surroundings.port + 3, taken);
+async function startMailCatcher(surroundings, port, smtpPort) {
   await launch(
     'mail-catcher',
     {
       PORT: String(port),
       SMTP_PORT: String(smtpPort),
-      STATE_FILE: join(surroundings.folder, 'mail-catcher.json'),
+      MAIL_FOLDER: join(surroundings.folder, 'mail'),
     },
     surroundings,
   );
@@ -86,13 +84,18 @@ async function startMailCatcher(surroundings, taken) {
 }
 
 /**
- * @param {number} preferred
- * @param {Set<number>} taken
+ * The three ports after the server's, each moved up when taken.
+ * @param {number} serverPort
+ * @returns {Promise<[number, number, number]>}
  */
-async function takePort(preferred, taken) {
-  const port = await findFreePort(Math.min(preferred, 65_000), taken);
-  taken.add(port);
-  return port;
+async function takePorts(serverPort) {
+  const taken = new Set([serverPort]);
+  const take = async (/** @type {number} */ distance) => {
+    const port = await findFreePort(Math.min(serverPort, 65_000) + distance, taken);
+    taken.add(port);
+    return port;
+  };
+  return [await take(1), await take(2), await take(3)];
 }
 
 /**
@@ -102,9 +105,9 @@ async function takePort(preferred, taken) {
  * @returns {Promise<StandIn[]>}
  */
 export async function startStandIns(env, surroundings) {
-  const taken = new Set([surroundings.port]);
+  const [payments, mail, smtp] = await takePorts(surroundings.port);
   const standIns = [];
-  if (!env['STRIPE_SECRET_KEY']) standIns.push(await startPaymentService(surroundings, taken));
-  if (!env['SMTP_URL']) standIns.push(await startMailCatcher(surroundings, taken));
-  return standIns;
+  if (!env['STRIPE_SECRET_KEY']) standIns.push(startPaymentService(surroundings, payments));
+  if (!env['SMTP_URL']) standIns.push(startMailCatcher(surroundings, mail, smtp));
+  return Promise.all(standIns);
 }
