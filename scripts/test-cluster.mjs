@@ -1,10 +1,15 @@
 import { randomBytes } from 'node:crypto';
-import { existsSync, mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { existsSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { dirname, join } from 'node:path';
 import { waitForLock } from './lock.mjs';
 import { testFolder } from './paths.mjs';
 import { startCluster, stopCluster } from './postgres/cluster.mjs';
-import { placeCluster, readPlacement, writePlacement } from './postgres/placement.mjs';
+import {
+  makeDataFolder,
+  placeCluster,
+  readPlacement,
+  writePlacement,
+} from './postgres/placement.mjs';
 import { databaseUrl } from './postgres/psql.mjs';
 
 /** @param {string} base */
@@ -21,7 +26,7 @@ function superuserPassword(base) {
  */
 export async function startTestCluster(purpose) {
   const base = join(testFolder(), purpose);
-  mkdirSync(base, { recursive: true });
+  makeDataFolder(base);
   const lock = await waitForLock(base, 'test-cluster');
   try {
     const { folder, port: preferredPort } = placeCluster(base);

@@ -1,8 +1,9 @@
-import { existsSync, mkdirSync, rmSync } from 'node:fs';
+import { existsSync, rmSync } from 'node:fs';
 import { join } from 'node:path';
 import { SetupFailure } from '../failure.mjs';
 import { tryLock } from '../lock.mjs';
 import { dataFolder } from '../paths.mjs';
+import { makeDataFolder } from '../postgres/placement.mjs';
 import { buildServer } from '../setup/build-server.mjs';
 import { ensureSecrets } from '../setup/secrets.mjs';
 import {
@@ -23,7 +24,7 @@ const DEMO_FILES = ['demo-data', 'payment-service.json', 'mail'];
  */
 async function onOwnDatabase(work) {
   const folder = dataFolder();
-  mkdirSync(folder, { recursive: true });
+  makeDataFolder(folder);
   const lock = await tryLock(folder, 'start');
   try {
     const secrets = ensureSecrets(folder);
@@ -58,7 +59,7 @@ async function resetDatabase(flags) {
       why: `This removes every record in ${folder} for good, and they are not demonstration data. To do it all the same, type: npm run db:reset -- --yes`,
     });
   }
-  mkdirSync(folder, { recursive: true });
+  makeDataFolder(folder);
   const lock = await tryLock(folder, 'start');
   if (!lock) {
     throw new SetupFailure({ why: `Plimsoll runs on the data in ${folder}: stop it first.` });

@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto';
-import { existsSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs';
+import { chmodSync, existsSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { portFromPath } from '../ports.mjs';
 import { canEnter, serverAccount } from './server-account.mjs';
@@ -32,14 +32,24 @@ export function writePlacement(base, placement) {
 }
 
 /**
+ * Makes a folder of data: closed to other users, but passable where another account runs the server.
+ * @param {string} base an absolute path
+ */
+export function makeDataFolder(base) {
+  if (existsSync(base)) return;
+  mkdirSync(base, { recursive: true });
+  chmodSync(base, serverAccount().uid === undefined ? 0o700 : 0o711);
+}
+
+/**
  * The cluster goes inside the given folder, or, where the server's account cannot enter that (a checkout in root's
  * home), to a folder of /var/lib that is named by it. What was chosen once stays.
- * @param {string} base an absolute path; made when missing, closed to other users' eyes but passable
+ * @param {string} base an absolute path; made when missing
  * @returns {Placement}
  */
 export function placeCluster(base) {
   const account = serverAccount();
-  mkdirSync(base, { recursive: true, mode: account.uid === undefined ? 0o700 : 0o711 });
+  makeDataFolder(base);
   const known = readPlacement(base);
   if (known) return known;
   const hash = createHash('sha256').update(base).digest('hex').slice(0, 12);

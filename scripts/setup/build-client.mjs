@@ -1,6 +1,6 @@
 import { createHash } from 'node:crypto';
 import { existsSync, mkdirSync, readdirSync, readFileSync, statSync, writeFileSync } from 'node:fs';
-import { join } from 'node:path';
+import { join, relative } from 'node:path';
 import { lastLines, runCommand } from '../command.mjs';
 import { SetupFailure } from '../failure.mjs';
 import { packageProgram, ROOT } from '../paths.mjs';
@@ -23,7 +23,9 @@ function filesOf(source) {
 /** A hash of all that the client is built from. */
 export function clientSourcesHash() {
   const hash = createHash('sha256').update(process.versions.node);
-  for (const file of SOURCES.flatMap(filesOf)) hash.update(`${file}\0`).update(readFileSync(file));
+  for (const file of SOURCES.flatMap(filesOf)) {
+    hash.update(`${relative(ROOT, file)}\0`).update(readFileSync(file));
+  }
   return hash.digest('hex');
 }
 

@@ -1,10 +1,11 @@
-import { mkdirSync, writeFileSync } from 'node:fs';
+import { writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { lastLines, runCommand } from '../command.mjs';
 import { SetupFailure } from '../failure.mjs';
 import { askLockHolder, tryLock, waitForLock } from '../lock.mjs';
 import { dataFolder, ROOT } from '../paths.mjs';
 import { isPortFree } from '../ports.mjs';
+import { makeDataFolder } from '../postgres/placement.mjs';
 import { buildClient } from '../setup/build-client.mjs';
 import { buildServer } from '../setup/build-server.mjs';
 import { ensurePackages } from '../setup/packages.mjs';
@@ -49,7 +50,7 @@ function prepareMachine(env) {
  * @param {string} folder
  */
 async function claimDataFolder(folder) {
-  mkdirSync(folder, { recursive: true });
+  makeDataFolder(folder);
   const port = process.env['PORT'] || '3000';
   const lock = await tryLock(folder, 'start', () => `process ${process.pid}, port ${port}`);
   if (lock) return lock;
