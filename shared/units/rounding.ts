@@ -13,9 +13,9 @@ export function roundDown(value: number): number {
   return Math.floor(toMillionths(value));
 }
 
-/** The nearest multiple of `step` at or below `value`; `step` is above zero. */
+/** The nearest multiple of `step` (above zero) at or below `value`; a multiple missed by noise alone counts. */
 export function snapDown(value: number, step: number): number {
-  return toMillionths(roundDown(value / step) * step);
+  return toMillionths(Math.floor(value / step + 1e-9) * step);
 }
 
 /** A number for reading with `digits` decimals, rounded toward the inside of its range; no trailing zeros are cut. */

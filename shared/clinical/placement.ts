@@ -1,0 +1,21 @@
+import type { Bpm, Range } from '../units';
+
+/** Where a heart rate lies relative to a prescription. */
+export type Placement = 'below' | 'in' | 'above' | 'over-ceiling';
+
+export interface Marks {
+  readonly target: Range<Bpm> | null;
+  /** The rate never to pass. */
+  readonly ceiling: { readonly value: Bpm } | null;
+}
+
+/**
+ * Places a rate, bpm: over the ceiling when above its value, else relative to the target, both ends of which
+ * are in. Null when there is no target and the ceiling, if any, is not passed: effort leads.
+ */
+export function placeHeartRate(rate: Bpm, { target, ceiling }: Marks): Placement | null {
+  if (ceiling !== null && rate > ceiling.value) return 'over-ceiling';
+  if (target === null) return null;
+  if (rate < target.lower) return 'below';
+  return rate > target.upper ? 'above' : 'in';
+}
