@@ -7,12 +7,14 @@ export const errorStatus = {
   forbidden: 403,
   'not-found': 404,
   'method-not-allowed': 405,
+  'wrong-password': 403,
   'already-recorded': 409,
   'already-signed': 409,
   'class-closed': 409,
   'class-full': 409,
   'course-complete': 409,
   'daily-limit': 409,
+  'email-taken': 409,
   'idempotency-key-reused': 409,
   'illegal-transition': 409,
   'monitors-full': 409,
@@ -32,6 +34,42 @@ export const errorStatus = {
 } as const;
 
 export type ErrorCode = keyof typeof errorStatus;
+
+/** What each failure says to people: what is wrong and what to do about it. */
+export const errorTitle: Readonly<Record<ErrorCode, string>> = {
+  'unreadable-body': 'The request could not be read. Load the page again, then try once more.',
+  unauthenticated: 'Sign in to go on.',
+  'wrong-credentials': 'The e-mail address or the password is wrong.',
+  csrf: 'This page is out of date. Load it again, then try once more.',
+  forbidden: 'Your role does not allow this. Ask your administrator if you need it.',
+  'wrong-password': 'Your current password is wrong.',
+  'not-found': 'There is no such record, or it is not open to you.',
+  'method-not-allowed': 'This address does not take that kind of request.',
+  'already-recorded': 'Something else is recorded under this id already.',
+  'already-signed': 'This is signed already.',
+  'class-closed': 'This class is closed, cancelled or past. Choose another date.',
+  'class-full': 'This class is full. Choose another date.',
+  'course-complete': 'All sessions of this course are booked or done.',
+  'daily-limit': 'No more sessions fit on this day. Choose another date.',
+  'email-taken': 'Another account uses this e-mail address.',
+  'idempotency-key-reused': 'This key was used for another request. Send it again with a new key.',
+  'illegal-transition': 'That can no longer be done from the present status. Load the page again.',
+  'monitors-full': 'All monitored places of this class are taken. Choose another date.',
+  'no-active-enrollment': 'There is no active enrollment. Enroll the patient first.',
+  'not-checked-in': 'Check the patient in first.',
+  'overlapping-appointment': 'The patient has another class at this time.',
+  'record-signed': 'This session record is signed. Correct a reading by an amendment.',
+  'stale-version': 'Someone changed this in the meantime. Load it again, then repeat your change.',
+  'link-expired': 'This link was used before or has expired. Ask for a new one.',
+  'body-too-large': 'That is too much to send at once.',
+  'not-json': 'The request must be sent as JSON.',
+  'invalid-request': 'Some of what was entered is not valid.',
+  'not-applicable': 'That choice does not apply here.',
+  'too-many-requests': 'Too many tries. Wait a while, then try again.',
+  internal:
+    'Something went wrong on our side. Try again; if it stays, give this number to your administrator.',
+  unavailable: 'Plimsoll is busy or can’t reach its database. Try again shortly.',
+};
 
 /** A fault of one field: `path` joins keys and indexes with dots, as in `inputs.thresholds.0.heartRate`. */
 export interface FieldError {

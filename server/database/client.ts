@@ -1,30 +1,46 @@
 import { drizzle } from 'drizzle-orm/node-postgres';
 import type { NodePgDatabase } from 'drizzle-orm/node-postgres';
-import { Pool } from 'pg';
+import { Pool, type PoolClient } from 'pg';
 import * as schema from './schema';
 
-export type Database = NodePgDatabase<typeof schema> & { $client: Pool };
+type Handle = NodePgDatabase<typeof schema>;
 
-/** A transaction's own handle; the outer one must not be used inside. */
-export type Transaction = Parameters<Parameters<Database['transaction']>[0]>[0];
+export type Database = Handle & { $client: Pool };
 
-/** What a query function takes: either handle serves for reading. */
-export type Queryable = Database | Transaction;
+/** What a query function takes: a database or a transaction serves alike. */
+export type Queryable = Omit<Handle, 'transaction'>;
 
-/**
- * Opens a pool of connections on the app's role.
- * @param options.max connections at most (default 10)
- * @param options.statementTimeoutMs a statement that takes longer is ended by the server
- */
-export function openDatabase(
-  url: string,
-  options: { max?: number; statementTimeoutMs?: number } = {},
-): Database {
+/** A transaction's own handle, made by `inTransaction`; the database must not be used inside. */
+export interface Transaction extends Queryable {
+  /** For statements prepared by name on hot paths; it belongs to the transaction alone. */
+  readonly connection: PoolClient;
+  /** Runs once the transaction is committed, never when it is rolled back. */
+  readonly afterCommit: (effect: () => void | Promise<void>) => void;
+}
+
+/** Wraps a pool, or one connection of it, in typed queries. */
+export const handleOf = <Client extends Pool | PoolClient>(client: Client) =>
+  drizzle(client, { schema, casing: 'snake_case' });
+
+export interface DatabaseOptions {
+  /** Connections at most (default 10). */
+  readonly max?: number;
+  /** A statement that takes longer is ended by the server (default 10,000). */
+  readonly statementTimeoutMs?: number;
+  /** Told when an idle connection breaks; the pool replaces it by itself. */
+  readonly onConnectionLost?: (error: Error) => void;
+}
+
+/** Opens a pool of connections; a caller waits at most 5 s for a free one. */
+export function openDatabase(url: string, options: DatabaseOptions = {}): Database {
   const pool = new Pool({
     connectionString: url,
     max: options.max ?? 10,
+    connectionTimeoutMillis: 5_000,
     statement_timeout: options.statementTimeoutMs ?? 10_000,
     application_name: 'plimsoll',
   });
-  return drizzle(pool, { schema, casing: 'snake_case' });
+  // Without a listener a lost idle connection would end the process.
+  pool.on('error', (error) => options.onConnectionLost?.(error));
+  return handleOf(pool);
 }

@@ -14,6 +14,9 @@ export const roles = [
 export const roleSchema = z.enum(roles);
 export type Role = z.infer<typeof roleSchema>;
 
+/** Everyone but patients. */
+export const staffRoles: readonly Role[] = roles.filter((role) => role !== 'patient');
+
 /** The page that reset and invitation links open; the token stands in the fragment: `/set-password#token=…`. */
 export const setPasswordPath = '/set-password';
 

@@ -1,0 +1,88 @@
+import express, { type Request, type RequestHandler, type Response } from 'express';
+import type * as z from 'zod';
+import type { FieldError } from '@shared/errors';
+import { fail } from './failure';
+import { fieldErrors } from './problem';
+import type { Input, RequestShape, RouteDefinition } from './route';
+
+const DEFAULT_BODY_LIMIT = 100 * 1024;
+
+/** Reads a request's body as its route wants it, after the caller was let in. */
+export type BodyReader = (request: Request, response: Response) => Promise<unknown>;
+
+const hasBody = (request: Request): boolean =>
+  request.headers['transfer-encoding'] !== undefined ||
+  Number(request.headers['content-length'] ?? 0) > 0;
+
+function run(parser: RequestHandler, request: Request, response: Response): Promise<unknown> {
+  return new Promise((resolve, reject) => {
+    void parser(request, response, (error?: Error | null) => {
+      if (error) reject(error);
+      else resolve(request.body);
+    });
+  });
+}
+
+/**
+ * @returns a reader that throws 415 for what is not JSON, 400 for JSON that cannot be read and 413 for too much; a
+ * route without a body takes none or an empty object
+ */
+export function bodyReaderOf({ request: shape, bodyLimit }: RouteDefinition): BodyReader {
+  const limit = bodyLimit ?? DEFAULT_BODY_LIMIT;
+  if (shape.body === 'raw') {
+    const raw = express.raw({ type: () => true, limit });
+    return (request, response) => run(raw, request, response);
+  }
+  const json = express.json({ limit, strict: false, type: 'application/json' });
+  return async (request, response) => {
+    if (!hasBody(request)) return undefined;
+    if (!request.is('application/json')) throw fail('not-json');
+    return run(json, request, response);
+  };
+}
+
+function isEmpty(body: unknown): boolean {
+  if (body === undefined || body === null) return true;
+  return typeof body === 'object' && Object.keys(body).length === 0;
+}
+
+function partOf(schema: z.ZodType, value: unknown, errors: FieldError[]): unknown {
+  const parsed = schema.safeParse(value);
+  if (parsed.success) return parsed.data;
+  errors.push(...fieldErrors(parsed.error));
+  return undefined;
+}
+
+/**
+ * Holds path, query, headers and body against the route's contract.
+ * @throws Failure `invalid-request` with one error a field
+ */
+export function parseInput(
+  shape: RequestShape,
+  request: Request,
+  body: unknown,
+): Input<RequestShape> {
+  const errors: FieldError[] = [];
+  const read = (schema: z.ZodType | undefined, value: unknown): unknown =>
+    schema ? partOf(schema, value, errors) : undefined;
+  if (!shape.query) refuseExtra(Object.keys(request.query), errors);
+  if (!shape.body && !isEmpty(body)) errors.push(unexpected('body'));
+  const input = {
+    params: read(shape.params, request.params),
+    query: read(shape.query, request.query),
+    headers: read(shape.headers, request.headers),
+    body: shape.body === 'raw' ? (body ?? Buffer.alloc(0)) : read(shape.body, body),
+  };
+  if (errors.length > 0) throw fail('invalid-request', { errors });
+  return input;
+}
+
+const unexpected = (path: string): FieldError => ({
+  path,
+  code: 'unrecognized_keys',
+  message: 'Nothing is expected here',
+});
+
+function refuseExtra(keys: readonly string[], errors: FieldError[]): void {
+  for (const key of keys) errors.push(unexpected(key));
+}

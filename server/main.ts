@@ -1,0 +1,89 @@
+import { createServer, type Server } from 'node:http';
+import { existsSync } from 'node:fs';
+import { fileURLToPath } from 'node:url';
+import { version } from '../package.json';
+import { createApp } from './app';
+import type { AppContext, AppSettings } from './app-context';
+import { ConfigError, loadConfig, type Config } from './config';
+import { openDatabase, type Database } from './database/client';
+import { featureJobs } from './features';
+import { createLog } from './http/log';
+import { startWorker } from './jobs/worker';
+import { createPayments } from './payments/stripe-payments';
+
+/** Beside the bundle in dist/server; in development the client serves itself. */
+const CLIENT_FOLDER = fileURLToPath(new URL('../client/browser', import.meta.url));
+
+const settingsOf = (config: Config): AppSettings => ({
+  origin: config.origin,
+  secureCookies: config.secureCookies,
+  sessionSecret: config.sessionSecret,
+  csrfSecret: config.csrfSecret,
+  trustProxyHops: config.trustProxyHops,
+  demo: config.demo,
+  demoAccounts: [],
+  clientFolder: existsSync(CLIENT_FOLDER) ? CLIENT_FOLDER : null,
+  version,
+  checkResponses: false,
+});
+
+function contextOf(config: Config): AppContext {
+  const log = createLog(config.logLevel);
+  const open = (url: string): Database =>
+    openDatabase(url, {
+      onConnectionLost: (error) => log.warn({ err: error }, 'an idle database connection was lost'),
+    });
+  const database = open(config.databaseUrl);
+  return {
+    database,
+    reportsDatabase: config.databaseReplicaUrl ? open(config.databaseReplicaUrl) : database,
+    clock: { now: () => new Date() },
+    payments: config.stripe && createPayments(config.stripe),
+    log,
+    settings: settingsOf(config),
+  };
+}
+
+function listen(server: Server, { port, host }: Config): Promise<void> {
+  return new Promise((resolve, reject) => {
+    server.once('error', reject);
+    server.listen(port, host, () => resolve());
+  });
+}
+
+/** Answers what is under way, takes nothing new, and leaves streams to reconnect elsewhere. */
+function close(server: Server): Promise<void> {
+  return new Promise((resolve) => {
+    server.close(() => resolve());
+    server.closeIdleConnections();
+    setTimeout(() => server.closeAllConnections(), 10_000).unref();
+  });
+}
+
+async function start(): Promise<void> {
+  const config = loadConfig(process.env);
+  const context = contextOf(config);
+  const server = createServer(createApp(context));
+  await listen(server, config);
+  const worker = config.worker ? await startWorker(featureJobs, context) : null;
+  context.log.info({ port: config.port, demo: config.demo, version }, 'listening');
+
+  let stopping: Promise<void> | undefined;
+  const stop = async (): Promise<void> => {
+    await Promise.all([close(server), worker?.stop()]);
+    await context.database.$client.end();
+    if (context.reportsDatabase !== context.database) await context.reportsDatabase.$client.end();
+    context.log.info('stopped');
+    process.disconnect?.();
+  };
+  const stopOnce = (): void => void (stopping ??= stop());
+  process.on('SIGTERM', stopOnce);
+  process.on('SIGINT', stopOnce);
+  // Whoever started this process as a child is gone.
+  process.on('disconnect', stopOnce);
+}
+
+start().catch((error: unknown) => {
+  console.error(error instanceof ConfigError ? error.message : error);
+  process.exit(1);
+});
