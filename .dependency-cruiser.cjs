@@ -62,14 +62,14 @@ module.exports = {
       name: 'server-features-by-their-doors',
       severity: 'error',
       comment:
-        'A feature reads another through its -queries.ts and writes through its -service.ts or -policy.ts, inside its own transaction.',
+        'A feature reads another through its -queries.ts, writes through its -service.ts or -policy.ts inside its own transaction, and hears of it by its -events.ts.',
       from: {
         path: '^server/([^/]+)/',
         pathNot: ['^server/(http|database|jobs|mail|payments)/', '\\.spec\\.ts$'],
       },
       to: {
         path: featuresOf('server'),
-        pathNot: ['^server/$1/', '-(queries|service|policy)\\.ts$'],
+        pathNot: ['^server/$1/', '-(queries|service|policy|events)\\.ts$'],
       },
     },
   ],

@@ -3,7 +3,13 @@ import type { AppContext } from './app-context';
 import type { RouteDefinition } from './http/route';
 import { serviceRoutes } from './http/service-routes';
 import type { JobDefinition } from './jobs/job';
+import type { AppointmentListener } from './schedule/appointment-events';
+import { scheduleJobs } from './schedule/schedule-jobs';
+import { scheduleRoutes } from './schedule/schedule-routes';
 import { sitesRoutes } from './settings/sites-routes';
+
+/** Who acts when a place is taken or given back, inside that transaction and in this order. */
+const appointmentListeners: readonly AppointmentListener[] = [];
 
 /** Every endpoint of the product: a feature adds its own here. */
 export function featureRoutes(context: AppContext): RouteDefinition[] {
@@ -11,9 +17,10 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...serviceRoutes(() => routes),
     ...accountsRoutes(context),
     ...sitesRoutes,
+    ...scheduleRoutes(appointmentListeners),
   ];
   return routes;
 }
 
 /** Every job of the product. */
-export const featureJobs: readonly JobDefinition[] = [];
+export const featureJobs: readonly JobDefinition[] = [...scheduleJobs];

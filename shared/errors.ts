@@ -12,6 +12,7 @@ export const errorStatus = {
   'already-signed': 409,
   'class-closed': 409,
   'class-full': 409,
+  'class-has-bookings': 409,
   'course-complete': 409,
   'daily-limit': 409,
   'email-taken': 409,
@@ -49,6 +50,8 @@ export const errorTitle: Readonly<Record<ErrorCode, string>> = {
   'already-signed': 'This is signed already.',
   'class-closed': 'This class is closed, cancelled or past. Choose another date.',
   'class-full': 'This class is full. Choose another date.',
+  'class-has-bookings':
+    'Patients are booked on dates that this would move or remove. Speak to them first, or end this class and add another.',
   'course-complete': 'All sessions of this course are booked or done.',
   'daily-limit': 'No more sessions fit on this day. Choose another date.',
   'email-taken': 'Another account uses this e-mail address.',

@@ -9,6 +9,8 @@ export interface JobDefinition {
   readonly payload: z.ZodType;
   /** When it runs by itself, as five crontab fields in UTC; its payload is then {}. */
   readonly schedule?: string;
+  /** Whether it also runs when a server starts, so that a program that was off catches up at once. */
+  readonly atStart?: true;
   readonly run: (payload: unknown, context: AppContext) => Promise<void>;
 }
 
@@ -20,6 +22,7 @@ export function job<P extends z.ZodType>(definition: {
   readonly name: string;
   readonly payload: P;
   readonly schedule?: string;
+  readonly atStart?: true;
   readonly run: (payload: z.output<P>, context: AppContext) => Promise<void>;
 }): JobDefinition {
   const { payload, run } = definition;

@@ -52,5 +52,8 @@ export async function startWorker(
     noHandleSignals: true,
     logger: loggerOf(context),
   });
+  for (const { name } of jobs.filter(({ atStart }) => atStart)) {
+    await runner.addJob(name, {}, { jobKey: `${name} at start` });
+  }
   return { stop: () => runner.stop() };
 }

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { recurrenceDates, recurrenceFault } from './recurrence';
+import { recurrenceDates } from './recurrence';
+import { recurrenceFault } from './recurrence-rule';
 import { weekdaysOfRule, weeklyRule } from './weekly-rule';
 
 const rule = (recurrence: string, startsOn = '2026-12-01', endsOn: string | null = null) => ({

@@ -46,9 +46,10 @@ export function toInstant({ localDate, localTime }: WallTime, zone: string): Dat
  * @throws RangeError when the instant or the zone is none
  */
 export function toWallTime(instant: Date, zone: string): WallTime {
-  const local = DateTime.fromJSDate(instant, { zone });
-  if (!local.isValid) throw new RangeError(`no such instant or zone: ${String(instant)} ${zone}`);
-  return { localDate: local.toFormat('yyyy-MM-dd'), localTime: local.toFormat('HH:mm') };
+  const offset = IANAZone.create(zone).offset(instant.getTime());
+  if (Number.isNaN(offset)) throw new RangeError(`no such instant or zone: ${+instant} ${zone}`);
+  const shown = new Date(instant.getTime() + offset * MINUTE_MS).toISOString();
+  return { localDate: shown.slice(0, 10), localTime: shown.slice(11, 16) };
 }
 
 /** The calendar date at a site at an instant. */
