@@ -53,8 +53,8 @@ export function explain(error) {
   if (!(error instanceof SetupFailure)) {
     return error instanceof Error ? (error.stack ?? error.message) : String(error);
   }
-  const lines = error.did ? [`What was done: ${indent(error.did)}`, `Why it failed: `] : [''];
-  lines[lines.length - 1] += indent(error.why);
+  if (!error.did) return error.why;
+  const lines = [`What was done: ${indent(error.did)}`, `Why it failed: ${indent(error.why)}`];
   if (error.type) lines.push(`What to type:  ${error.type}`);
   return lines.join('\n');
 }

@@ -1,6 +1,6 @@
 import { spawn } from 'node:child_process';
 import { createWriteStream, existsSync, mkdirSync, renameSync } from 'node:fs';
-import { join } from 'node:path';
+import { dirname, join } from 'node:path';
 import { createInterface } from 'node:readline';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { SetupFailure } from '../failure.mjs';
@@ -15,18 +15,18 @@ const LAST_LINES = 20;
  * between the two closes, and each of them ends when that happens.
  * @typedef {object} Child
  * @property {string} name
+ * @property {string} logFile
  * @property {Promise<number | null>} ended exit status
  * @property {() => string} lastLines what it printed last
  * @property {() => Promise<void>} stop
  */
 
 /**
- * @param {string} folder
- * @param {string} name
+ * Keeps the former run's log beside the new one.
+ * @param {string} file
  */
-function openLog(folder, name) {
-  mkdirSync(folder, { recursive: true, mode: 0o700 });
-  const file = join(folder, `${name}.log`);
+function openLog(file) {
+  mkdirSync(dirname(file), { recursive: true, mode: 0o700 });
   if (existsSync(file)) renameSync(file, `${file}.1`);
   return createWriteStream(file, { mode: 0o600 });
 }
@@ -41,7 +41,8 @@ function openLog(folder, name) {
  * @returns {Child}
  */
 export function startChild({ name, env, logFolder, show = () => undefined }) {
-  const log = openLog(logFolder, name);
+  const logFile = join(logFolder, `${name}.log`);
+  const log = openLog(logFile);
   const child = spawn(process.execPath, ['--enable-source-maps', `dist/server/${name}.js`], {
     cwd: ROOT,
     env,
@@ -64,6 +65,7 @@ export function startChild({ name, env, logFolder, show = () => undefined }) {
   });
   return {
     name,
+    logFile,
     ended,
     lastLines: () => recent.join('\n'),
     async stop() {
@@ -97,6 +99,6 @@ export async function waitUntilHealthy(child, url, patience = 60_000) {
   throw new SetupFailure({
     did: `Started dist/server/${child.name}.js and asked ${url} whether it is well.`,
     why: child.lastLines() || (over ? 'It ended at once.' : 'It gave no answer.'),
-    type: `less .plimsoll/logs/${child.name}.log`,
+    type: `less ${child.logFile}`,
   });
 }

@@ -17,6 +17,19 @@ function reasonsOf(error) {
 }
 
 /**
+ * @param {string} url
+ * @param {unknown} error
+ */
+function unreachable(url, error) {
+  const { host, pathname, username } = new URL(url);
+  return new SetupFailure({
+    did: `Connected to ${pathname.slice(1)} at ${host} as ${username}.`,
+    why: reasonsOf(error),
+    type: 'npm start again, once the server answers and DATABASE_URL is right',
+  });
+}
+
+/**
  * Brings the database to the newest schema.
  * @param {import('./database.mjs').DatabaseUrls} urls
  */
@@ -37,15 +50,19 @@ export async function migrate({ app, owner }) {
 }
 
 /**
- * Refuses to mix a real program with the demonstration, whichever server holds it.
- * @param {string} ownerUrl a migrated database
+ * Refuses to mix a real program with the demonstration, whichever server holds it, before anything is changed.
+ * @param {string} ownerUrl
  * @param {boolean} demo
  */
 export async function refuseMixing(ownerUrl, demo) {
   const { default: pg } = await import('pg');
   const client = new pg.Client({ connectionString: ownerUrl });
-  await client.connect();
+  await client.connect().catch((error) => {
+    throw unreachable(ownerUrl, error);
+  });
   try {
+    const { rows: tables } = await client.query("SELECT to_regclass('public.users') AS users");
+    if (tables[0].users === null) return;
     const { rows } = await client.query(
       'SELECT count(*)::int AS users, count(*) FILTER (WHERE email = $1)::int AS demo FROM users',
       [DEMO_EMAIL],

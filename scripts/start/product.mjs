@@ -134,8 +134,8 @@ export async function prepareProduct(env, cleanup, { buildsClient }) {
   if (buildsClient) await alone(() => step('Client: build', buildClient));
 
   const urls = await openDatabase(config, secrets, env, cleanup);
-  await step('Database: migrate', () => migrate(urls));
   await refuseMixing(urls.owner, config.demo);
+  await step('Database: migrate', () => migrate(urls));
 
   /** @type {NodeJS.ProcessEnv} */
   const serverEnv = { ...env, NODE_ENV: 'production', DATABASE_URL: urls.app };

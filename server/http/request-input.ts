@@ -16,8 +16,8 @@ const hasBody = (request: Request): boolean =>
 
 function run(parser: RequestHandler, request: Request, response: Response): Promise<unknown> {
   return new Promise((resolve, reject) => {
-    void parser(request, response, (error?: Error | null) => {
-      if (error) reject(error);
+    void parser(request, response, (error?: unknown) => {
+      if (error instanceof Error) reject(error);
       else resolve(request.body);
     });
   });

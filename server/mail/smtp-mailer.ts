@@ -23,7 +23,7 @@ export function createMailer(config: SmtpConfig): Mailer {
   const transport = nodemailer.createTransport(transportOptions(config.url));
   const handedOver = new Set<string>();
   transport.use('stream', (message, done) => {
-    noteEnd(message as MailMessage, (id) => handedOver.add(id));
+    noteEnd(message, (id) => handedOver.add(id));
     done();
   });
 

@@ -152,6 +152,9 @@ export const medications = pgTable(
     schedule: text().notNull(),
     startedOn: date({ mode: 'string' }).notNull(),
     stoppedOn: date({ mode: 'string' }),
+    /** Who wrote down the stop and when, where it was written after the entry. */
+    stopRecordedAt: instant(),
+    stopRecordedBy: uuid().references(() => users.id),
     /** A change of dose stops one entry and starts the next, which names it. */
     replaces: uuid().references((): AnyPgColumn => medications.id),
     ...attribution(),
@@ -223,7 +226,7 @@ export const exerciseTests = pgTable(
     performedOn: date({ mode: 'string' }).notNull(),
     endedBy: testEnd().notNull(),
     restingHeartRate: real(),
-    peakHeartRate: real(),
+    peakHeartRate: real().notNull(),
     peakVo2: real(),
     peakMets: real(),
     vo2Source: vo2Source(),
