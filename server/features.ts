@@ -4,6 +4,7 @@ import type { RouteDefinition } from './http/route';
 import { serviceRoutes } from './http/service-routes';
 import type { JobDefinition } from './jobs/job';
 import type { AppointmentListener } from './schedule/appointment-events';
+import { prescriptionsRoutes } from './prescriptions/prescriptions-routes';
 import { scheduleJobs } from './schedule/schedule-jobs';
 import { scheduleRoutes } from './schedule/schedule-routes';
 import { sitesRoutes } from './settings/sites-routes';
@@ -17,6 +18,7 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...serviceRoutes(() => routes),
     ...accountsRoutes(context),
     ...sitesRoutes,
+    ...prescriptionsRoutes,
     ...scheduleRoutes(appointmentListeners),
   ];
   return routes;
