@@ -1,10 +1,12 @@
+import { accountsJobs } from './accounts/accounts-jobs';
 import { accountsRoutes } from './accounts/accounts-routes';
+import { usersRoutes } from './accounts/users-routes';
 import type { AppContext } from './app-context';
+import { auditJobs } from './audit/audit-jobs';
 import type { RouteDefinition } from './http/route';
 import { serviceRoutes } from './http/service-routes';
 import type { JobDefinition } from './jobs/job';
 import type { AppointmentListener } from './schedule/appointment-events';
-import { prescriptionsRoutes } from './prescriptions/prescriptions-routes';
 import { scheduleJobs } from './schedule/schedule-jobs';
 import { scheduleRoutes } from './schedule/schedule-routes';
 import { sitesRoutes } from './settings/sites-routes';
@@ -17,12 +19,16 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
   const routes: RouteDefinition[] = [
     ...serviceRoutes(() => routes),
     ...accountsRoutes(context),
+    ...usersRoutes,
     ...sitesRoutes,
-    ...prescriptionsRoutes,
     ...scheduleRoutes(appointmentListeners),
   ];
   return routes;
 }
 
 /** Every job of the product. */
-export const featureJobs: readonly JobDefinition[] = [...scheduleJobs];
+export const featureJobs: readonly JobDefinition[] = [
+  ...accountsJobs,
+  ...auditJobs,
+  ...scheduleJobs,
+];

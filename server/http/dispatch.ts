@@ -44,6 +44,7 @@ export async function dispatch(
   const { route, context } = dispatched;
   if (route.keepsSessionAlive === false) leaveUntouched(request);
   authorize(route, request, dispatched.csrf);
+  await route.throttle?.(originOf(request).ip);
   const body = await dispatched.readBody(request, response);
   const input = parseInput(route.request, request, body);
   const way: Way = { ...dispatched, request, response, input };

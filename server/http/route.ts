@@ -123,6 +123,8 @@ export interface RouteOptions<
   readonly csrf?: 'exempt';
   /** Failures that constraints of the database stand for, by constraint name. */
   readonly constraints?: Readonly<Record<string, ErrorCode>>;
+  /** Counts the call by address and refuses it when there are too many, before any of it is read. */
+  readonly throttle?: (ip: string) => Promise<void>;
   /** Bytes (default 100 kB). */
   readonly bodyLimit?: number;
   /** False for what a page calls by itself, so that an unattended page still signs out. */

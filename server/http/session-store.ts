@@ -3,8 +3,8 @@ import type { Request } from 'express';
 import session, { type SessionData } from 'express-session';
 import connectPgSimple from 'connect-pg-simple';
 import type { Pool } from 'pg';
-import type { Role } from '@shared/contracts/accounts-contract';
 import { isStaff, type Actor } from '../accounts/actor';
+import { ACTOR_COLUMNS } from '../accounts/actor-columns';
 import type { Clock } from '../app-context';
 import type { Transaction } from '../database/client';
 
@@ -17,17 +17,13 @@ const TOUCH_EVERY = MINUTE;
 
 /** Session and user in one statement: what changed about the user counts from the next request on. */
 const READ = `
-  SELECT s.sess, s.expire, u.id, u.email, u.display_name AS "displayName", u.medical_director AS "medicalDirector",
-         u.student, ARRAY(SELECT r.role::text FROM user_roles r WHERE r.user_id = u.id ORDER BY r.role) AS roles,
-         ARRAY(SELECT v.site_id::text FROM user_sites v WHERE v.user_id = u.id) AS "siteIds",
-         (SELECT p.id FROM patients p WHERE p.user_id = u.id) AS "patientId"
+  SELECT s.sess, s.expire, ${ACTOR_COLUMNS}
     FROM sessions s JOIN users u ON u.id = s.user_id
    WHERE s.sid = $1 AND s.expire > $2 AND s.created_at > $3 AND u.disabled_at IS NULL`;
 
-interface Row extends Omit<Actor, 'roles'> {
+interface Row extends Actor {
   readonly sess: SessionData;
   readonly expire: Date;
-  readonly roles: Role[];
 }
 
 /** Kept beside what express-session stores and hashes: it passes over symbols. */

@@ -80,3 +80,74 @@ export const setPasswordRequestSchema = z.strictObject({
   password: newPasswordSchema,
 });
 export type SetPasswordRequest = z.infer<typeof setPasswordRequestSchema>;
+
+/** `POST /api/auth/change-password` → 204; every other session of the person ends. */
+export const changePasswordRequestSchema = z.strictObject({
+  currentPassword: z.string().min(1, 'Enter your current password').max(1000),
+  newPassword: newPasswordSchema,
+});
+export type ChangePasswordRequest = z.infer<typeof changePasswordRequestSchema>;
+
+/** The page of the one-time link that an empty program prints: `/first-administrator#token=…`. */
+export const firstAdministratorPath = '/first-administrator';
+
+const displayNameSchema = z.string().trim().min(1, 'Enter a name').max(120);
+
+/** `POST /api/auth/first-administrator` → 204; works while nobody has an account. */
+export const firstAdministratorRequestSchema = z.strictObject({
+  token: z.string().min(1).max(200),
+  email: emailSchema,
+  displayName: displayNameSchema,
+  password: newPasswordSchema,
+});
+export type FirstAdministratorRequest = z.infer<typeof firstAdministratorRequestSchema>;
+
+export const accountStatusSchema = z.enum(['invited', 'active', 'disabled']);
+
+export const userSchema = z.object({
+  id: z.uuid(),
+  email: z.string(),
+  displayName: z.string(),
+  status: accountStatusSchema,
+  roles: z.array(roleSchema),
+  /** The sites whose patients a member of staff may see. */
+  siteIds: z.array(z.uuid()),
+  medicalDirector: z.boolean(),
+  /** A student's entries wait for a co-signature. */
+  student: z.boolean(),
+});
+export type User = z.infer<typeof userSchema>;
+
+/** `GET /api/users`, by name. */
+export const usersQuerySchema = z.strictObject({
+  cursor: z.string().max(500).optional(),
+  limit: z.coerce.number().int().min(1).max(100).default(25),
+});
+export const usersResponseSchema = z.object({
+  items: z.array(userSchema),
+  nextCursor: z.string().nullable(),
+});
+
+const staffRole = roleSchema.exclude(['patient']);
+
+/** `POST /api/users` invites a member of staff by e-mail; patients are invited from their record. */
+export const newUserSchema = z.strictObject({
+  email: emailSchema,
+  displayName: displayNameSchema,
+  roles: z.array(staffRole).min(1, 'Choose at least one role').max(roles.length),
+  siteIds: z.array(z.uuid()).max(200).default([]),
+  medicalDirector: z.boolean().default(false),
+  student: z.boolean().default(false),
+});
+export type NewUser = z.output<typeof newUserSchema>;
+
+/** `PATCH /api/users/:id`: what is left out stays. */
+export const userChangeSchema = z.strictObject({
+  displayName: displayNameSchema.optional(),
+  roles: z.array(roleSchema).min(1, 'Choose at least one role').max(roles.length).optional(),
+  siteIds: z.array(z.uuid()).max(200).optional(),
+  medicalDirector: z.boolean().optional(),
+  student: z.boolean().optional(),
+  disabled: z.boolean().optional(),
+});
+export type UserChange = z.infer<typeof userChangeSchema>;
