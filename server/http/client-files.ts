@@ -5,8 +5,8 @@ import express, { Router, type RequestHandler, type Response } from 'express';
 import { API_POLICY, pagePolicy } from './security-headers';
 
 const NONCE_PLACEHOLDER = '__CSP_NONCE__';
-/** What `ng build` names by content: main-ABCD1234.js */
-const HASHED = /-[A-Z0-9]{8}\.\w+$/;
+/** What `ng build` names by content: main-ABCD1234.js, chunk-xpl-0SmD.js */
+const HASHED = /-[\w-]{8}\.(js|css|woff2)$/;
 const PRIVATE = /\.map$/;
 
 const noStore = (response: Response): void => void response.set('Cache-Control', 'no-store');
