@@ -82,7 +82,7 @@ describe.each(templates)('the %s', (_, render) => {
     const { text, html } = await render(letter);
     const shown = show(html);
     const words = (shown.body.textContent ?? '').replace(/\s+/g, ' ');
-    const links = [...shown.querySelectorAll('a')].map((link) => link.getAttribute('href'));
+    const links = Array.from(shown.querySelectorAll('a'), (link) => link.getAttribute('href'));
     for (const line of text.split('\n').map((entry) => entry.trim().replace(/:$/, ''))) {
       if (line.startsWith('https:')) expect(links).toContain(line);
       else if (line !== '--') expect(words).toContain(line);

@@ -7,6 +7,7 @@ import type { RouteDefinition } from './http/route';
 import { serviceRoutes } from './http/service-routes';
 import type { JobDefinition } from './jobs/job';
 import type { AppointmentListener } from './schedule/appointment-events';
+import { prescriptionsRoutes } from './prescriptions/prescriptions-routes';
 import { scheduleJobs } from './schedule/schedule-jobs';
 import { scheduleRoutes } from './schedule/schedule-routes';
 import { sitesRoutes } from './settings/sites-routes';
@@ -21,6 +22,7 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...accountsRoutes(context),
     ...usersRoutes,
     ...sitesRoutes,
+    ...prescriptionsRoutes,
     ...scheduleRoutes(appointmentListeners),
   ];
   return routes;

@@ -31,7 +31,7 @@ function contextOf(config: Config): AppContext {
   const log = createLog(config.logLevel);
   const open = (url: string): Database =>
     openDatabase(url, {
-      onConnectionLost: (error) => log.warn({ err: error }, 'an idle database connection was lost'),
+      onConnectionLost: (error) => log.warn({ err: error }, 'a database connection was lost'),
     });
   const database = open(config.databaseUrl);
   return {

@@ -27,7 +27,7 @@ export interface DatabaseOptions {
   readonly max?: number;
   /** A statement that takes longer is ended by the server (default 10,000). */
   readonly statementTimeoutMs?: number;
-  /** Told when an idle connection breaks; the pool replaces it by itself. */
+  /** Told when a connection breaks; the pool replaces it by itself. */
   readonly onConnectionLost?: (error: Error) => void;
 }
 
@@ -40,7 +40,9 @@ export function openDatabase(url: string, options: DatabaseOptions = {}): Databa
     statement_timeout: options.statementTimeoutMs ?? 10_000,
     application_name: 'plimsoll',
   });
-  // Without a listener a lost idle connection would end the process.
-  pool.on('error', (error) => options.onConnectionLost?.(error));
+  // Without listeners a lost connection, idle or in use, would end the process.
+  const lost = (error: Error): void => options.onConnectionLost?.(error);
+  pool.on('error', lost);
+  pool.on('connect', (client) => client.on('error', lost));
   return handleOf(pool);
 }
