@@ -20,7 +20,7 @@ export const staffRoles: readonly Role[] = roles.filter((role) => role !== 'pati
 /** The page that reset and invitation links open; the token stands in the fragment: `/set-password#token=…`. */
 export const setPasswordPath = '/set-password';
 
-/** A single-factor password has at least 15 characters and no rule about their kinds (NIST SP 800-63B-4, 3.1.1.2). */
+/** A single-factor password has at least 15 characters and no rule about their kinds (NIST SP 800-63B-4). */
 export const passwordLength = { minimum: 15, maximum: 128 } as const;
 
 export const emailSchema = z.email('Enter an e-mail address like name@clinic.example').max(254);
