@@ -25,7 +25,11 @@ import { startStandIns } from './stand-ins.mjs';
  * @param {() => Promise<void>} work
  */
 async function alone(work) {
-  const lock = await waitForLock(ROOT, 'setup', 900_000);
+  let lock = await tryLock(ROOT, 'setup');
+  if (!lock) {
+    say('Another start is preparing this checkout: waiting for it.');
+    lock = await waitForLock(ROOT, 'setup', 900_000);
+  }
   try {
     await work();
   } finally {
