@@ -101,7 +101,7 @@ function createSession(desk: Desk, call: Call): Session {
     status: 'open',
     success_url: input.success_url,
     ui_mode: 'hosted_page',
-    url: `${desk.settings.publicUrl}/c/pay/${id}`,
+    url: payPageAddress(desk, id),
   };
   desk.book.sessions[id] = session;
   desk.book.sessionDetails[id] = {
@@ -110,6 +110,11 @@ function createSession(desk: Desk, call: Call): Session {
     description: input.payment_intent_data.description ?? null,
   };
   return session;
+}
+
+/** Where a payer's browser finds a session's page. */
+export function payPageAddress(desk: Desk, sessionId: string): string {
+  return `${desk.settings.publicUrl}/c/pay/${sessionId}`;
 }
 
 function total(input: CreateParameters): { amount: number; currency: string } {

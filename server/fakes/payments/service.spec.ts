@@ -145,6 +145,7 @@ it('survives a restart, with the webhooks that nobody took yet', async () => {
   await service.stop();
   await start('http://127.0.0.1:9/nobody');
   const session = await create();
+  const unpaid = await create();
   await pay(session);
   await service.stop();
   await new Promise<void>((resolve) => receiver.listen(0, '127.0.0.1', resolve));
@@ -152,6 +153,8 @@ it('survives a restart, with the webhooks that nobody took yet', async () => {
   const port = typeof address === 'object' ? address?.port : 0;
   await start(`http://127.0.0.1:${port}/hook`);
   expect(await stripe.checkout.sessions.retrieve(session.id)).toMatchObject({ status: 'complete' });
+  const open = await stripe.checkout.sessions.retrieve(unpaid.id);
+  expect(open.url).toBe(`${service.url}/c/pay/${unpaid.id}`);
   for (let round = 0; round < 200 && taken < 4; round += 1) {
     await new Promise((resolve) => setTimeout(resolve, 10));
   }

@@ -3,7 +3,7 @@ import { listenOnLoopback } from '../listen';
 import { openStateFile } from '../state-file';
 import { ApiError, missing } from './api-error';
 import { emptyBook } from './book';
-import { checkoutSessionRoutes, expireDue } from './checkout-sessions';
+import { checkoutSessionRoutes, expireDue, payPageAddress } from './checkout-sessions';
 import { controlRoutes } from './controls';
 import { createDesk } from './desk';
 import { payPageRoutes } from './pay-page';
@@ -67,6 +67,10 @@ export async function startPaymentService(options: PaymentServiceOptions): Promi
   });
   app.use(answerFailure);
 
+  // The port may be another than before the restart.
+  for (const session of Object.values(desk.book.sessions)) {
+    if (session.status === 'open') session.url = payPageAddress(desk, session.id);
+  }
   desk.webhooks.resume();
   const expiry = setInterval(() => {
     expireDue(desk);
