@@ -16,6 +16,7 @@ export async function listenOnLoopback(app: Express, port: number): Promise<List
   return {
     port: (server.address() as AddressInfo).port,
     async close() {
+      if (!server.listening) return;
       const closed = once(server, 'close');
       server.close();
       server.closeAllConnections();
