@@ -1,0 +1,91 @@
+import type { SessionData } from 'express-session';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { noContent } from '../../server/http/answers';
+import { route } from '../../server/http/route';
+import { SessionStore } from '../../server/http/session-store';
+import { agentFor } from '../builders/agent';
+import { buildUser } from '../builders/people';
+import { createTestApp, type TestApp } from '../builders/test-app';
+import { minutes } from '../builders/test-clock';
+
+/** Changes its session and takes its time, as a slow request would. */
+const slow = route({
+  method: 'post',
+  path: '/api/slow',
+  summary: 'For a spec',
+  access: 'signed-in',
+  audit: 'none',
+  transaction: 'none',
+  request: {},
+  response: { 204: null },
+  handler: async ({ http, context }) => {
+    Object.assign(http.request.session, { seen: 'slowly' });
+    await context.database.$client.query('SELECT pg_sleep(0.05)');
+    return noContent();
+  },
+});
+
+describe('a session that ends while a request is under way', () => {
+  let house: TestApp;
+
+  beforeAll(async () => {
+    house = await createTestApp({ extraRoutes: [slow] });
+  });
+  afterAll(() => house.close());
+
+  const sessionsOf = async (userId: string) =>
+    (
+      await house.context.database.$client.query('SELECT 1 FROM sessions WHERE user_id = $1', [
+        userId,
+      ])
+    ).rowCount;
+
+  it('does not come back when the slow request saves it: 0 of 60', async () => {
+    const users = await Promise.all(
+      Array.from({ length: 60 }, () => buildUser(house.context.database)),
+    );
+    const left = await Promise.all(
+      users.map(async (user) => {
+        const agent = await agentFor(house, user);
+        const pending = agent.post('/api/slow').then((reply) => reply.status);
+        await new Promise((resolve) => setTimeout(resolve, 15));
+        await agent.post('/api/auth/sign-out').expect(204);
+        return [await pending, await sessionsOf(user.id)];
+      }),
+    );
+    expect(new Set(left.map(([, count]) => count))).toEqual(new Set([0]));
+    expect(left.filter(([status]) => status === 204).length).toBeGreaterThan(0);
+  });
+
+  it('does not come back by being touched or set, and a change of a live one is kept', async () => {
+    const { database, clock } = house.context;
+    const store = new SessionStore(database.$client, clock);
+    const user = await buildUser(database);
+    const agent = await agentFor(house, user);
+    await agent.post('/api/slow').expect(204);
+    const { rows } = await database.$client.query('SELECT sess FROM sessions WHERE user_id = $1', [
+      user.id,
+    ]);
+    expect(rows[0].sess).toMatchObject({ seen: 'slowly' });
+
+    const sid = /^s:(.+)\./.exec(agent.cookies['sid'] ?? '')?.[1] ?? '';
+    const data = await new Promise<SessionData>((resolve, reject) => {
+      store.get(sid, (error, found) => (found ? resolve(found) : reject(error)));
+    });
+    await new Promise((resolve) => store.destroy(sid, resolve));
+    house.clock.advance(minutes(2));
+    await new Promise((resolve) => store.touch(sid, data, resolve));
+    await new Promise((resolve) => store.set(sid, data, resolve));
+    expect(await sessionsOf(user.id)).toBe(0);
+  });
+
+  it('fails closed: a store that cannot be read answers 503, never as a visitor', async () => {
+    const broken = await createTestApp();
+    const agent = await agentFor(broken, await buildUser(broken.context.database));
+    await broken.context.database.$client.end();
+    const reply = await agent.get('/api/auth/session');
+    expect([reply.status, reply.body.code]).not.toEqual([200, undefined]);
+    expect(reply.status).toBeGreaterThanOrEqual(500);
+    await broken.testDatabase.drop();
+  });
+});
