@@ -10,6 +10,7 @@ import type { AppointmentListener } from './schedule/appointment-events';
 import { prescriptionsRoutes } from './prescriptions/prescriptions-routes';
 import { scheduleJobs } from './schedule/schedule-jobs';
 import { scheduleRoutes } from './schedule/schedule-routes';
+import { patientsRoutes } from './patients/patients-routes';
 import { sitesRoutes } from './settings/sites-routes';
 
 /** Who acts when a place is taken or given back, inside that transaction and in this order. */
@@ -24,6 +25,7 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...sitesRoutes,
     ...prescriptionsRoutes,
     ...scheduleRoutes(appointmentListeners),
+    ...patientsRoutes,
   ];
   return routes;
 }

@@ -1,7 +1,6 @@
 import { DrizzleQueryError } from 'drizzle-orm';
 import type { Request, Response } from 'express';
-import type * as z from 'zod';
-import { errorStatus, errorTitle, type ErrorCode, type FieldError } from '@shared/errors';
+import { errorStatus, errorTitle, type ErrorCode } from '@shared/errors';
 import { databaseErrorOf } from '../database/transaction';
 import { fail, Failure } from './failure';
 
@@ -51,19 +50,6 @@ export function toFailure(error: unknown): Failure {
     return fail('unavailable', { retryAfterSeconds: RETRY_AFTER_SECONDS });
   }
   return fail('internal');
-}
-
-/** zod's complaints as one error a field; `root` is where the input stands: body, params, query or headers. */
-export function fieldErrors(error: z.ZodError): FieldError[] {
-  return error.issues.flatMap((issue) => {
-    const at = issue.path.map(String);
-    const paths = issue.code === 'unrecognized_keys' ? issue.keys.map((key) => [...at, key]) : [at];
-    return paths.map((path) => ({
-      path: path.join('.'),
-      code: issue.code,
-      message: issue.message,
-    }));
-  });
 }
 
 /** The reference that the log, the audit and a problem document share. */

@@ -1,8 +1,8 @@
 import express, { type Request, type RequestHandler, type Response } from 'express';
 import type * as z from 'zod';
+import { fieldErrors } from '@shared/contracts/field-errors';
 import type { FieldError } from '@shared/errors';
 import { fail } from './failure';
-import { fieldErrors } from './problem';
 import type { Input, RequestShape, RouteDefinition } from './route';
 
 const DEFAULT_BODY_LIMIT = 100 * 1024;

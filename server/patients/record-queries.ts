@@ -62,12 +62,18 @@ function newestFirst(kind: RecordKind) {
     later(a.id, b.id);
 }
 
-/** All entries of all kinds in one statement, the newest of its date first; those entered in error too. */
-export async function patientRecord(db: Queryable, patientId: string): Promise<PatientRecord> {
-  const parts = recordKinds.map(
+/** The entries of some kinds with the names of those who wrote in them, in one statement. */
+async function entryRows(
+  db: Queryable,
+  patientId: string,
+  kinds: readonly RecordKind[],
+  entryId: string | null,
+): Promise<EntryRow[]> {
+  const only = entryId === null ? sql`` : sql` AND entry.id = ${entryId}::uuid`;
+  const parts = kinds.map(
     (kind) => sql`
       SELECT ${kind}::text AS kind, to_jsonb(entry) AS row
-        FROM ${recordRegistry[kind].table} AS entry WHERE entry.patient_id = ${patientId}`,
+        FROM ${recordRegistry[kind].table} AS entry WHERE entry.patient_id = ${patientId}${only}`,
   );
   const { rows } = await db.execute<EntryRow>(sql`
     SELECT e.kind, e.row, writer.display_name AS "recordedBy", corrector.display_name AS "enteredInErrorBy",
@@ -75,7 +81,14 @@ export async function patientRecord(db: Queryable, patientId: string): Promise<P
       FROM (${sql.join(parts, sql` UNION ALL `)}) AS e
       JOIN users AS writer ON writer.id = (e.row ->> 'recorded_by')::uuid
       LEFT JOIN users AS corrector ON corrector.id = (e.row ->> 'entered_in_error_by')::uuid
-      LEFT JOIN users AS ender ON ender.id = (e.row ->> 'ended_by')::uuid`);
+      LEFT JOIN users AS ender
+        ON ender.id = CASE e.kind WHEN 'thresholds' THEN (e.row ->> 'ended_by')::uuid END`);
+  return rows;
+}
+
+/** All entries of all kinds, the newest of its date first; those entered in error too. */
+export async function patientRecord(db: Queryable, patientId: string): Promise<PatientRecord> {
+  const rows = await entryRows(db, patientId, recordKinds, null);
   const record = Object.fromEntries(
     recordKinds.map((kind) => {
       const entries = rows.filter((found) => found.kind === kind).map(entryOf);
@@ -83,4 +96,15 @@ export async function patientRecord(db: Queryable, patientId: string): Promise<P
     }),
   );
   return record as unknown as PatientRecord;
+}
+
+/** One entry; undefined when the patient has none of that id and kind. */
+export async function recordEntry(
+  db: Queryable,
+  patientId: string,
+  kind: RecordKind,
+  entryId: string,
+): Promise<RecordEntry | undefined> {
+  const [row] = await entryRows(db, patientId, [kind], entryId);
+  return row && entryOf(row);
 }

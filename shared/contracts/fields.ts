@@ -17,6 +17,13 @@ export const textField = (maximum: number, empty = 'Fill this in') =>
     .max(maximum, `Use at most ${maximum} characters`)
     .regex(oneLine, 'Use plain text on one line');
 
+/** Words to search by; may be empty. */
+export const searchField = (maximum: number) =>
+  z
+    .string()
+    .max(maximum, `Use at most ${maximum} characters`)
+    .regex(oneLine, 'Use plain text on one line');
+
 /** Text of several lines, its ends trimmed. */
 export const noteField = (maximum: number) =>
   z

@@ -6,6 +6,7 @@ import {
   localDateField,
   pageLimitField,
   pageOf,
+  searchField,
   textField,
   timeZoneField,
   wholeNumberField,
@@ -58,7 +59,7 @@ const siteSchema = z.object({ id: z.uuid(), name: z.string(), timeZone: z.string
 
 /** `POST /api/patients/search`: words of a name or number, each any beginning; a birth year or date narrows. */
 export const patientSearchRequestSchema = z.strictObject({
-  q: z.string().max(100, 'Use at most 100 characters').optional(),
+  q: searchField(100).optional(),
   cursor: cursorField.nullish(),
   limit: pageLimitField,
 });

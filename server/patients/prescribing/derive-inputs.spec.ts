@@ -9,7 +9,8 @@ import {
   type RecordKind,
 } from '@shared/contracts/record-contract';
 import { conditionKinds } from '@shared/contracts/record-lists';
-import { ageOn, deriveInputs } from './derive-inputs';
+import { ageOn } from '../age';
+import { deriveInputs } from './derive-inputs';
 import type { ExerciseReading, RecordFacts } from './record-facts';
 
 const today = '2026-12-01';

@@ -1,4 +1,3 @@
-import { DateTime } from 'luxon';
 import type {
   InputOrigin,
   PrefilledInputs,
@@ -6,6 +5,7 @@ import type {
 } from '@shared/contracts/prescribing-inputs-contract';
 import type { RateActingDrug } from '@shared/clinical/prescribing';
 import { daysBetween } from '@shared/scheduling/wall-time';
+import { ageOn } from '../age';
 import { latestChanges } from './derive-changes';
 import { conditionsOf } from './derive-conditions';
 import { observedWorkOf, restingOf } from './derive-rates';
@@ -17,10 +17,6 @@ import {
   type Derived,
   type RecordFacts,
 } from './record-facts';
-
-/** Whole years of age on a local date. */
-export const ageOn = (birthDate: string, today: string): number =>
-  Math.floor(DateTime.fromISO(today).diff(DateTime.fromISO(birthDate), 'years').years);
 
 /** The origin of an entry that is taken as it is. */
 function originOf(
