@@ -2,6 +2,7 @@ export * from './accounts';
 export * from './billing';
 export * from './booking';
 export * from './clinical-record';
+export * from './demo';
 export * from './floor';
 export * from './messages';
 export * from './patients';
