@@ -1,0 +1,126 @@
+import { defaultPolicy, evaluatePrescription } from '@shared/clinical/prescribing';
+import type { PrescriptionAnswer } from '@shared/clinical/prescribing';
+import { prescriptionRequestSchema } from '@shared/contracts/prescriptions-contract';
+import type { PrescriptionRequestInput } from '@shared/contracts/prescriptions-contract';
+import type { prescriptions } from '../database/schema';
+import { minutesLater } from './days';
+import { idAt } from './dice';
+
+/** A prescription with the moments of its life, as they will come. */
+export interface IssuedRange {
+  readonly id: string;
+  readonly inputs: PrescriptionRequestInput;
+  readonly answer: PrescriptionAnswer;
+  readonly createdAt: Date;
+  readonly signedAt: Date;
+  /** Null: within the limits of the plan, a physiologist's signature was enough. */
+  readonly physicianSignedAt: Date | null;
+  readonly activeFrom: Date;
+  readonly supersedes: string | null;
+}
+
+export interface Signing {
+  readonly createdAt: Date;
+  readonly signedAt: Date;
+  readonly physicianSignedAt: Date | null;
+}
+
+/** The engine's answer by the published policy; a choice that no longer applies is given up, as a clinician would. */
+function evaluate(inputs: PrescriptionRequestInput): Pick<IssuedRange, 'inputs' | 'answer'> {
+  const evaluation = evaluatePrescription(prescriptionRequestSchema.parse(inputs), defaultPolicy);
+  if (evaluation.ok) return { inputs, answer: evaluation.answer };
+  if (inputs.choice.method === null && inputs.choice.maximum === null) {
+    throw new Error(evaluation.error.message);
+  }
+  return evaluate({ ...inputs, choice: { method: null, maximum: null } });
+}
+
+export function issueRange(
+  key: string,
+  inputs: PrescriptionRequestInput,
+  signing: Signing,
+  supersedes: string | null,
+): IssuedRange {
+  return {
+    id: idAt(signing.createdAt, key, 'prescription'),
+    ...evaluate(inputs),
+    ...signing,
+    activeFrom: signing.physicianSignedAt ?? signing.signedAt,
+    supersedes,
+  };
+}
+
+/** The range in force at an instant. */
+export function rangeAt(ranges: readonly IssuedRange[], at: Date): IssuedRange | null {
+  return ranges.filter(({ activeFrom }) => activeFrom <= at).at(-1) ?? null;
+}
+
+type PrescriptionRow = typeof prescriptions.$inferInsert;
+
+export interface RangeOwner {
+  readonly patientId: string;
+  readonly enrollmentId: string;
+  readonly physiologist: string;
+  readonly physician: string;
+}
+
+type Lifetime = Pick<
+  PrescriptionRow,
+  'status' | 'version' | 'awaiting' | 'signedAt' | 'physicianSignedAt' | 'activatedAt' | 'endedAt'
+>;
+
+/** What has happened to a range by now. */
+function lifetime(range: IssuedRange, endsAt: Date | null, now: Date): Lifetime {
+  const happened = (at: Date | null) => (at !== null && at <= now ? at : null);
+  const signedAt = happened(range.signedAt);
+  const physicianSignedAt = happened(range.physicianSignedAt);
+  const activatedAt = happened(range.activeFrom);
+  const endedAt = activatedAt && happened(endsAt);
+  const steps = [signedAt, physicianSignedAt, endedAt].filter((at) => at !== null).length;
+  return {
+    status: endedAt ? 'completed' : activatedAt ? 'active' : 'draft',
+    version: 1 + steps,
+    awaiting: signedAt && !activatedAt ? 'physician' : null,
+    signedAt,
+    physicianSignedAt,
+    activatedAt,
+    endedAt,
+  };
+}
+
+/**
+ * The rows of a person's ranges in the order of issue.
+ * @param closesAt when the last one ends with its course; null: it stays in force
+ */
+export function prescriptionRows(
+  ranges: readonly IssuedRange[],
+  owner: RangeOwner,
+  closesAt: Date | null,
+  now: Date,
+): PrescriptionRow[] {
+  return ranges
+    .filter(({ createdAt }) => createdAt <= now)
+    .map((range, each) => {
+      const life = lifetime(range, ranges[each + 1]?.activeFrom ?? closesAt, now);
+      return {
+        id: range.id,
+        patientId: owner.patientId,
+        enrollmentId: owner.enrollmentId,
+        inputs: range.inputs,
+        result: range.answer,
+        policyVersion: range.answer.policyVersion,
+        engineVersion: range.answer.engineVersion,
+        supersedes: range.supersedes,
+        createdAt: range.createdAt,
+        createdBy: owner.physiologist,
+        signedBy: life.signedAt ? owner.physiologist : null,
+        physicianSignedBy: life.physicianSignedAt ? owner.physician : null,
+        ...life,
+      };
+    });
+}
+
+/** A review by one signature: written, and signed ten minutes later. */
+export function signedAtOnce(createdAt: Date): Signing {
+  return { createdAt, signedAt: minutesLater(createdAt, 10), physicianSignedAt: null };
+}

@@ -1,0 +1,217 @@
+import { conditionKinds } from '@shared/contracts/record-lists';
+import type { ClinicalEventKind, ConditionKind } from '@shared/contracts/record-lists';
+import { anginaInClass } from './chart';
+import type { Chart } from './chart';
+import { isoOf } from './days';
+import type { Day } from './days';
+import { writeDrugs } from './record-drugs';
+import { entry } from './record-entries';
+import type { RecordRows, Scribe } from './record-entries';
+import type { DiagnosisKind } from './situations';
+
+const diagnosisText: Record<DiagnosisKind, string> = {
+  'heart-attack': 'Acute myocardial infarction',
+  stent: 'Coronary stent',
+  bypass: 'Coronary artery bypass grafting',
+  valve: 'Aortic valve replacement',
+  transplant: 'Heart transplant',
+  'stable-angina': 'Stable angina pectoris',
+  'heart-failure': 'Chronic heart failure',
+  'assist-device': 'Left ventricular assist device',
+  other: 'Referred after hospital stay, other cardiac condition',
+};
+
+const eventOfDiagnosis: Partial<Record<DiagnosisKind, ClinicalEventKind>> = {
+  'heart-attack': 'heart-attack',
+  stent: 'stent',
+  bypass: 'bypass',
+  valve: 'valve',
+  transplant: 'transplant',
+  'assist-device': 'device-implant',
+};
+
+export function writeDiagnosis(rows: RecordRows, scribe: Scribe, kind: DiagnosisKind, on: Day) {
+  const description = diagnosisText[kind];
+  rows.diagnoses.push({
+    ...entry(scribe, 'diagnosis', kind, on),
+    kind,
+    description,
+    onsetOn: isoOf(on),
+  });
+  const event = eventOfDiagnosis[kind];
+  if (event) writeEvent(rows, scribe, event, description, on);
+}
+
+function writeEvent(
+  rows: RecordRows,
+  scribe: Scribe,
+  kind: ClinicalEventKind,
+  description: string,
+  on: Day,
+) {
+  rows.clinicalEvents.push({
+    ...entry(scribe, 'event', kind, on),
+    kind,
+    description,
+    occurredOn: isoOf(on),
+  });
+}
+
+function conditionValue({ facts }: Chart, kind: ConditionKind): string {
+  const value = facts.conditions[kind];
+  return typeof value === 'string' ? value : value ? 'yes' : 'no';
+}
+
+/** Three readings of as many days whose mean is the seated rate and whose ends lie `spread` apart. */
+function threeReadings(seated: number, spread: number): number[] {
+  const below = Math.ceil(spread / 2);
+  const above = Math.floor(spread / 2);
+  return [seated - below, seated + above, seated + below - above];
+}
+
+/** @param daysBefore the days of the readings, counted back from `day` */
+export function writeRestingRates(
+  rows: RecordRows,
+  scribe: Scribe,
+  chart: Chart,
+  seated: number,
+  day: Day,
+  daysBefore: readonly number[],
+) {
+  const { spread, standing, seated: first } = chart.facts.resting;
+  const readings = spread === null ? [seated] : threeReadings(seated, spread);
+  const days = daysBefore.slice(-readings.length);
+  readings.forEach((reading, each) => {
+    rows.restingRates.push({
+      ...entry(scribe, 'resting', day, each),
+      seated: reading,
+      standing: standing === null ? null : standing - first + seated,
+      measuredOn: isoOf(day - (days[each] ?? 0)),
+    });
+  });
+}
+
+function writeDevices(rows: RecordRows, scribe: Scribe, chart: Chart, day: Day) {
+  const { devices, pacemaker, test } = chart.facts;
+  const check = (on: Day, upperTrackingRate: number | null) =>
+    rows.cardiacDevices.push({
+      ...entry(scribe, 'device', on),
+      icdStatus: devices.icd.status,
+      icdZones: devices.icd.zones,
+      pacemaker,
+      upperTrackingRate,
+      checkedOn: isoOf(on),
+    });
+  if (test && !test.sameRhythmAndDevice) {
+    const before = devices.upperTrackingRate === null ? null : devices.upperTrackingRate - 10;
+    check(day - test.daysAgo - 20, before);
+  }
+  check(day, devices.upperTrackingRate);
+}
+
+const protocols = { treadmill: 'Modified Bruce', cycle: 'Ramp 10 W/min', arm: 'Arm ramp 5 W/min' };
+
+export function writeTest(
+  rows: RecordRows,
+  scribe: Scribe,
+  { facts }: Chart,
+  on: Day,
+): string | null {
+  const { test } = facts;
+  if (!test) return null;
+  const row = {
+    ...entry(scribe, 'test', on),
+    mode: test.mode,
+    protocol: protocols[test.mode],
+    performedOn: isoOf(on),
+    endedBy: test.endedBy,
+    restingHeartRate: test.restingHeartRate,
+    peakHeartRate: test.peakHeartRate,
+    peakVo2: test.peakVo2,
+    peakMets: test.peakMets,
+    vo2Source: test.peakVo2 === null && test.peakMets === null ? null : test.vo2Source,
+    note: null,
+  };
+  rows.exerciseTests.push(row);
+  return row.id;
+}
+
+function writeThresholds(rows: RecordRows, scribe: Scribe, chart: Chart, testId: string | null) {
+  const foundOn = isoOf(chart.testOn ?? chart.person.enrolledOn);
+  chart.facts.thresholds.forEach((threshold, each) => {
+    rows.thresholds.push({
+      ...thresholdRow(scribe, each),
+      ...threshold,
+      exerciseTestId: testId,
+      foundOn,
+    });
+  });
+}
+
+const thresholdRow = (scribe: Scribe, name: string | number) => ({
+  ...entry(scribe, 'threshold', name),
+  exerciseTestId: null,
+  supersedes: null,
+  note: null,
+  status: 'active' as const,
+  endedAt: null,
+  endedBy: null,
+  endedReason: null,
+});
+
+/** All that is asked, measured and copied from letters on the day of enrollment. */
+export function writeIntake(rows: RecordRows, scribe: Scribe, chart: Chart, day: Day) {
+  const { facts, testOn, heightCm, weightKg } = chart;
+  for (const kind of conditionKinds) {
+    rows.conditions.push({
+      ...entry(scribe, 'condition', kind),
+      kind,
+      value: conditionValue(chart, kind),
+    });
+  }
+  if (facts.measured) {
+    const measuredOn = isoOf(day);
+    rows.bodyMeasurements.push({ ...entry(scribe, 'body', day), heightCm, weightKg, measuredOn });
+  }
+  rows.rhythmRecords.push({
+    ...entry(scribe, 'rhythm', day),
+    rhythm: facts.rhythm,
+    observedOn: isoOf(day),
+  });
+  writeRestingRates(rows, scribe, chart, facts.resting.seated, day, [3, 1, 0]);
+  writeDrugs(rows, scribe, chart, day);
+  writeDevices(rows, scribe, chart, day);
+  const testId = testOn === null ? null : writeTest(rows, scribe, chart, testOn);
+  if (facts.test?.eventSince) {
+    writeEvent(
+      rows,
+      scribe,
+      'stent',
+      'Second coronary stent',
+      day - Math.floor(facts.test.daysAgo / 2),
+    );
+  }
+  writeThresholds(rows, scribe, chart, testId);
+  if (facts.walkTest) {
+    rows.walkTests.push({
+      ...entry(scribe, 'walk', day),
+      distanceMeters: facts.walkTest.distanceMeters,
+      performedOn: isoOf(day),
+    });
+  }
+  rows.riskStratifications.push({
+    ...entry(scribe, 'risk', day),
+    level: facts.risk,
+    assessedOn: isoOf(day),
+    note: null,
+  });
+}
+
+export function writeAnginaInClass(rows: RecordRows, scribe: Scribe, chart: Chart, day: Day) {
+  rows.thresholds.push({
+    ...thresholdRow(scribe, 'in class'),
+    ...anginaInClass(chart),
+    foundOn: isoOf(day),
+    note: 'Chest pressure in class, gone two minutes after slowing down',
+  });
+}

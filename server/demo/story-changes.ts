@@ -1,0 +1,41 @@
+import type { Change } from './bulk';
+import type { PeopleRows } from './rows';
+
+export interface TableChanges<R> {
+  readonly added: R[];
+  readonly changed: Change<R>[];
+}
+
+/** What lies between two tellings of the same story; nothing that was told is ever taken back. */
+export type StoryChanges = {
+  readonly [T in keyof PeopleRows]: TableChanges<PeopleRows[T][number]>;
+};
+
+interface Identified {
+  readonly id?: string | undefined;
+}
+
+function tableChanges<R extends Identified>(
+  before: readonly R[],
+  after: readonly R[],
+): TableChanges<R> {
+  const known = new Map(before.map((row) => [row.id, row]));
+  const changes: TableChanges<R> = { added: [], changed: [] };
+  for (const row of after) {
+    const old = known.get(row.id);
+    if (!old) changes.added.push(row);
+    else if (JSON.stringify(old) !== JSON.stringify(row)) {
+      changes.changed.push({ before: old, after: row });
+    }
+  }
+  return changes;
+}
+
+export function storyChanges(before: PeopleRows, after: PeopleRows): StoryChanges {
+  const tables = Object.keys(after) as (keyof PeopleRows)[];
+  const entries = tables.map((table) => [
+    table,
+    tableChanges<Identified>(before[table], after[table]),
+  ]);
+  return Object.fromEntries(entries) as StoryChanges;
+}

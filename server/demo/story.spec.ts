@@ -1,0 +1,179 @@
+import { describe, expect, it } from 'vitest';
+import type { PrescriptionAnswer } from '@shared/clinical/prescribing';
+import { patientAccount } from './accounts';
+import { anchorAt, clockAt } from './clock';
+import { isoOf } from './days';
+import type { Day } from './days';
+import { classPlans, templateId } from './program';
+import type { PeopleRows } from './rows';
+import { tellStory } from './story';
+import { storyChanges } from './story-changes';
+
+const firstDay = new Date('2026-12-01T15:10:00Z');
+const anchor = anchorAt(firstDay);
+const dayMs = 86_400_000;
+const tellAt = (now: Date, from: Day = anchor) => tellStory(clockAt(from, now));
+const later = (days: number, hours = 0) =>
+  new Date(firstDay.getTime() + days * dayMs + hours * 3_600_000);
+
+const story = tellAt(firstDay);
+const distinct = <T>(values: Iterable<T>) => [...new Set(values)].sort();
+
+describe('the story', () => {
+  it('is told the same from the same day', () => {
+    expect(tellAt(firstDay)).toEqual(story);
+  });
+
+  it.each([
+    [0, 5],
+    [1, 0],
+    [9, 11],
+    [40, 3],
+  ])('takes nothing back %i days and %i hours later', (days, hours) => {
+    const next = tellAt(later(days, hours));
+    const ids = (rows: PeopleRows) =>
+      Object.values(rows).flatMap((table: readonly { id?: string }[]) => table.map(({ id }) => id));
+    const told = new Set(ids(next));
+    expect(ids(story).filter((id) => !told.has(id))).toEqual([]);
+    const changes = storyChanges(story, next);
+    const settled = [
+      changes.sessionRecords,
+      changes.vitalSigns,
+      changes.exerciseTests,
+      changes.payments,
+      changes.ledgerEntries,
+    ];
+    expect(settled.flatMap(({ changed }): unknown[] => changed)).toEqual([]);
+  });
+
+  it('moves bookings forward only', () => {
+    const { changed } = storyChanges(story, tellAt(later(9))).appointments;
+    expect(changed.length).toBeGreaterThan(100);
+    expect(distinct(changed.map(({ before }) => before.status))).toEqual(['booked']);
+  });
+
+  it('has about 150 people in 14 months, none named twice', () => {
+    expect(story.patients.length).toBeGreaterThan(140);
+    expect(story.patients.length).toBeLessThan(175);
+    const names = story.patients.map(({ familyName, givenName }) => `${givenName} ${familyName}`);
+    expect(new Set(names).size).toBe(names.length);
+    expect(names.filter((name) => /[^\u0020-\u00ff]/.test(name))).toEqual([]);
+    expect(isoOf(anchor - 426) <= (story.enrollments[0]?.enrolledOn ?? '')).toBe(true);
+  });
+});
+
+describe('the courses', () => {
+  it('stand at every stage', () => {
+    const closings = story.enrollments.map(
+      ({ status, closedReason }) => `${status}: ${closedReason ?? ''}`,
+    );
+    expect(distinct(closings)).toEqual(
+      expect.arrayContaining([
+        'active: ',
+        'on-hold: ',
+        'completed: completed',
+        'completed: covered number done',
+        ...[
+          'died',
+          'moved away',
+          'never started',
+          'new event',
+          'stopped coming',
+          'returned to work',
+        ].map((reason) => `discontinued: ${reason}`),
+      ]),
+    );
+    const enrolled = new Set(story.enrollments.map(({ patientId }) => patientId));
+    expect(story.patients.some(({ id }) => !enrolled.has(id ?? ''))).toBe(true);
+    const courses = story.enrollments.filter(({ phase }) => phase === 2);
+    const again = courses.filter(
+      (course) => courses.filter(({ patientId }) => patientId === course.patientId).length > 1,
+    );
+    expect(again.length).toBeGreaterThan(0);
+  });
+
+  it('complete for about half, and not alike for every diagnosis', () => {
+    const attended = new Map<string, number>();
+    for (const { enrollmentId, status } of story.appointments) {
+      if (status === 'fulfilled') attended.set(enrollmentId, (attended.get(enrollmentId) ?? 0) + 1);
+    }
+    const ripe = isoOf(anchor - 140);
+    const closed = story.enrollments.filter(
+      ({ id, phase, enrolledOn }) => phase === 2 && enrolledOn < ripe && attended.has(id ?? ''),
+    );
+    const completed = closed.filter(({ status }) => status === 'completed');
+    expect(completed.length / closed.length).toBeGreaterThan(0.4);
+    expect(completed.length / closed.length).toBeLessThan(0.62);
+    const rates = distinct(closed.map(({ qualifyingDiagnosis }) => qualifyingDiagnosis)).map(
+      (kind) => {
+        const of = closed.filter(({ qualifyingDiagnosis }) => qualifyingDiagnosis === kind);
+        return of.filter(({ status }) => status === 'completed').length / of.length;
+      },
+    );
+    expect(distinct(rates).length).toBeGreaterThan(3);
+  });
+
+  it('have ranges in every state, drafts and ranges that wait for the physician too', () => {
+    const states = story.prescriptions.map(({ status, awaiting }) => `${status} ${awaiting ?? ''}`);
+    expect(distinct(states)).toEqual(['active ', 'completed ', 'draft ', 'draft physician']);
+  });
+
+  const rosters = (rows: PeopleRows) => {
+    const places = new Map<string, { all: number; monitored: number }>();
+    for (const { templateId: template, localDate, status, monitored } of rows.appointments) {
+      if (status === 'cancelled') continue;
+      const place = places.get(`${template} ${localDate}`) ?? { all: 0, monitored: 0 };
+      place.all++;
+      if (monitored) place.monitored++;
+      places.set(`${template} ${localDate}`, place);
+    }
+    return places;
+  };
+
+  it.each([
+    [0, 0],
+    [200, 0],
+    [0, 20],
+  ])('never overfill a class, %i days on from a first day shifted by %i days', (days, shift) => {
+    const capacities = new Map(
+      classPlans.map((plan) => [templateId(plan.key, anchor + shift), plan]),
+    );
+    const rows = tellAt(later(days + shift), anchor + shift);
+    for (const [key, { all, monitored }] of rosters(rows)) {
+      const plan = capacities.get(key.slice(0, 36));
+      expect(all).toBeLessThanOrEqual(plan?.capacity ?? 0);
+      expect(monitored).toBeLessThanOrEqual(plan?.monitoredPlaces ?? 0);
+    }
+  });
+
+  it.each([3, 12, 21, 26.5])('leave the floor a roster today, %d h after midnight UTC', (hour) => {
+    const now = new Date(Date.parse('2026-12-03T00:00:00Z') + hour * 3_600_000);
+    const rows = tellAt(now);
+    const today = isoOf(clockAt(anchor, now).today('quayside'));
+    const open = rows.appointments.filter(
+      ({ localDate, status }) => localDate === today && status === 'booked',
+    );
+    expect(open.length).toBeGreaterThan(0);
+  });
+});
+
+describe('the patient’s account', () => {
+  it.each([0, 3, 5, 20])('has a range, bookings and an open charge %i days on', (days) => {
+    const now = later(days);
+    const rows = tellAt(now);
+    const patient = rows.patients.find(({ email }) => email === patientAccount.email);
+    const of = <R extends { patientId: string }>(list: readonly R[]) =>
+      list.filter(({ patientId }) => patientId === patient?.id);
+    const range = of(rows.prescriptions).find(({ status }) => status === 'active');
+    const { target, ceiling } = range?.result as PrescriptionAnswer;
+    expect(target).not.toBeNull();
+    expect(ceiling).not.toBeNull();
+    const today = isoOf(clockAt(anchor, now).today('quayside'));
+    const ahead = of(rows.appointments).filter(
+      ({ status, localDate }) => status === 'booked' && localDate > today,
+    );
+    expect(ahead.length).toBeGreaterThan(3);
+    expect(of(rows.charges).filter(({ status }) => status === 'open').length).toBeGreaterThan(0);
+    expect(of(rows.charges).length).toBeGreaterThan(2);
+  });
+});
