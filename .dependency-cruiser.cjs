@@ -65,7 +65,11 @@ module.exports = {
         'A feature reads another through its -queries.ts, writes through its -service.ts or -policy.ts inside its own transaction, and hears of it by its -events.ts.',
       from: {
         path: '^server/([^/]+)/',
-        pathNot: ['^server/(http|database|jobs|mail|payments)/', '\\.spec\\.ts$'],
+        pathNot: [
+          '^server/(http|database|jobs|mail|payments)/',
+          '^server/demo/main\\.ts$',
+          '\\.spec\\.ts$',
+        ],
       },
       to: {
         path: featuresOf('server'),

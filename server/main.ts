@@ -6,6 +6,7 @@ import { createApp } from './app';
 import type { AppContext, AppSettings } from './app-context';
 import { ConfigError, loadConfig, type Config } from './config';
 import { openDatabase, type Database } from './database/client';
+import { demoAccounts } from './demo/accounts';
 import { featureJobs } from './features';
 import { createLog } from './http/log';
 import { startWorker } from './jobs/worker';
@@ -21,7 +22,7 @@ const settingsOf = (config: Config): AppSettings => ({
   csrfSecret: config.csrfSecret,
   trustProxyHops: config.trustProxyHops,
   demo: config.demo,
-  demoAccounts: [],
+  demoAccounts: config.demo ? demoAccounts : [],
   clientFolder: existsSync(CLIENT_FOLDER) ? CLIENT_FOLDER : null,
   version,
   checkResponses: false,

@@ -1,20 +1,22 @@
-const PASSWORD = 'Harbor-Lane-36-steps';
+/**
+ * The accounts that the server hands out, as its sign-in page shows them.
+ * @param {number} port
+ * @returns {Promise<{ label: string, email: string, password: string }[]>}
+ */
+async function demoAccounts(port) {
+  const answer = await fetch(`http://127.0.0.1:${port}/api/auth/session`);
+  return (await answer.json()).demoAccounts;
+}
 
-const ACCOUNTS = [
-  ['physiologist', 'Exercise physiologist'],
-  ['nurse', 'Nurse'],
-  ['physician', 'Physician, medical director'],
-  ['frontdesk', 'Front desk'],
-  ['director', 'Program director'],
-  ['admin', 'Administrator'],
-  ['patient', 'Patient'],
-];
-
-/** The demonstration's accounts, as a table. */
-export function accountsTable() {
+/**
+ * The demonstration's accounts, as a table.
+ * @param {number} port of the server, once it is ready
+ */
+export async function accountsTable(port) {
+  const accounts = await demoAccounts(port);
   const rows = [
     ['E-mail', 'Password', 'Role'],
-    ...ACCOUNTS.map(([name, role]) => [`${name}@harborlane.example`, PASSWORD, role ?? '']),
+    ...accounts.map(({ email, password, label }) => [email, password, label]),
   ];
   const widths = [0, 1].map((column) => Math.max(...rows.map((row) => row[column]?.length ?? 0)));
   const line = (/** @type {string[]} */ row) =>
