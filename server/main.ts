@@ -2,6 +2,7 @@ import { createServer, type Server } from 'node:http';
 import { existsSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import { version } from '../package.json';
+import { offerFirstAdministrator } from './accounts/first-administrator-service';
 import { createApp } from './app';
 import type { AppContext, AppSettings } from './app-context';
 import { ConfigError, loadConfig, type Config } from './config';
@@ -61,6 +62,12 @@ function close(server: Server): Promise<void> {
   });
 }
 
+/** For the person at the terminal, not for the log: whoever holds the link becomes the administrator. */
+async function printFirstAdministratorLink(context: AppContext): Promise<void> {
+  const link = await offerFirstAdministrator(context);
+  if (link) console.log(`Make the first administrator here, once, within a day: ${link}`);
+}
+
 async function start(): Promise<void> {
   const config = loadConfig(process.env);
   const context = contextOf(config);
@@ -68,6 +75,7 @@ async function start(): Promise<void> {
   await listen(server, config);
   const worker = config.worker ? await startWorker(featureJobs, context) : null;
   context.log.info({ port: config.port, demo: config.demo, version }, 'listening');
+  if (!config.demo) await printFirstAdministratorLink(context);
 
   let stopping: Promise<void> | undefined;
   const stop = async (): Promise<void> => {

@@ -32,7 +32,7 @@ function openLog(file) {
 }
 
 /**
- * Starts a bundled entry point. What it prints goes to a log; lines for people, that is, not JSON, also to `show`.
+ * Starts a bundled entry point. Its JSON lines and its errors go to a log, lines for people, that is, not JSON, to `show`.
  * @param {object} options
  * @param {string} options.name of dist/server/NAME.js
  * @param {NodeJS.ProcessEnv} options.env
@@ -53,10 +53,12 @@ export function startChild({ name, env, logFolder, show = () => undefined }) {
   for (const stream of [child.stdout, child.stderr]) {
     if (!stream) continue;
     createInterface({ input: stream }).on('line', (line) => {
-      log.write(`${line}\n`);
+      const forPeople = line.trim() !== '' && !line.startsWith('{');
+      if (forPeople) show(line);
+      // What is for people alone may hold a link that must not be kept.
+      if (!forPeople || stream === child.stderr) log.write(`${line}\n`);
       recent.push(line);
       if (recent.length > LAST_LINES) recent.shift();
-      if (line.trim() && !line.startsWith('{')) show(line);
     });
   }
   const ended = new Promise((resolve) => {
