@@ -1,5 +1,10 @@
 import compression from 'compression';
-import express, { type ErrorRequestHandler, type Express, type Response } from 'express';
+import express, {
+  type ErrorRequestHandler,
+  type Express,
+  type RequestHandler,
+  type Response,
+} from 'express';
 import type { AppContext } from './app-context';
 import { featureRoutes } from './features';
 import { clientFiles } from './http/client-files';
@@ -53,8 +58,10 @@ export function createApp(
   });
   app.use('/api', sessionMiddleware(context));
   app.use(mountRoutes(routes, context, createCsrf(settings)));
+  const notFound: RequestHandler = (_request, response) => sendProblem(response, fail('not-found'));
+  app.use('/api', notFound);
   if (settings.clientFolder) app.use(clientFiles(settings.clientFolder));
-  app.use((_request, response) => sendProblem(response, fail('not-found')));
+  app.use(notFound);
   app.use(lastResort);
   return app;
 }

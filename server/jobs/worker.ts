@@ -45,6 +45,8 @@ export async function startWorker(
   context: AppContext,
 ): Promise<Worker> {
   const runner = await run({
+    // With a delay the ends of jobs are gathered, and stopping waits until they are written; without, it does not.
+    preset: { worker: { completeJobBatchDelay: 0, failJobBatchDelay: 0 } },
     pgPool: context.database.$client,
     concurrency: CONCURRENCY,
     taskList: tasksOf(jobs, context),
@@ -55,5 +57,10 @@ export async function startWorker(
   for (const { name } of jobs.filter(({ atStart }) => atStart)) {
     await runner.addJob(name, {}, { jobKey: `${name} at start` });
   }
-  return { stop: () => runner.stop() };
+  return {
+    stop: async () => {
+      await runner.stop();
+      await runner.promise;
+    },
+  };
 }
