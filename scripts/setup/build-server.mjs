@@ -1,4 +1,4 @@
-import { existsSync, readFileSync } from 'node:fs';
+import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { SetupFailure } from '../failure.mjs';
 import { ROOT } from '../paths.mjs';
@@ -24,10 +24,9 @@ function externalPackages() {
 
 /** @returns {import('esbuild').BuildOptions} */
 export function serverBuildOptions() {
-  const present = Object.entries(ENTRY_POINTS).filter(([, file]) => existsSync(join(ROOT, file)));
   return {
     absWorkingDir: ROOT,
-    entryPoints: Object.fromEntries(present),
+    entryPoints: ENTRY_POINTS,
     outdir: 'dist/server',
     bundle: true,
     platform: 'node',

@@ -91,11 +91,12 @@ async function openDatabase(config, secrets, env, cleanup) {
  * Loads the demonstration, or plays it on to today.
  * @param {Config} config
  * @param {NodeJS.ProcessEnv} env
+ * @param {(outcome: string) => void} tell
  */
-async function loadDemo(config, env) {
+async function loadDemo(config, env, tell) {
   writeFileSync(join(config.dataFolder, 'demo-data'), 'This folder holds demonstration data.\n');
   const loaded = await runCommand(process.execPath, ['dist/server/demo.js'], { cwd: ROOT, env });
-  if (loaded.code === 0) return;
+  if (loaded.code === 0) return tell(lastLines(loaded.output, 1));
   throw new SetupFailure({
     did: 'Loaded the demonstration data.',
     why: lastLines(`${loaded.output}\n${loaded.errors}`),
@@ -146,7 +147,9 @@ export async function prepareProduct(env, cleanup, { buildsClient }) {
   delete serverEnv['DATABASE_OWNER_URL'];
   if (!config.demo) return { config, serverEnv, standIns: [] };
 
-  await step('Demonstration: load, and play on to today', () => loadDemo(config, serverEnv));
+  await step('Demonstration: load, or play on to today', (tell) =>
+    loadDemo(config, serverEnv, tell),
+  );
   const webhookSecret = secrets['payment-webhook'];
   const standIns = await step('Stand-ins of hosted services: start', () =>
     startStandIns(env, { port: config.port, folder, webhookSecret, cleanup }),
