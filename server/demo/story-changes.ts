@@ -15,16 +15,26 @@ interface Identified {
   readonly id?: string | undefined;
 }
 
+/** The tables whose rows change after they were told; in the others rows are only added. */
+const changing: readonly (keyof PeopleRows)[] = [
+  'enrollments',
+  'medications',
+  'prescriptions',
+  'appointments',
+  'charges',
+];
+
 function tableChanges<R extends Identified>(
   before: readonly R[],
   after: readonly R[],
+  mayChange: boolean,
 ): TableChanges<R> {
   const known = new Map(before.map((row) => [row.id, row]));
   const changes: TableChanges<R> = { added: [], changed: [] };
   for (const row of after) {
     const old = known.get(row.id);
     if (!old) changes.added.push(row);
-    else if (JSON.stringify(old) !== JSON.stringify(row)) {
+    else if (mayChange && JSON.stringify(old) !== JSON.stringify(row)) {
       changes.changed.push({ before: old, after: row });
     }
   }
@@ -35,7 +45,7 @@ export function storyChanges(before: PeopleRows, after: PeopleRows): StoryChange
   const tables = Object.keys(after) as (keyof PeopleRows)[];
   const entries = tables.map((table) => [
     table,
-    tableChanges<Identified>(before[table], after[table]),
+    tableChanges<Identified>(before[table], after[table], changing.includes(table)),
   ]);
   return Object.fromEntries(entries) as StoryChanges;
 }
