@@ -2,7 +2,7 @@ import { patientAccount, staff } from './accounts';
 import { accountUserId, hiredAt, staffId } from './charting';
 import type { Day } from './days';
 import { siteId } from './program';
-import type { RowOf } from './rows';
+import type { RowOf } from './row-of';
 
 export interface AccountRows {
   readonly users: RowOf<'users'>[];

@@ -3,7 +3,8 @@ import { databaseErrorOf } from '../database/transaction';
 import { appointments, enrollments } from '../database/schema';
 import { insertRows, updateUntouched } from './bulk';
 import type { Change } from './bulk';
-import type { AppointmentRow, RowOf } from './rows';
+import type { RowOf } from './row-of';
+import type { AppointmentRow } from './rows';
 import type { StoryChanges, TableChanges } from './story-changes';
 
 type Enrollment = RowOf<'enrollments'>;
@@ -19,7 +20,8 @@ export interface AppliedCourses {
 
 const checkViolation = '23514';
 
-const isAddable = (row: Enrollment): Enrollment => ({
+/** A course as it takes bookings. */
+const opened = (row: Enrollment): Enrollment => ({
   ...row,
   status: 'active',
   closedOn: null,
@@ -28,23 +30,39 @@ const isAddable = (row: Enrollment): Enrollment => ({
 
 /** The first courses of everybody, then the second: a person has one course of a phase at a time. */
 function rounds({ added, changed }: TableChanges<Enrollment>): TableChanges<Enrollment>[] {
+  const courses = [...changed, ...added.map((after) => ({ before: null, after }))];
+  courses.sort((a, b) => (a.after.enrolledOn < b.after.enrolledOn ? -1 : 1));
   const seen = new Map<string, number>();
   const result: TableChanges<Enrollment>[] = [];
-  const all = [
-    ...changed.map(({ before, after }) => ({ before, after })),
-    ...added.map((after) => ({ before: null, after })),
-  ];
-  for (const { before, after } of all.sort((a, b) =>
-    a.after.enrolledOn < b.after.enrolledOn ? -1 : 1,
-  )) {
+  for (const { before, after } of courses) {
     const key = `${after.patientId} ${after.phase}`;
-    const round = seen.get(key) ?? 0;
-    seen.set(key, round + 1);
-    const tables = (result[round] ??= { added: [], changed: [] });
-    if (before) tables.changed.push({ before, after });
-    else tables.added.push(after);
+    const number = seen.get(key) ?? 0;
+    seen.set(key, number + 1);
+    const round = (result[number] ??= { added: [], changed: [] });
+    if (before) round.changed.push({ before, after });
+    else round.added.push(after);
   }
   return result;
+}
+
+/**
+ * Adds the courses of a round and opens those that stand as told; one that cannot be added counts as touched.
+ * @returns how each open course is to stand once it is filled
+ */
+async function openRound(
+  connection: PoolClient,
+  { added, changed }: TableChanges<Enrollment>,
+  touched: Set<string>,
+): Promise<Change<Enrollment>[]> {
+  const fresh = await insertRows(connection, enrollments, added.map(opened));
+  for (const { id } of added) if (!fresh.has(id)) touched.add(id);
+  const standing = changed.filter(({ after }) => !touched.has(after.id));
+  const openings = standing.map(({ before }) => ({ before, after: opened(before) }));
+  await updateUntouched(connection, enrollments, openings);
+  return [
+    ...added.filter(({ id }) => fresh.has(id)).map((after) => ({ before: opened(after), after })),
+    ...standing.map(({ before, after }) => ({ before: opened(before), after })),
+  ];
 }
 
 /** Adds what the book has room for; where a counter refuses, the rest goes in without that one. */
@@ -78,9 +96,9 @@ async function touchedCourses(
   );
   const standing = new Map(rows.map((row) => [row.id, `${row.status} ${row.version}`]));
   const touched = told.filter(
-    ({ id, status, version }) => standing.get(id ?? '') !== `${status} ${version}`,
+    ({ id, status, version }) => standing.get(id) !== `${status} ${version}`,
   );
-  return new Set(touched.map(({ id }) => id ?? ''));
+  return new Set(touched.map(({ id }) => id));
 }
 
 /** Changes of bookings that nobody has touched, of class dates that nobody has touched. */
@@ -110,34 +128,24 @@ export async function applyCourses(
   const touched = await touchedCourses(connection, told);
   const placed = changes.appointments.added.flatMap((row) => {
     const classDateId = classDateIds.get(`${row.templateId} ${row.localDate}`);
-    return classDateId && !touched.has(row.enrollmentId) ? [{ ...row, classDateId }] : [];
+    return classDateId ? [{ ...row, classDateId }] : [];
   });
-  const applied = new Set<string>();
-  const handled = new Set<string>();
-  for (const { added, changed } of rounds(changes.enrollments)) {
-    const fresh = await insertRows(connection, enrollments, added.map(isAddable));
-    for (const { id } of added) if (!fresh.has(id ?? '')) touched.add(id ?? '');
-    const ours = changed.filter(({ before }) => !touched.has(before.id ?? ''));
-    const opened = ours.map(({ before }) => ({ before, after: isAddable(before) }));
-    await updateUntouched(connection, enrollments, opened);
-    const courses = new Set([...fresh, ...ours.map(({ before }) => before.id ?? '')]);
-    const rows = placed.filter(({ enrollmentId }) => courses.has(enrollmentId));
-    for (const id of await insertPlaces(connection, rows)) applied.add(id);
-    for (const id of courses) handled.add(id);
-    await closeCourses(connection, [
-      ...added
-        .filter(({ id }) => fresh.has(id ?? ''))
-        .map((after) => ({ before: isAddable(after), after })),
-      ...ours.map(({ before, after }) => ({ before: isAddable(before), after })),
-    ]);
+  const { added, changed } = changes.enrollments;
+  const moving = new Set([...added, ...changed.map(({ after }) => after)].map(({ id }) => id));
+  const applied: string[] = [];
+  const fill = async (isMeant: (course: string) => boolean) => {
+    const rows = placed.filter(
+      ({ enrollmentId: course }) => isMeant(course) && !touched.has(course),
+    );
+    applied.push(...(await insertPlaces(connection, rows)));
+  };
+  for (const round of rounds(changes.enrollments)) {
+    const open = await openRound(connection, round, touched);
+    const courses = new Set(open.map(({ after }) => after.id));
+    await fill((course) => courses.has(course));
+    await updateUntouched(connection, enrollments, open);
   }
-  const steady = placed.filter(
-    ({ enrollmentId }) => !handled.has(enrollmentId) && !touched.has(enrollmentId),
-  );
-  for (const id of await insertPlaces(connection, steady)) applied.add(id);
-  for (const id of await updatePlaces(connection, changes.appointments.changed)) applied.add(id);
-  return { touched, appointments: applied };
+  await fill((course) => !moving.has(course));
+  applied.push(...(await updatePlaces(connection, changes.appointments.changed)));
+  return { touched, appointments: new Set(applied) };
 }
-
-const closeCourses = (connection: PoolClient, changes: readonly Change<Enrollment>[]) =>
-  updateUntouched(connection, enrollments, changes);

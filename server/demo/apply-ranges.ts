@@ -4,7 +4,7 @@ import { bpm } from '@shared/units';
 import type { PoolClient } from 'pg';
 import { prescriptions } from '../database/schema';
 import { insertRows, updateUntouched } from './bulk';
-import type { RowOf } from './rows';
+import type { RowOf } from './row-of';
 import type { TableChanges } from './story-changes';
 
 type Prescription = RowOf<'prescriptions'>;

@@ -3,7 +3,8 @@ import type { Visit } from './courses';
 import { minutesLater } from './days';
 import { dice, idAt } from './dice';
 import { priceItemId, selfPayPrice } from './program';
-import type { PeopleRows, RowOf } from './rows';
+import type { RowOf } from './row-of';
+import type { PeopleRows } from './rows';
 
 const currency = selfPayPrice.currency;
 const amountMinor = selfPayPrice.amountMinor;

@@ -91,7 +91,7 @@ function usualOutcome({ key, slot, fate, anchor }: OutcomeContext, day: Day, see
   const zone = siteOf(slot.site).timeZone;
   const closed = closedDay(anchor);
   if (day === closed.day && slot.site === closed.site) {
-    return cancelled(instantAt(day, 6 * 60 + 5, zone), `Class cancelled: ${closed.reason}`);
+    return cancelled(instantAt(day, 6 * 60 + 5, zone), `Closed: ${closed.reason}`);
   }
   const draw = dice(key, 'outcome', isoOf(day));
   if (draw.chance(fate.reliability)) return plain(draw.chance(0.012) ? 'held' : 'attended');

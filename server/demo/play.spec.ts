@@ -238,12 +238,23 @@ describe('playing on', () => {
         WHERE starts_at > $1`,
       [aMonthLater],
     );
-    expect(await playTo(new Date('2027-01-06T20:00:00Z'))).toBe('played on');
+    const [last] = await query<{ number: string }>(
+      `SELECT max(record_number) AS number FROM patients`,
+    );
+    const next = (further: number) => `HL-${Number(last?.number.slice(3)) + further}`;
+    await query(
+      `UPDATE patients SET record_number = $1 WHERE id = (SELECT min(id::text)::uuid FROM patients)`,
+      [next(1)],
+    );
+    expect(await playTo(new Date('2027-01-09T20:00:00Z'))).toBe('played on');
+    expect(await count('patients WHERE record_number = $1', [next(1)])).toBe(1);
+    expect(await count('patients WHERE record_number = $1', [next(2)])).toBe(1);
+    expect(await playTo(new Date('2027-01-20T20:00:00Z'))).toBe('played on');
     expect(await counterDifferences(database)).toEqual([]);
   });
 
   it('leaves rows of another version of the story as they are', async () => {
     await query(`UPDATE demo_plays SET story = '0'`);
-    expect(await playTo(new Date('2027-01-09T20:00:00Z'))).toBe('another version');
+    expect(await playTo(new Date('2027-01-22T20:00:00Z'))).toBe('another version');
   });
 });

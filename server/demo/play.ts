@@ -19,7 +19,7 @@ import type { RecordRows } from './record-entries';
 import { noRows } from './rows';
 import type { PeopleRows } from './rows';
 import { tellStory } from './story';
-import { storyChanges } from './story-changes';
+import { storyChanges, withoutPatients } from './story-changes';
 import type { StoryChanges } from './story-changes';
 
 /** Raise it when the same day would be told otherwise: rows of another version are left as they are. */
@@ -86,19 +86,29 @@ async function applyRecords(
   }
 }
 
+/** Whoever could not be added, since a person has given the record number to another. */
+async function missingPatients(connection: PoolClient, told: PeopleRows): Promise<Set<string>> {
+  const { rows } = await connection.query<{ id: string }>(
+    'SELECT id FROM unnest($1::uuid[]) AS told (id) WHERE NOT EXISTS (SELECT FROM patients p WHERE p.id = told.id)',
+    [told.patients.map(({ id }) => id)],
+  );
+  return new Set(rows.map(({ id }) => id));
+}
+
 async function applyPeople(
   connection: PoolClient,
   before: PeopleRows,
   after: PeopleRows,
   firstDayNeeded: Day,
 ): Promise<void> {
-  const changes = storyChanges(before, after);
-  await insertRows(connection, schema.patients, changes.patients.added);
+  const told = storyChanges(before, after);
+  await insertRows(connection, schema.patients, told.patients.added);
+  const changes = withoutPatients(told, await missingPatients(connection, after));
   const ids = await classDateIds(connection, firstDayNeeded);
   const courses = await applyCourses(connection, changes, before.enrollments, ids);
   const theirs = await prescribedByPeople(connection, before.prescriptions);
   for (const { id, patientId } of after.enrollments) {
-    if (courses.touched.has(id ?? '')) theirs.add(patientId);
+    if (courses.touched.has(id)) theirs.add(patientId);
   }
   await applyRecords(connection, changes, theirs);
   await applyRanges(connection, changes.prescriptions, theirs);

@@ -1,11 +1,11 @@
 import { recurrenceDates } from '@shared/scheduling/recurrence';
 import { weeklyRule } from '@shared/scheduling/weekly-rule';
-import type { classDates, classTemplates, closures, priceItems, sites } from '../database/schema';
 import type { DateWindow } from '@shared/scheduling/recurrence';
 import type { SiteKey } from './accounts';
 import { dayOf, instantAt, isoOf, minutesLater } from './days';
 import type { Day } from './days';
 import { idAt } from './dice';
+import type { RowOf } from './row-of';
 
 /** How far the story reaches back from the day of the first start: fourteen months. */
 export const daysOfHistory = 426;
@@ -129,10 +129,10 @@ export const priceItemId = (anchor: Day) => idAt(opened(anchor), 'price', selfPa
 export const templateId = (key: string, anchor: Day) => idAt(opened(anchor), 'class', key);
 
 export interface ProgramRows {
-  readonly sites: (typeof sites.$inferInsert)[];
-  readonly priceItems: (typeof priceItems.$inferInsert)[];
-  readonly classTemplates: (typeof classTemplates.$inferInsert)[];
-  readonly closures: (typeof closures.$inferInsert)[];
+  readonly sites: RowOf<'sites'>[];
+  readonly priceItems: RowOf<'priceItems'>[];
+  readonly classTemplates: RowOf<'classTemplates'>[];
+  readonly closures: RowOf<'closures'>[];
 }
 
 /** @param anchor the day of the first start, from which fourteen months are told backwards */
@@ -173,7 +173,7 @@ export function programRows(anchor: Day): ProgramRows {
   };
 }
 
-type ClassDateRow = Omit<typeof classDates.$inferInsert, 'during'>;
+type ClassDateRow = RowOf<'classDates'>;
 
 function classDatesOf(plan: ClassPlan, anchor: Day, window: DateWindow): ClassDateRow[] {
   const template = {
@@ -196,7 +196,7 @@ function classDatesOf(plan: ClassPlan, anchor: Day, window: DateWindow): ClassDa
       booked: 0,
       monitoredCapacity: plan.monitoredPlaces,
       monitoredBooked: 0,
-      status: localDate === closedOn ? 'cancelled' : 'scheduled',
+      status: localDate === closedOn ? 'closed' : 'scheduled',
       version: 1,
       createdAt: opened(anchor),
     };

@@ -2,9 +2,10 @@ import { defaultPolicy, evaluatePrescription } from '@shared/clinical/prescribin
 import type { PrescriptionAnswer } from '@shared/clinical/prescribing';
 import { prescriptionRequestSchema } from '@shared/contracts/prescriptions-contract';
 import type { PrescriptionRequestInput } from '@shared/contracts/prescriptions-contract';
-import type { prescriptions } from '../database/schema';
+
 import { minutesLater } from './days';
 import { idAt } from './dice';
+import type { RowOf } from './row-of';
 
 /** A prescription with the moments of its life, as they will come. */
 export interface IssuedRange {
@@ -55,7 +56,7 @@ export function rangeAt(ranges: readonly IssuedRange[], at: Date): IssuedRange |
   return ranges.filter(({ activeFrom }) => activeFrom <= at).at(-1) ?? null;
 }
 
-type PrescriptionRow = typeof prescriptions.$inferInsert;
+type PrescriptionRow = RowOf<'prescriptions'>;
 
 export interface RangeOwner {
   readonly patientId: string;

@@ -58,6 +58,6 @@ export function writeDoseRaised(rows: RecordRows, scribe: Scribe, day: Day) {
     ...entry(scribe, 'drug', 'raised', day),
     dose: doubled(current.dose),
     startedOn: isoOf(day),
-    replaces: current.id ?? null,
+    replaces: current.id,
   });
 }

@@ -1,25 +1,21 @@
-import type * as schema from '../database/schema';
 import { idAt } from './dice';
-
-type Row<T extends keyof typeof schema> = (typeof schema)[T] extends { $inferInsert: infer R }
-  ? R
-  : never;
+import type { RowOf } from './row-of';
 
 /** The entries of a record, by table. */
 export interface RecordRows {
-  readonly diagnoses: Row<'diagnoses'>[];
-  readonly conditions: Row<'conditions'>[];
-  readonly clinicalEvents: Row<'clinicalEvents'>[];
-  readonly bodyMeasurements: Row<'bodyMeasurements'>[];
-  readonly rhythmRecords: Row<'rhythmRecords'>[];
-  readonly restingRates: Row<'restingRates'>[];
-  readonly medications: Row<'medications'>[];
-  readonly medicationReviews: Row<'medicationReviews'>[];
-  readonly cardiacDevices: Row<'cardiacDevices'>[];
-  readonly exerciseTests: Row<'exerciseTests'>[];
-  readonly thresholds: Row<'thresholds'>[];
-  readonly walkTests: Row<'walkTests'>[];
-  readonly riskStratifications: Row<'riskStratifications'>[];
+  readonly diagnoses: RowOf<'diagnoses'>[];
+  readonly conditions: RowOf<'conditions'>[];
+  readonly clinicalEvents: RowOf<'clinicalEvents'>[];
+  readonly bodyMeasurements: RowOf<'bodyMeasurements'>[];
+  readonly rhythmRecords: RowOf<'rhythmRecords'>[];
+  readonly restingRates: RowOf<'restingRates'>[];
+  readonly medications: RowOf<'medications'>[];
+  readonly medicationReviews: RowOf<'medicationReviews'>[];
+  readonly cardiacDevices: RowOf<'cardiacDevices'>[];
+  readonly exerciseTests: RowOf<'exerciseTests'>[];
+  readonly thresholds: RowOf<'thresholds'>[];
+  readonly walkTests: RowOf<'walkTests'>[];
+  readonly riskStratifications: RowOf<'riskStratifications'>[];
 }
 
 export const emptyRecord = (): RecordRows => ({

@@ -1,12 +1,6 @@
-import type * as schema from '../database/schema';
 import { emptyRecord } from './record-entries';
 import type { RecordRows } from './record-entries';
-
-type Table = {
-  [T in keyof typeof schema]: (typeof schema)[T] extends { $inferInsert: object } ? T : never;
-}[keyof typeof schema];
-
-export type RowOf<T extends Table> = (typeof schema)[T]['$inferInsert'];
+import type { RowOf } from './row-of';
 
 /** An appointment by its class and day: the class date's id is the database's, whoever made it. */
 export type AppointmentRow = Omit<

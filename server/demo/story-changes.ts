@@ -41,6 +41,23 @@ function tableChanges<R extends Identified>(
   return changes;
 }
 
+/** The changes without those of some patients. */
+export function withoutPatients(
+  changes: StoryChanges,
+  patientIds: ReadonlySet<string>,
+): StoryChanges {
+  if (patientIds.size === 0) return changes;
+  const isKept = (row: object) => !('patientId' in row && patientIds.has(String(row.patientId)));
+  const entries = Object.entries(changes).map(([table, { added, changed }]) => [
+    table,
+    {
+      added: (added as object[]).filter(isKept),
+      changed: (changed as Change<object>[]).filter(({ after }) => isKept(after)),
+    },
+  ]);
+  return Object.fromEntries(entries) as StoryChanges;
+}
+
 export function storyChanges(before: PeopleRows, after: PeopleRows): StoryChanges {
   const tables = Object.keys(after) as (keyof PeopleRows)[];
   const entries = tables.map((table) => [

@@ -85,7 +85,7 @@ describe('the courses', () => {
       ]),
     );
     const enrolled = new Set(story.enrollments.map(({ patientId }) => patientId));
-    expect(story.patients.some(({ id }) => !enrolled.has(id ?? ''))).toBe(true);
+    expect(story.patients.some(({ id }) => !enrolled.has(id))).toBe(true);
     const courses = story.enrollments.filter(({ phase }) => phase === 2);
     const again = courses.filter(
       (course) => courses.filter(({ patientId }) => patientId === course.patientId).length > 1,
@@ -100,7 +100,7 @@ describe('the courses', () => {
     }
     const ripe = isoOf(anchor - 140);
     const closed = story.enrollments.filter(
-      ({ id, phase, enrolledOn }) => phase === 2 && enrolledOn < ripe && attended.has(id ?? ''),
+      ({ id, phase, enrolledOn }) => phase === 2 && enrolledOn < ripe && attended.has(id),
     );
     const completed = closed.filter(({ status }) => status === 'completed');
     expect(completed.length / closed.length).toBeGreaterThan(0.4);

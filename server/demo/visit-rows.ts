@@ -7,7 +7,8 @@ import { dice, idAt } from './dice';
 import { writeMoney } from './money-rows';
 import { templateId } from './program';
 import type { IssuedRange } from './ranges';
-import type { PeopleRows, RowOf } from './rows';
+import type { RowOf } from './row-of';
+import type { PeopleRows } from './rows';
 import { vitalRows } from './vitals';
 
 /** Whose visit it is. */

@@ -1,7 +1,7 @@
 import { bpm } from '@shared/units';
 import { placeHeartRate } from '@shared/clinical/placement';
 import type { PrescriptionAnswer } from '@shared/clinical/prescribing';
-import type { vitalSigns } from '../database/schema';
+import type { RowOf } from './row-of';
 import type { Chart } from './chart';
 import { seatedAfter } from './chart';
 import { minutesLater } from './days';
@@ -10,7 +10,7 @@ import type { Dice } from './dice';
 import type { Visit } from './courses';
 import { workNote } from './workload-notes';
 
-type VitalRow = typeof vitalSigns.$inferInsert;
+type VitalRow = RowOf<'vitalSigns'>;
 type Values = Pick<
   VitalRow,
   | 'heartRate'
