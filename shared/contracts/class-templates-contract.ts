@@ -1,13 +1,13 @@
 import * as z from 'zod';
 import { recurrenceFault } from '../scheduling/recurrence-rule';
+import { localDateField as localDate, textField } from './fields';
 import { classKindSchema } from './schedule-contract';
 import './zod';
 
-const localDate = z.iso.date('Enter a date as YYYY-MM-DD');
 const localTime = z.string().regex(/^([01]\d|2[0-3]):[0-5]\d$/, 'Enter a time as HH:MM');
 
 const templateFields = {
-  name: z.string().trim().min(1, 'Enter a name').max(80, 'Use at most 80 characters'),
+  name: textField(80, 'Enter a name'),
   kind: classKindSchema,
   /** An RFC 5545 rule of dates, such as FREQ=WEEKLY;BYDAY=MO,WE,FR */
   recurrence: z
@@ -88,7 +88,7 @@ export type ClassTemplates = z.infer<typeof classTemplatesResponseSchema>;
 export const closureRequestSchema = z.strictObject({
   siteId: z.uuid(),
   localDate,
-  reason: z.string().trim().min(1, 'Enter a reason').max(200),
+  reason: textField(200, 'Enter a reason'),
 });
 export type ClosureRequest = z.infer<typeof closureRequestSchema>;
 

@@ -1,7 +1,7 @@
 import * as z from 'zod';
 import { bookingConflicts } from '../scheduling/booking-conflict';
 import { daysBetween } from '../scheduling/wall-time';
-import './zod';
+import { cursorField, localDateField as localDate, textField } from './fields';
 
 export const appointmentStatuses = [
   'proposed',
@@ -32,7 +32,6 @@ export const classKindSchema = z.enum(['exercise', 'orientation', 'education']);
 export type ClassKind = z.infer<typeof classKindSchema>;
 
 const instant = z.iso.datetime({ offset: true });
-const localDate = z.iso.date('Enter a date as YYYY-MM-DD');
 const localTime = z.string().regex(/^([01]\d|2[0-3]):[0-5]\d$/, 'Enter a time as HH:MM');
 const version = z.int().min(1);
 
@@ -103,7 +102,7 @@ export type Appointment = z.infer<typeof appointmentSchema>;
 /** `PATCH /api/appointments/:id`; see `server/schedule/schedule-policy.ts` for who may do what. */
 export const changeAppointmentRequestSchema = z.strictObject({
   status: appointmentStatusSchema,
-  reason: z.string().trim().min(1).max(200).optional(),
+  reason: textField(200, 'Enter a reason').optional(),
   version,
 });
 export type ChangeAppointmentRequest = z.infer<typeof changeAppointmentRequestSchema>;
@@ -126,7 +125,7 @@ export const appointmentsQuerySchema = z.strictObject({
   from: localDate.optional(),
   to: localDate.optional(),
   order: z.enum(['earliest-first', 'latest-first']).default('earliest-first'),
-  cursor: z.string().max(200).optional(),
+  cursor: cursorField.optional(),
   limit: z.coerce.number().int().min(1).max(100).default(25),
 });
 export type AppointmentsQuery = z.infer<typeof appointmentsQuerySchema>;
