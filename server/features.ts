@@ -7,6 +7,7 @@ import type { RouteDefinition } from './http/route';
 import { serviceRoutes } from './http/service-routes';
 import type { JobDefinition } from './jobs/job';
 import type { AppointmentListener } from './schedule/appointment-events';
+import { messageOfAppointments } from './schedule/appointment-messages';
 import { prescriptionsRoutes } from './prescriptions/prescriptions-routes';
 import { scheduleJobs } from './schedule/schedule-jobs';
 import { scheduleRoutes } from './schedule/schedule-routes';
@@ -14,7 +15,7 @@ import { patientsRoutes } from './patients/patients-routes';
 import { sitesRoutes } from './settings/sites-routes';
 
 /** Who acts when a place is taken or given back, inside that transaction and in this order. */
-const appointmentListeners: readonly AppointmentListener[] = [];
+const appointmentListeners: readonly AppointmentListener[] = [messageOfAppointments];
 
 /** Every endpoint of the product: a feature adds its own here. */
 export function featureRoutes(context: AppContext): RouteDefinition[] {

@@ -20,7 +20,11 @@ export interface AppointmentFacts {
 
 /** What happened to a place, told inside the transaction in which it happens. */
 export type AppointmentEvent =
-  | { readonly type: 'booked'; readonly appointment: AppointmentFacts }
+  | {
+      readonly type: 'booked';
+      /** One, or every date of a series, earliest first. */
+      readonly appointments: readonly [AppointmentFacts, ...AppointmentFacts[]];
+    }
   | {
       readonly type: 'cancelled';
       readonly appointment: AppointmentFacts;

@@ -10,7 +10,7 @@ import {
   type BookedRow,
   type DiagnosisRow,
 } from './booking-repository';
-import { announce, isOpen, type ScheduleContext } from './schedule-context';
+import { announceBooked, isOpen, type ScheduleContext } from './schedule-context';
 
 /** How often a booking that was refused for a reason that has gone is tried again. */
 const ATTEMPTS = 5;
@@ -46,7 +46,7 @@ export async function bookAppointment(
   for (let attempt = 0; attempt < ATTEMPTS; attempt += 1) {
     const booked = await tryToBook(tx, context, wish);
     if (booked !== null) {
-      await announce(tx, context, booked, { type: 'booked' });
+      await announceBooked(tx, context, [booked]);
       return booked;
     }
     const conflict = await conflictNow(tx, context, wish);

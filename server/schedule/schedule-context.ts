@@ -62,19 +62,33 @@ function factsOf(row: BookedRow): AppointmentFacts {
   };
 }
 
-type Happening =
-  | { readonly type: 'booked' }
-  | { readonly type: 'cancelled'; readonly byProgram: boolean; readonly late: boolean };
-
 /** Tells every listener, in its order, inside the transaction. */
-export async function announce(
+async function announce(
   tx: Transaction,
   context: ScheduleContext,
-  row: BookedRow,
-  happening: Happening,
+  event: AppointmentEvent,
 ): Promise<void> {
-  const event: AppointmentEvent = { ...happening, appointment: factsOf(row) };
   for (const listener of context.listeners) {
     await listener(tx, event, { actorId: context.actor.id, at: context.now });
   }
+}
+
+/** Tells of places taken, a whole series at once. @param rows earliest first */
+export async function announceBooked(
+  tx: Transaction,
+  context: ScheduleContext,
+  rows: readonly BookedRow[],
+): Promise<void> {
+  const [first, ...rest] = rows.map(factsOf);
+  if (first) await announce(tx, context, { type: 'booked', appointments: [first, ...rest] });
+}
+
+/** Tells of a place given back. */
+export async function announceCancelled(
+  tx: Transaction,
+  context: ScheduleContext,
+  row: BookedRow,
+  how: { readonly byProgram: boolean; readonly late: boolean },
+): Promise<void> {
+  await announce(tx, context, { type: 'cancelled', appointment: factsOf(row), ...how });
 }

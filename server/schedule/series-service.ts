@@ -21,7 +21,7 @@ import {
   readBooked,
   type BookedRow,
 } from './booking-repository';
-import { announce, isOpen, type ScheduleContext } from './schedule-context';
+import { announceBooked, isOpen, type ScheduleContext } from './schedule-context';
 import {
   lockClassDates,
   readActiveCourse,
@@ -114,7 +114,7 @@ async function tryToBookSeries(
     throw error;
   }
   const booked = await readBooked(tx, ids);
-  for (const row of booked) await announce(tx, context, row, { type: 'booked' });
+  await announceBooked(tx, context, booked);
   return booked;
 }
 

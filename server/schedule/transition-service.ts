@@ -7,7 +7,7 @@ import type { AppointmentStatus } from '@shared/contracts/schedule-contract';
 import type { Transaction } from '../database/client';
 import { fail, type Failure } from '../http/failure';
 import { lockPatientBooking, readBooked, type BookedRow } from './booking-repository';
-import { announce, bookerOf, type ScheduleContext } from './schedule-context';
+import { announceCancelled, bookerOf, type ScheduleContext } from './schedule-context';
 import { transitionRefusal } from './schedule-policy';
 
 export interface StatusChange {
@@ -90,8 +90,7 @@ async function announceFreed(
   const struckOut = status === 'entered-in-error';
   if (status !== 'cancelled' && !struckOut) return;
   if (appointment.status === 'cancelled') return;
-  await announce(tx, context, appointment, {
-    type: 'cancelled',
+  await announceCancelled(tx, context, appointment, {
     byProgram: struckOut,
     late: !struckOut && isLateCancellation(appointment, context.now, context.window),
   });
@@ -130,7 +129,7 @@ export async function cancelForProgram(
   const appointment = await lockAppointment(tx, id);
   if (appointment?.status !== 'booked') return false;
   await writeStatus(tx, context, id, { status: 'cancelled', reason });
-  await announce(tx, context, appointment, { type: 'cancelled', byProgram: true, late: false });
+  await announceCancelled(tx, context, appointment, { byProgram: true, late: false });
   return true;
 }
 

@@ -326,6 +326,49 @@ describe('changing an appointment', () => {
   });
 });
 
+describe('messages', () => {
+  const messagesTo = async (patientId: string) => {
+    const { rows } = await testApp.context.database.$client.query<{
+      kind: string;
+      subject: object;
+    }>('SELECT kind, subject FROM outbox WHERE patient_id = $1 ORDER BY created_at, kind DESC', [
+      patientId,
+    ]);
+    return rows;
+  };
+
+  it('go into the outbox with the booking and with its cancellation, a refused one leaves none', async () => {
+    const { patient, date, appointment } = await booked();
+    await book(desk, { classDateId: date.id, patientId: patient.id }).expect(409);
+    await desk
+      .patch(`/api/appointments/${appointment.id}`)
+      .send({ status: 'cancelled', version: 1 })
+      .expect(200);
+    const subject = { appointmentIds: appointment.id };
+    expect(await messagesTo(patient.id)).toEqual([
+      { kind: 'booking-confirmation', subject },
+      { kind: 'booking-cancellation', subject },
+    ]);
+  });
+
+  it('confirm a series once', async () => {
+    const patient = await bookable();
+    const dates = [await classDate(), await classDate({ localDate: '2026-12-08' })];
+    const reply = await desk
+      .post('/api/appointments/series')
+      .set('Idempotency-Key', randomUUID())
+      .send({ patientId: patient.id, classDateIds: dates.map(({ id }) => id) })
+      .expect(201);
+    const { items } = reply.body as { items: { id: string }[] };
+    expect(await messagesTo(patient.id)).toEqual([
+      {
+        kind: 'booking-confirmation',
+        subject: { appointmentIds: items.map(({ id }) => id).join(' ') },
+      },
+    ]);
+  });
+});
+
 describe('lists', () => {
   it('shows a patient their own appointments by page, either way round', async () => {
     const { agent, patient } = await booker();
