@@ -43,9 +43,22 @@ async function attempt(undo) {
   }
 }
 
-/** Resolves with the signal when the person, or the machine, asks this process to end. */
+/** How often a process that npm started looks whether npm is still there, in milliseconds. */
+const LOOK_MS = 500;
+
+/**
+ * Resolves with the reason when the person, or the machine, asks this process to end. A killed npm can pass nothing on:
+ * then its child has another parent, and ends too.
+ * @returns {Promise<string>}
+ */
 export function stopRequest() {
   return new Promise((resolve) => {
     for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => resolve(signal));
+    if (!process.env['npm_lifecycle_event']) return;
+    const parent = process.ppid;
+    const look = setInterval(() => {
+      if (process.ppid !== parent) resolve('the end of npm');
+    }, LOOK_MS);
+    look.unref();
   });
 }

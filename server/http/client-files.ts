@@ -11,9 +11,10 @@ const PRIVATE = /\.map$/;
 
 const noStore = (response: Response): void => void response.set('Cache-Control', 'no-store');
 
-/** A person opening an address of the client, as opposed to a page fetching a file. */
-const isNavigation: (path: string, accept: string) => boolean = (path, accept) =>
-  accept.includes('text/html') && !path.split('/').some((segment) => segment.includes('.'));
+/** A person opening an address of the client, as opposed to a page fetching a file; anyone may ask for the first page. */
+const isNavigation = (path: string, accept: string): boolean =>
+  path === '/' ||
+  (accept.includes('text/html') && !path.split('/').some((segment) => segment.includes('.')));
 
 /** The page with a nonce of this reply's own, in the header and in the page alike. */
 function sendPage(page: string): RequestHandler {
