@@ -71,7 +71,7 @@ CREATE FUNCTION count_attendance(course uuid) RETURNS void LANGUAGE sql AS $$
       WHERE a.enrollment_id = course AND a.status = 'fulfilled' AND a.exercised AND t.kind = 'exercise'
   )
   UPDATE enrollments e SET (attended, attended_in_window, first_session_on, last_session_on) = (
-    SELECT count(*), count(*) FILTER (WHERE s.local_date < s.first_on + 252), min(s.local_date), max(s.local_date) FROM session s
+    SELECT count(*), count(*) FILTER (WHERE s.local_date <= s.first_on + 252), min(s.local_date), max(s.local_date) FROM session s
   ) WHERE e.id = course
 $$;
 --> statement-breakpoint

@@ -9,6 +9,7 @@ import type { JobDefinition } from './jobs/job';
 import type { AppointmentListener } from './schedule/appointment-events';
 import { messageOfAppointments } from './schedule/appointment-messages';
 import { prescriptionsRoutes } from './prescriptions/prescriptions-routes';
+import { reportsRoutes } from './reports/reports-routes';
 import { scheduleJobs } from './schedule/schedule-jobs';
 import { scheduleRoutes } from './schedule/schedule-routes';
 import { patientsRoutes } from './patients/patients-routes';
@@ -27,6 +28,7 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...prescriptionsRoutes,
     ...scheduleRoutes(appointmentListeners),
     ...patientsRoutes,
+    ...reportsRoutes,
   ];
   return routes;
 }

@@ -33,6 +33,9 @@ const signing: readonly Role[] = ['exercise-physiologist', 'physician'];
 const chart: readonly Role[] = ['nurse', 'exercise-physiologist', 'physician'];
 const planning: readonly Role[] = ['front-desk', 'administrator'];
 
+const measures: readonly Role[] = ['director', 'physician', 'exercise-physiologist'];
+const years = '?from=2026-01-01&to=2027-01-01';
+
 const ownAccount = { none: 'one’s own account, or none yet' } as const;
 const accounts = { who: administrator, none: 'accounts are the whole program’s' } as const;
 const sitePlan = { who: planning, everySite: administrator } as const;
@@ -146,6 +149,30 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
   'POST /api/prescriptions/:id/revoke': {
     who: signing,
     record: ({ prescriptionId }) => ({ id: prescriptionId, body: { version: 1 } }),
+  },
+
+  'GET /api/reports/completion': {
+    who: measures,
+    strangers: 200,
+    record: () => ({ query: years }),
+  },
+  'GET /api/reports/completion.csv': {
+    who: measures,
+    strangers: 200,
+    record: () => ({ query: years }),
+  },
+  'GET /api/reports/completion/patients': {
+    who: measures,
+    strangers: 200,
+    record: () => ({ query: `${years}&part=enrolled` }),
+  },
+  'GET /api/reports/settings': {
+    who: [...measures, 'administrator'],
+    none: 'a definition is the whole program’s',
+  },
+  'PUT /api/reports/settings': {
+    who: ['director', 'administrator'],
+    none: 'a definition is the whole program’s',
   },
 
   'GET /api/class-dates': { who: 'signed-in', ...timetable },

@@ -8,3 +8,4 @@ export * from './messages';
 export * from './patients';
 export * from './prescriptions';
 export * from './program';
+export * from './settings';

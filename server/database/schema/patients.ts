@@ -104,7 +104,7 @@ export const enrollments = pgTable(
     monitored: boolean().notNull().default(true),
     booked: integer().notNull().default(0),
     attended: integer().notNull().default(0),
-    /** Sessions attended within 252 days of the first. */
+    /** Sessions attended within 252 days of the first, day 252 included. */
     attendedInWindow: integer().notNull().default(0),
     firstSessionOn: date({ mode: 'string' }),
     lastSessionOn: date({ mode: 'string' }),
