@@ -33,6 +33,10 @@ export const sessionRecords = pgTable(
     startedAt: instant().notNull(),
     /** The range in force when the record began; null where there was none. */
     prescriptionId: uuid().references(() => prescriptions.id),
+    /** Why that range was out of force when the record began: then effort leads, and its ceiling stays. */
+    rangeWithdrawn: text().array().notNull().default([]),
+    /** What the patient was identified by, by whom and when the record was made; null when the sender did not say. */
+    identityConfirmedWith: text().array(),
     receivedAt: madeAt(),
     recordedBy: uuid()
       .notNull()
@@ -45,6 +49,10 @@ export const sessionRecords = pgTable(
     unique('session_records_appointment').on(t.appointmentId),
     index('session_records_patient').on(t.patientId, t.startedAt),
     check('session_records_signature', sql`(${t.signedAt} is null) = (${t.signedBy} is null)`),
+    check(
+      'session_records_two_identifiers',
+      sql`${t.identityConfirmedWith} is null or (cardinality(${t.identityConfirmedWith}) >= 2 and ${t.identityConfirmedWith} <@ array['name', 'birth-date', 'record-number'])`,
+    ),
   ],
 );
 

@@ -1,0 +1,3 @@
+ALTER TABLE "session_records" ADD COLUMN "range_withdrawn" text[] DEFAULT '{}' NOT NULL;--> statement-breakpoint
+ALTER TABLE "session_records" ADD COLUMN "identity_confirmed_with" text[];--> statement-breakpoint
+ALTER TABLE "session_records" ADD CONSTRAINT "session_records_two_identifiers" CHECK ("session_records"."identity_confirmed_with" is null or (cardinality("session_records"."identity_confirmed_with") >= 2 and "session_records"."identity_confirmed_with" <@ array['name', 'birth-date', 'record-number']));
