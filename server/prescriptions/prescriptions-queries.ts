@@ -1,9 +1,13 @@
-import { and, desc, eq, inArray, sql } from 'drizzle-orm';
+import { desc, eq, sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/pg-core';
-import type { PrescriptionAnswer, PrescriptionRequest } from '@shared/clinical/prescribing';
+import type { PrescriptionAnswer } from '@shared/clinical/prescribing';
 import type { PrescriptionRequestInput } from '@shared/contracts/prescriptions-contract';
 import type { Queryable } from '../database/client';
 import { prescriptions, users } from '../database/schema';
+
+// The only door for other features.
+export type { RangeInForce } from './range-in-force';
+export { rangeInForce, rangesInForce } from './range-in-force-queries';
 
 const author = alias(users, 'author');
 const signer = alias(users, 'signer');
@@ -62,41 +66,3 @@ export const listPrescriptions = (tx: Queryable, patientId: string): Promise<Pre
   selectPrescriptions(tx)
     .where(eq(prescriptions.patientId, patientId))
     .orderBy(desc(prescriptions.createdAt), desc(prescriptions.id));
-
-/** What floor and pages need of a range in force. */
-export interface RangeInForce {
-  readonly patientId: string;
-  readonly prescriptionId: string;
-  readonly inputs: PrescriptionRequest;
-  readonly result: PrescriptionAnswer;
-  readonly activatedAt: Date;
-}
-
-/** The ranges in force of any number of patients, by patient, in one statement. */
-export async function rangesInForce(
-  tx: Queryable,
-  patientIds: readonly string[],
-): Promise<ReadonlyMap<string, RangeInForce>> {
-  if (patientIds.length === 0) return new Map();
-  const rows = await tx
-    .select({
-      patientId: prescriptions.patientId,
-      prescriptionId: prescriptions.id,
-      inputs: sql<PrescriptionRequest>`${prescriptions.inputs}`,
-      result: sql<PrescriptionAnswer>`${prescriptions.result}`,
-      activatedAt: sql<Date>`${prescriptions.activatedAt}`.mapWith(prescriptions.activatedAt),
-    })
-    .from(prescriptions)
-    .where(
-      and(eq(prescriptions.status, 'active'), inArray(prescriptions.patientId, [...patientIds])),
-    );
-  return new Map(rows.map((row) => [row.patientId, row]));
-}
-
-/** @returns undefined while no range is in force */
-export async function rangeInForce(
-  tx: Queryable,
-  patientId: string,
-): Promise<RangeInForce | undefined> {
-  return (await rangesInForce(tx, [patientId])).get(patientId);
-}

@@ -47,10 +47,15 @@ export async function insertDraft(
   return row.id;
 }
 
-export async function updateDraft(tx: Transaction, id: string, draft: Computed): Promise<void> {
+export async function updateDraft(
+  tx: Transaction,
+  id: string,
+  draft: Computed & { readonly changedAt: Date },
+): Promise<void> {
+  const { changedAt } = draft;
   await tx
     .update(prescriptions)
-    .set({ ...stored(draft), version: sql`${prescriptions.version} + 1` })
+    .set({ ...stored(draft), changedAt, version: sql`${prescriptions.version} + 1` })
     .where(eq(prescriptions.id, id));
 }
 

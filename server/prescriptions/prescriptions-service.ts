@@ -77,7 +77,7 @@ export async function changeDraft(
   if (found.row.version !== change.version) return fail('stale-version');
   if (found.row.status !== 'draft') return fail('illegal-transition');
   const result = await evaluate(tx, change.inputs, now, 'inputs.');
-  await updateDraft(tx, id, { inputs: change.inputs, result });
+  await updateDraft(tx, id, { inputs: change.inputs, result, changedAt: now });
   return reread(tx, id);
 }
 

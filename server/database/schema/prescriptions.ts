@@ -54,6 +54,8 @@ export const prescriptions = pgTable(
     createdBy: uuid()
       .notNull()
       .references(() => users.id),
+    /** When the inputs of the draft were last changed; null: they are as first written. */
+    changedAt: instant(),
     signedAt: instant(),
     signedBy: uuid().references(() => users.id),
     physicianSignedAt: instant(),
