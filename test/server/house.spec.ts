@@ -6,6 +6,7 @@ import { fail } from '../../server/http/failure';
 import { created, noContent, ok } from '../../server/http/answers';
 import { route, textAnswer, type RouteDefinition } from '../../server/http/route';
 import { createApp } from '../../server/app';
+import { suppressions } from '../../server/database/schema';
 import { agentFor, visitor, type Agent } from '../builders/agent';
 import { buildUser } from '../builders/people';
 import { createTestApp, type TestApp } from '../builders/test-app';
@@ -56,6 +57,18 @@ const routes: RouteDefinition[] = [
   }),
   route({
     ...anything,
+    method: 'post',
+    path: '/api/twins',
+    request: {},
+    response: { 204: null },
+    handler: async ({ context: { database } }) => {
+      const twin = { address: 'somebody@home.example', reason: 'words about somebody' };
+      await database.insert(suppressions).values([twin, twin]);
+      return noContent();
+    },
+  }),
+  route({
+    ...anything,
     method: 'get',
     path: '/api/files/:token.csv',
     access: 'public',
@@ -98,6 +111,29 @@ describe('the way of a request', () => {
     });
     const line = house.logged().find((entry) => entry['msg'] === 'a call failed');
     expect(line).toMatchObject({ req: { id: reply.body.id }, err: { message: /secret words/ } });
+  });
+
+  it('keeps out of the log what the database quotes in its complaints', async () => {
+    await agent.post('/api/twins').expect(500);
+    const logged = JSON.stringify(house.logged());
+    expect(logged).toContain('suppressions_pkey');
+    expect(logged).not.toContain('somebody');
+  });
+
+  it('logs each call in one line of JSON, by its template, in UTC, with ids alone', async () => {
+    const id = randomUUID();
+    await agent.get(`/api/things/${id}?limit=5`).expect(200);
+    const line = house.logged().at(-1);
+    expect(line).toEqual({
+      level: 30,
+      time: expect.stringMatching(/Z$/),
+      req: { id: expect.any(String), method: 'GET' },
+      res: { status: 200 },
+      route: '/api/things/:id',
+      userId: expect.any(String),
+      ms: expect.any(Number),
+      msg: 'call',
+    });
   });
 
   it('says when to try again', async () => {
