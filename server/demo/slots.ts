@@ -20,13 +20,20 @@ interface Taken extends Span {
   readonly monitored: boolean;
 }
 
+/** The most who are there on one day of a span. */
+function mostAtOnce(taken: readonly Taken[], span: Span): number {
+  const there = (day: Day) => taken.filter(({ from, to }) => from <= day && day <= to).length;
+  const arrivals = taken.map(({ from }) => from).filter((from) => from > span.from);
+  return Math.max(...[span.from, ...arrivals].map(there));
+}
+
 /** Places kept free for people who book themselves. */
 const keptFree = 2;
 
 /** What the front desk is asked for most: not too early, not too late; 1 where not said. */
 const wanted: Record<SiteKey, Readonly<Record<number, number>>> = {
-  quayside: { 9: 2, 10: 5, 11: 2 },
-  'mill-street': { 9: 4, 14: 1.5 },
+  quayside: { 9: 1.6, 10: 6, 11: 1.6 },
+  'mill-street': { 9: 4 },
 };
 
 const weeklyPatterns: Record<2 | 3, readonly (readonly number[])[]> = {
@@ -78,10 +85,13 @@ export function openSlotBook(): SlotBook {
     const { capacity, monitoredPlaces } = classAt(slot.site, slot.hour, slot.selfPay);
     const loads = slot.weekdays.map((weekday) => {
       const others = inSpan(slot.site, weekday, slot.hour, span);
-      const channels = others.filter((other) => other.monitored).length;
-      const full =
-        others.length >= capacity - keptFree || (monitored && channels >= monitoredPlaces - 1);
-      return full ? Infinity : (others.length + 1) / (wanted[slot.site][slot.hour] ?? 1);
+      const there = mostAtOnce(others, span);
+      const channels = mostAtOnce(
+        others.filter((other) => other.monitored),
+        span,
+      );
+      const full = there >= capacity - keptFree || (monitored && channels >= monitoredPlaces - 1);
+      return full ? Infinity : (there + 1) / (wanted[slot.site][slot.hour] ?? 1);
     });
     return Math.max(...loads) / 2 + loads.reduce((sum, load) => sum + load, 0) / loads.length;
   };
