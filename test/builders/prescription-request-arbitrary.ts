@@ -24,8 +24,11 @@ const between = (min: number, max: number) =>
 
 const orNull = <T>(arbitrary: fc.Arbitrary<T>) => fc.option(arbitrary, { nil: null, freq: 2 });
 
-/** Mostly false, so that heart rate leads often enough to be tested. */
-const seldom = fc.boolean().chain((first) => (first ? fc.boolean() : fc.constant(false)));
+/** Mostly the first value, so that heart rate leads often enough to be tested. */
+const mostly = <T>(usual: T, any: fc.Arbitrary<T>) =>
+  fc.oneof({ weight: 12, arbitrary: fc.constant(usual) }, any);
+
+const seldom = mostly(false, fc.boolean());
 
 const fractions = fc
   .tuple(fc.integer({ min: 10, max: 90 }), fc.integer({ min: 1, max: 60 }))
@@ -36,11 +39,8 @@ const fractions = fc
 
 const conditions = fc.record({
   coronaryDisease: fc.boolean(),
-  heartFailure: fc.constantFrom(...heartFailures),
-  transplant: fc.oneof(
-    { weight: 4, arbitrary: fc.constant('none' as const) },
-    fc.constantFrom(...transplants),
-  ),
+  heartFailure: mostly<(typeof heartFailures)[number]>('none', fc.constantFrom(...heartFailures)),
+  transplant: mostly<(typeof transplants)[number]>('none', fc.constantFrom(...transplants)),
   ventricularAssistDevice: seldom,
   chronotropicIncompetence: seldom,
   autonomicNeuropathy: seldom,
@@ -61,7 +61,7 @@ const withoutIcd = (status: 'none' | 'unknown') =>
   fc.record({ status: fc.constant(status), zones: fc.constant([] as IcdInput['zones']) });
 
 const icd: fc.Arbitrary<IcdInput> = fc.oneof(
-  { weight: 3, arbitrary: withoutIcd('none') },
+  { weight: 8, arbitrary: withoutIcd('none') },
   withoutIcd('unknown'),
   fc.record({ status: fc.constant('present' as const), zones }),
 );
@@ -69,10 +69,10 @@ const icd: fc.Arbitrary<IcdInput> = fc.oneof(
 const testAbove = (seated: number) =>
   fc.record({
     mode: fc.constantFrom(...testModes),
-    daysAgo: fc.oneof({ weight: 3, arbitrary: fc.constant(13) }, between(0, 400)),
-    endedBy: fc.constantFrom(...testEndings),
-    sameRateActingDrugs: fc.oneof({ weight: 3, arbitrary: fc.constant(true) }, fc.boolean()),
-    sameRhythmAndDevice: fc.oneof({ weight: 3, arbitrary: fc.constant(true) }, fc.boolean()),
+    daysAgo: mostly(13, between(0, 400)),
+    endedBy: mostly<(typeof testEndings)[number]>('fatigue', fc.constantFrom(...testEndings)),
+    sameRateActingDrugs: mostly(true, fc.boolean()),
+    sameRhythmAndDevice: mostly(true, fc.boolean()),
     eventSince: seldom,
     restingHeartRate: orNull(between(30, Math.min(59, Math.floor(seated)))),
     peakHeartRate: between(Math.max(60, Math.floor(seated) + 1), 230),
@@ -100,25 +100,22 @@ const requestAbove = (seated: number): fc.Arbitrary<PrescriptionRequestInput> =>
     resting: fc.record({
       seated: fc.constant(seated),
       standing: orNull(between(30, 150)),
-      spread: orNull(between(0, 14)),
+      spread: orNull(mostly(6, between(0, 14))),
     }),
     risk: fc.constantFrom(...riskLevels),
     programWeek: fc.integer({ min: 1, max: 40 }),
-    rhythm: fc.oneof(
-      { weight: 3, arbitrary: fc.constant('sinus' as const) },
-      fc.constantFrom(...rhythms),
-    ),
+    rhythm: mostly<(typeof rhythms)[number]>('sinus', fc.constantFrom(...rhythms)),
     rateActingDrugs: orNull(fc.subarray([...rateActingDrugs])),
     conditions,
-    devices: fc.record({ icd, upperTrackingRate: orNull(between(50, 220)) }),
-    test: orNull(testAbove(seated)),
+    devices: fc.record({ icd, upperTrackingRate: mostly<number | null>(null, between(50, 220)) }),
+    test: fc.option(testAbove(seated), { nil: null, freq: 3 }),
     thresholds: fc.array(
       fc.record({
         kind: fc.constantFrom(...thresholdKinds),
-        heartRate: between(40, 230),
+        heartRate: fc.oneof({ weight: 6, arbitrary: between(110, 230) }, between(40, 230)),
         clearMets: orNull(between(1, 25)),
       }),
-      { maxLength: 3 },
+      { maxLength: 2 },
     ),
     observedWork: orNull(observedWork),
     walkTest: orNull(fc.record({ distanceMeters: between(1, 1200) })),
@@ -127,7 +124,9 @@ const requestAbove = (seated: number): fc.Arbitrary<PrescriptionRequestInput> =>
     choice: fc.constant({ method: null, maximum: null }),
   });
 
+/** Seated rates of adults at rest, the rare ones too. */
+const anySeatedRate = fc.oneof({ weight: 4, arbitrary: between(45, 95) }, between(30, 130));
+
 /** Any request that the contract takes, with the choice left to the rules. */
-export const anyPrescriptionInput: fc.Arbitrary<PrescriptionRequestInput> = between(30, 130).chain(
-  requestAbove,
-);
+export const anyPrescriptionInput: fc.Arbitrary<PrescriptionRequestInput> =
+  anySeatedRate.chain(requestAbove);

@@ -1,4 +1,4 @@
-import { bpm, roundDown } from '../../units';
+import { bpm } from '../../units';
 import type { Bpm } from '../../units';
 import { fractionOfReserve } from '../heart-rate-reserve';
 import type { Ceiling, Limit, LimitKind } from './answer';
@@ -46,7 +46,7 @@ function limitOf(kind: LimitKind, threshold: Bpm, margin: Bpm): Limit {
     kind,
     threshold,
     margin,
-    value: bpm(roundDown(threshold - margin)),
+    value: bpm(Math.floor(threshold - margin)),
     rule: `${margin} below ${below}`,
     source,
   };

@@ -11,11 +11,12 @@ import { defaultPolicy, evaluatePrescription, maximumMethods, methods } from './
 
 const noise = 1e-9;
 
-/** An input with any choice that applies to it, the rules' own included. */
-const anyChoice = fc.record({
-  method: fc.constantFrom(null, ...methods),
-  maximum: fc.constantFrom(null, null, ...maximumMethods),
-});
+/** Often the choice of the rules, else any, whether or not it applies. */
+const anyChoice = fc.oneof(
+  { weight: 3, arbitrary: fc.constant({ method: null, maximum: null }) },
+  fc.record({ method: fc.constantFrom(...methods), maximum: fc.constant(null) }),
+  fc.record({ method: fc.constant(null), maximum: fc.constantFrom(...maximumMethods) }),
+);
 
 function evaluate(input: PrescriptionRequestInput): PrescriptionAnswer | null {
   const evaluation = evaluatePrescription(prescriptionRequestSchema.parse(input), defaultPolicy);
@@ -42,6 +43,12 @@ const rangesOf = ({ target, guide, patientTarget, workloads }: PrescriptionAnswe
 ];
 
 describe('whatever the request', () => {
+  it('heart rate leads often enough for the rest to mean something', () => {
+    const answers = fc.sample(anyPrescriptionInput, { numRuns: 500, seed: 36 }).map(evaluate);
+    const led = answers.filter((answer) => answer?.leadBy === 'heart-rate');
+    expect(led.length).toBeGreaterThan(60);
+  });
+
   it('no target, guide or arm range lies above the ceiling', () => {
     always((answer) => {
       for (const range of rangesOf(answer)) {
@@ -63,9 +70,12 @@ describe('whatever the request', () => {
   });
 
   it('no work lies above the work ceiling, and no setting above its point', () => {
-    always(({ workCeilingMets, targetMets, workloads }) => {
-      if (targetMets === null) return;
-      expect(targetMets.upper).toBeLessThanOrEqual(workCeilingMets ?? Infinity);
+    always(({ workCeilingMets, targetMets, targetVo2, workloads }) => {
+      if (targetMets === null || targetVo2 === null) return;
+      const highest = workCeilingMets ?? Infinity;
+      expect(targetMets.upper).toBeLessThanOrEqual(highest);
+      expect(targetVo2.upper / 3.5).toBeLessThanOrEqual(highest + noise);
+      expect(targetMets.lower).toBeLessThanOrEqual(targetMets.upper);
       for (const { point, mets } of workloads) {
         const most = point === 'start' ? targetMets.lower : targetMets.upper;
         expect(mets ?? 0).toBeLessThanOrEqual(most + noise);

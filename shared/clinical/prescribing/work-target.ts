@@ -55,7 +55,9 @@ export function targetVo2Of(
     underRateCeiling(upperFraction(findings, decision), findings),
   );
   const upper = workCeiling === null ? reached : vo2(Math.min(reached, vo2Of(workCeiling)));
-  return toMillionths(upper - lower) < 0 ? null : { lower, upper };
+  if (toMillionths(upper - lower) < 0) return null;
+  // Where both ends meet, the noise of binary fractions must not put the lower one above.
+  return { lower: vo2(Math.min(lower, upper)), upper };
 }
 
 /** The same in METs; at most the work ceiling, to the last digit. */
@@ -66,5 +68,5 @@ export function targetMetsOf(
   if (target === null) return null;
   const upper = metsOf(target.upper);
   const most = workCeiling === null ? upper : mets(Math.min(upper, workCeiling));
-  return { lower: metsOf(target.lower), upper: most };
+  return { lower: mets(Math.min(metsOf(target.lower), most)), upper: most };
 }
