@@ -73,7 +73,12 @@ module.exports = {
       },
       to: {
         path: featuresOf('server'),
-        pathNot: ['^server/$1/', '-(queries|service|policy|events)\\.ts$'],
+        // Who calls is known to every feature.
+        pathNot: [
+          '^server/$1/',
+          '^server/accounts/actor\\.ts$',
+          '-(queries|service|policy|events)\\.ts$',
+        ],
       },
     },
   ],
