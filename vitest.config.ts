@@ -6,6 +6,8 @@ const alias = { '@shared': fileURLToPath(new URL('./shared', import.meta.url)) }
 const env = { TZ: process.env['TEST_TZ'] ?? 'UTC' };
 const globalSetup = fileURLToPath(new URL('./test/database/global-setup.ts', import.meta.url));
 
+const product = fileURLToPath(new URL('./test/e2e/product.ts', import.meta.url));
+
 /** The browser's own specs run under `ng test`; everything else runs here, a project a kind. */
 export default defineConfig({
   resolve: { alias },
@@ -34,7 +36,7 @@ export default defineConfig({
           name: 'e2e',
           include: ['test/e2e/**/*.spec.ts'],
           env,
-          globalSetup,
+          globalSetup: product,
           testTimeout: 180_000,
           hookTimeout: 180_000,
           fileParallelism: false,
