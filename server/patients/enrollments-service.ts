@@ -8,6 +8,7 @@ import type * as z from 'zod';
 import type { Actor } from '../accounts/actor';
 import type { Queryable, Transaction } from '../database/client';
 import { fail } from '../http/failure';
+import { endRangesOfCourse } from '../prescriptions/prescriptions-service';
 import { listPatientAppointments } from '../schedule/appointments-queries';
 import { fieldFailure } from './field-failure';
 import { mayRead } from './patients-policy';
@@ -69,6 +70,9 @@ export async function changeEnrollment(
   }
   if (change.closedOn) await checkClosing(tx, patientId, course.enrolledOn, change.closedOn, now);
   await updateEnrollment(tx, enrollmentId, change);
+  if (change.status && next[change.status].length === 0) {
+    await endRangesOfCourse(tx, enrollmentId, now);
+  }
   return present(tx, actor, patientId, enrollmentId);
 }
 

@@ -6,7 +6,7 @@ import type {
 } from '@shared/contracts/patients-contract';
 import { localDateAt } from '@shared/scheduling/wall-time';
 import type { RangeState } from '../prescriptions/range-in-force-queries';
-import { ageOn } from './age';
+import { ageOn } from '@shared/scheduling/age';
 import type { CourseWithSite, FoundPatient, PatientWithSite } from './patients-queries';
 
 interface Course {

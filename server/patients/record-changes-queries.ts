@@ -1,8 +1,5 @@
 import { sql, type SQL } from 'drizzle-orm';
-
-/** What takes a range out of force at once, until a new one is signed: effort leads, the ceiling stays. */
-export const withdrawalReasons = ['drugs', 'rhythm', 'device', 'threshold', 'event'] as const;
-export type WithdrawalReason = (typeof withdrawalReasons)[number];
+import type { WithdrawalReason } from '@shared/clinical/withdrawal';
 
 /** A prescription as columns of the query around: whose, made when, of which inputs (JSON). */
 interface RangeColumns {

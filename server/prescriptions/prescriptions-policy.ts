@@ -1,8 +1,3 @@
-import type {
-  PrescriptionAnswer,
-  PrescriptionPolicy,
-  PrescriptionRequest,
-} from '@shared/clinical/prescribing';
 import type { Role } from '@shared/contracts/accounts-contract';
 
 /** Who works out, writes and reads ranges. */
@@ -16,35 +11,22 @@ interface Signer {
   readonly student: boolean;
 }
 
-export const isPhysician = ({ roles }: Signer): boolean => roles.includes('physician');
+/** Whose signature is a physician's; a student's waits for a co-signature whatever their role. */
+export const signsAsPhysician = ({ roles, student }: Signer): boolean =>
+  roles.includes('physician') && !student;
 
-/** Why a range waits for a physician although staff signed it. */
-export type PhysicianCause =
-  'first-range' | 'student' | 'risk' | 'stop-caution' | 'estimated-maximum' | 'above-policy';
-
-interface Proposal {
-  readonly inputs: PrescriptionRequest;
-  readonly result: PrescriptionAnswer;
-  /** Whether a range was in force before in this course. */
-  readonly first: boolean;
-  readonly student: boolean;
+interface Signed {
+  readonly status: 'draft' | 'active' | 'completed' | 'revoked' | 'entered-in-error';
+  readonly signedBy: string | null;
 }
 
 /**
- * What a plan does not let staff sign alone, every cause that applies: the first range of a course; what a student
- * signed; high or unknown risk; a caution that says stop; an estimated maximum; an intensity above the policy's wide one.
+ * Whether someone has nothing left to sign.
+ * - in force, or superseded: everyone
+ * - signed by staff: everyone but a physician, and a physician who is that signer
  */
-export function physicianCauses(
-  { inputs, result, first, student }: Proposal,
-  policy: PrescriptionPolicy,
-): PhysicianCause[] {
-  const causes: [PhysicianCause, boolean][] = [
-    ['first-range', first],
-    ['student', student],
-    ['risk', inputs.risk === 'high' || inputs.risk === 'unknown'],
-    ['stop-caution', result.cautions.some(({ severity }) => severity === 'stop')],
-    ['estimated-maximum', result.maximum !== null && result.maximum.method !== 'measured'],
-    ['above-policy', result.intensity.upper > policy.intensity.wide.upper],
-  ];
-  return causes.filter(([, applies]) => applies).map(([cause]) => cause);
+export function hasNothingToSign(row: Signed, signer: Signer & { readonly id: string }): boolean {
+  if (row.status === 'active' || row.status === 'completed') return true;
+  if (row.signedBy === null) return false;
+  return row.signedBy === signer.id || !signsAsPhysician(signer);
 }

@@ -37,6 +37,7 @@ function selectPrescriptions(tx: Queryable) {
       supersedes: prescriptions.supersedes,
       awaiting: prescriptions.awaiting,
       createdAt: prescriptions.createdAt,
+      changedAt: prescriptions.changedAt,
       createdBy: { id: author.id, displayName: author.displayName },
       signedAt: prescriptions.signedAt,
       signedBy: { id: signer.id, displayName: signer.displayName },

@@ -1,6 +1,6 @@
-import { and, desc, eq, inArray, isNotNull, sql } from 'drizzle-orm';
+import { and, desc, eq, inArray, or, sql } from 'drizzle-orm';
 import type { PrescriptionAnswer, PrescriptionRequest } from '@shared/clinical/prescribing';
-import type { Transaction } from '../database/client';
+import type { Queryable, Transaction } from '../database/client';
 import { enrollments, prescriptions } from '../database/schema';
 
 /** What is worked out and stored together: the same inputs, policy and engine give the same answer again. */
@@ -59,8 +59,15 @@ export async function updateDraft(
     .where(eq(prescriptions.id, id));
 }
 
-/** Locks every prescription of a patient, so that two signatures queue: undefined when there is no such one. */
+/**
+ * Locks the patient, so that signatures and changes of one patient's ranges queue, then reads.
+ * @returns the prescription with the patient's others that are not over, undefined when there is no such one
+ */
 export async function lockPrescription(tx: Transaction, id: string) {
+  await tx.execute(sql`
+    SELECT FROM patients
+     WHERE id = (SELECT patient_id FROM prescriptions WHERE id = ${id}) FOR NO KEY UPDATE`);
+  // A second statement, since it sees what was committed while the first waited.
   const ofSamePatient = tx
     .select({ patientId: prescriptions.patientId })
     .from(prescriptions)
@@ -68,21 +75,46 @@ export async function lockPrescription(tx: Transaction, id: string) {
   const rows = await tx
     .select()
     .from(prescriptions)
-    .where(inArray(prescriptions.patientId, ofSamePatient))
-    .orderBy(prescriptions.id)
-    .for('no key update');
+    .where(
+      and(
+        inArray(prescriptions.patientId, ofSamePatient),
+        or(eq(prescriptions.id, id), inArray(prescriptions.status, ['active', 'draft'])),
+      ),
+    );
   const row = rows.find((each) => each.id === id);
-  return row && { row, active: rows.find(({ status }) => status === 'active') };
+  if (!row) return undefined;
+  return {
+    row,
+    active: rows.find(({ status }) => status === 'active'),
+    /** Signed and waiting for a physician, but for the prescription itself. */
+    waiting: rows.filter(({ awaiting, id: each }) => awaiting !== null && each !== id),
+  };
 }
 
-/** Whether a range was ever in force in the course. */
-export async function hadRange(tx: Transaction, enrollmentId: string): Promise<boolean> {
-  const rows = await tx
-    .select({ id: prescriptions.id })
-    .from(prescriptions)
-    .where(and(eq(prescriptions.enrollmentId, enrollmentId), isNotNull(prescriptions.activatedAt)))
-    .limit(1);
-  return rows.length > 0;
+export type Locked = NonNullable<Awaited<ReturnType<typeof lockPrescription>>>;
+
+/** The course of a prescription: whether it is open, and whether a range was ever in force in it. */
+export async function courseOf(tx: Queryable, enrollmentId: string) {
+  const [course] = await tx
+    .select({
+      open: sql<boolean>`${enrollments.status} IN ('active', 'on-hold')`,
+      hadRange: sql<boolean>`EXISTS (
+        SELECT FROM prescriptions p
+         WHERE p.enrollment_id = ${enrollments.id} AND p.activated_at IS NOT NULL)`,
+    })
+    .from(enrollments)
+    .where(eq(enrollments.id, enrollmentId));
+  if (!course) throw new Error(`Enrollment ${enrollmentId} is gone`);
+  return course;
+}
+
+/** Ends what is in force, and puts aside what is written, in a course that ends. */
+export async function endRanges(tx: Transaction, enrollmentId: string, now: Date): Promise<void> {
+  await tx.execute(sql`
+    UPDATE prescriptions
+       SET status = CASE status WHEN 'active' THEN 'completed' ELSE 'revoked' END::prescription_status,
+           awaiting = NULL, ended_at = ${now.toISOString()}::timestamptz, version = version + 1
+     WHERE enrollment_id = ${enrollmentId} AND status IN ('active', 'draft')`);
 }
 
 type Change = Partial<typeof prescriptions.$inferInsert>;

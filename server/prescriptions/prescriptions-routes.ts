@@ -18,25 +18,13 @@ import { created, ok } from '../http/answers';
 import { fail, Failure } from '../http/failure';
 import { route, type RouteDefinition } from '../http/route';
 import { prescribingRoles, signingRoles } from './prescriptions-policy';
-import { findPrescription, listPrescriptions, type PrescriptionRow } from './prescriptions-queries';
+import { presentPrescription } from './present-prescription';
+import { findPrescription, listPrescriptions } from './prescriptions-queries';
 import { changeDraft, createDraft, evaluate, revokeDraft } from './prescriptions-service';
 import { signPrescription } from './signing-service';
+import { waitingRoutes } from './waiting-routes';
 
 const idParams = z.object({ id: z.uuid() });
-
-const isoOrNull = (at: Date | null): string | null => at?.toISOString() ?? null;
-
-export const presentPrescription = ({
-  enrollmentId: _,
-  ...row
-}: PrescriptionRow): z.input<typeof prescriptionSchema> => ({
-  ...row,
-  createdAt: row.createdAt.toISOString(),
-  signedAt: isoOrNull(row.signedAt),
-  physicianSignedAt: isoOrNull(row.physicianSignedAt),
-  activatedAt: isoOrNull(row.activatedAt),
-  endedAt: isoOrNull(row.endedAt),
-});
 
 /** @throws Failure `not-found` when there is no such prescription, or the caller may not know of it */
 async function openPrescription(tx: Transaction, actor: Actor, id: string) {
@@ -48,6 +36,10 @@ async function openPrescription(tx: Transaction, actor: Actor, id: string) {
 
 const audited = (action: string) => ({
   action,
+  details: ({ result }: { result: { body: Pick<Prescription, 'status' | 'version'> } }) => ({
+    status: result.body.status,
+    version: result.body.version,
+  }),
   objectType: 'prescription',
   objectId: ({ result }: { result: { body: Pick<Prescription, 'id'> } }) => result.body.id,
   patientId: ({ result }: { result: { body: Pick<Prescription, 'patientId'> } }) =>
@@ -60,10 +52,11 @@ const evaluateRoute = route({
   summary: 'Works out a range by the policy in force; stores nothing',
   access: { roles: prescribingRoles },
   audit: 'none',
+  transaction: 'none',
   request: { body: prescriptionRequestSchema },
   response: { 200: prescriptionAnswerSchema },
-  handler: async ({ tx, input, context }) =>
-    ok(await evaluate(tx, input.body, context.clock.now())),
+  handler: async ({ input, context: { database, clock } }) =>
+    ok(await evaluate(database.$client, input.body, clock.now())),
 });
 
 const list = route({
@@ -138,6 +131,7 @@ const sign = route({
   audit: audited('prescription.signed'),
   request: { params: idParams, body: versionRequestSchema },
   response: { 200: prescriptionSchema },
+  constraints: { prescriptions_one_active: 'stale-version' },
   handler: async ({ tx, actor, input, context }) => {
     await openPrescription(tx, actor, input.params.id);
     const author = { actor, now: context.clock.now() };
@@ -170,4 +164,5 @@ export const prescriptionsRoutes: RouteDefinition[] = [
   change,
   sign,
   revoke,
+  ...waitingRoutes,
 ];

@@ -1,8 +1,9 @@
 import { sql, type SQL } from 'drizzle-orm';
 import type { RangeInForce as RangeInShort } from '@shared/contracts/patients-contract';
 import type { PrescriptionAnswer, PrescriptionRequest } from '@shared/clinical/prescribing';
+import type { WithdrawalReason } from '@shared/clinical/withdrawal';
 import type { Queryable } from '../database/client';
-import { withdrawalOf, type WithdrawalReason } from '../patients/record-changes-queries';
+import { withdrawalOf } from '../patients/record-changes-queries';
 import { standingOf, type RangeInForce } from './range-in-force';
 
 interface RangeRow extends Record<string, unknown> {

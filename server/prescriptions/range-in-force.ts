@@ -1,5 +1,5 @@
 import type { PrescriptionAnswer, PrescriptionRequest } from '@shared/clinical/prescribing';
-import type { WithdrawalReason } from '../patients/record-changes-queries';
+import type { WithdrawalReason } from '@shared/clinical/withdrawal';
 
 /** What of an answer holds while it is in force. */
 export type Standing = Pick<

@@ -14,13 +14,27 @@ import type { CautionCode } from '../clinical/prescribing';
 import type { Bpm, Meters, MetersPerMinute, Mets, MmHg, Vo2, Watts } from '../units';
 import { computed } from './quantities';
 
-const rangeOf = <Q extends number = number>() =>
+export const rangeOf = <Q extends number = number>() =>
   z.object({ lower: computed<Q>(), upper: computed<Q>() });
 
-const rates = rangeOf<Bpm>().nullable();
+export const ratesSchema = rangeOf<Bpm>().nullable();
 const maximumMethod = z.enum(maximumMethods);
 
-const limit = z.object({
+export const ceilingSchema = z
+  .object({ value: computed<Bpm>(), bindingLimits: z.array(z.enum(limitKinds)) })
+  .nullable();
+
+export const exertionSchema = z.object({
+  scale: z.literal('borg-6-20'),
+  lower: z.number(),
+  upper: z.number(),
+});
+
+export const pressureSchema = z
+  .object({ systolic: computed<MmHg>(), diastolic: computed<MmHg>() })
+  .nullable();
+
+export const limitSchema = z.object({
   kind: z.enum(limitKinds),
   threshold: computed<Bpm>(),
   margin: computed<Bpm>(),
@@ -42,7 +56,7 @@ const candidate = z.object({
 
 const cautionCodes = Object.keys(cautionSeverity) as [CautionCode, ...CautionCode[]];
 
-const caution = z.object({
+export const cautionSchema = z.object({
   code: z.enum(cautionCodes),
   severity: z.enum(severities),
   message: z.string(),
@@ -72,7 +86,7 @@ const workload = z.discriminatedUnion('modality', [
     modality: z.literal('arm'),
     ...workloadRow,
     powerWatts: computed<Watts>().nullable(),
-    target: rates,
+    target: ratesSchema,
   }),
   z.object({
     modality: z.literal('step'),
@@ -94,32 +108,26 @@ export const prescriptionAnswerSchema: z.ZodType<PrescriptionAnswer> = z.object(
       standardError: computed<Bpm>().nullable(),
     })
     .nullable(),
-  target: rates,
-  guide: rates,
-  ceiling: z
-    .object({ value: computed<Bpm>(), bindingLimits: z.array(z.enum(limitKinds)) })
-    .nullable(),
+  target: ratesSchema,
+  guide: ratesSchema,
+  ceiling: ceilingSchema,
   outerLimit: computed<Bpm>().nullable(),
   askLine: computed<Bpm>().nullable(),
-  limits: z.array(limit),
+  limits: z.array(limitSchema),
   intensity: rangeOf(),
   intensityAtCeiling: z.number().nullable(),
-  perceivedExertion: z.object({
-    scale: z.literal('borg-6-20'),
-    lower: z.number(),
-    upper: z.number(),
-  }),
-  patientTarget: rates,
+  perceivedExertion: exertionSchema,
+  patientTarget: ratesSchema,
   tenSecondCount: rangeOf().nullable(),
   workCeilingMets: computed<Mets>().nullable(),
   targetVo2: rangeOf<Vo2>().nullable(),
   targetMets: rangeOf<Mets>().nullable(),
   workloads: z.array(workload),
-  pressureCeiling: z.object({ systolic: computed<MmHg>(), diastolic: computed<MmHg>() }).nullable(),
+  pressureCeiling: pressureSchema,
   oxygenFloor: z.number().nullable(),
   candidates: z.array(candidate),
   reasons: z.array(z.enum(reasonCodes)),
-  cautions: z.array(caution),
+  cautions: z.array(cautionSchema),
   policyVersion: z.int(),
   engineVersion: z.string(),
 });

@@ -28,6 +28,8 @@ export const prescriptionSchema = z.object({
   engineVersion: z.string(),
   createdAt: instant,
   createdBy: signatory,
+  /** When the inputs were last changed, null while they are as first written. */
+  changedAt: instant.nullable(),
   signedAt: instant.nullable(),
   signedBy: signatory.nullable(),
   /** Who must still sign before the range enters into force. */

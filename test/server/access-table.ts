@@ -151,6 +151,18 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
     record: ({ prescriptionId }) => ({ id: prescriptionId, body: { version: 1 } }),
   },
 
+  'GET /api/patients/:id/worksheet': {
+    who: prescribing,
+    record: ({ patientId }) => ({ id: patientId }),
+  },
+  'GET /api/prescriptions/awaiting-signature': {
+    who: ['physician'],
+    strangers: 200,
+    record: () => ({}),
+  },
+  'GET /api/prescriptions/tasks': { who: prescribing, strangers: 200, record: () => ({}) },
+  'GET /api/my/range': { who: ['patient'], none: 'one’s own range alone' },
+
   'GET /api/reports/completion': {
     who: measures,
     strangers: 200,

@@ -9,7 +9,7 @@ import {
   type RecordKind,
 } from '@shared/contracts/record-contract';
 import { conditionKinds } from '@shared/contracts/record-lists';
-import { ageOn } from '../age';
+import { ageOn } from '@shared/scheduling/age';
 import { deriveInputs } from './derive-inputs';
 import type { ExerciseReading, RecordFacts } from './record-facts';
 

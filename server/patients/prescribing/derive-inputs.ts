@@ -5,7 +5,7 @@ import type {
 } from '@shared/contracts/prescribing-inputs-contract';
 import type { RateActingDrug } from '@shared/clinical/prescribing';
 import { daysBetween } from '@shared/scheduling/wall-time';
-import { ageOn } from '../age';
+import { ageOn } from '@shared/scheduling/age';
 import { latestChanges } from './derive-changes';
 import { conditionsOf } from './derive-conditions';
 import { observedWorkOf, restingOf } from './derive-rates';

@@ -1,0 +1,103 @@
+import { sql, type SQL } from 'drizzle-orm';
+import type { PrescriptionAnswer, PrescriptionRequest } from '@shared/clinical/prescribing';
+import type { WithdrawalReason } from '@shared/clinical/withdrawal';
+import type { TaskKind } from '@shared/contracts/prescriptions-waiting-contract';
+import type { Queryable } from '../database/client';
+import { patientColumns, type PatientColumns } from './patient-columns';
+import { withdrawalOfPrescription } from './range-in-force-queries';
+
+/** A list of this length is a morning's work; more are counted, and shown as the first are done. */
+const awaitingShown = 50;
+const tasksShown = 100;
+
+export interface AwaitingRow extends PatientColumns {
+  readonly id: string;
+  readonly version: number;
+  readonly inputs: PrescriptionRequest;
+  readonly result: PrescriptionAnswer;
+  readonly outdated: WithdrawalReason[];
+  readonly signedAt: Date | string;
+  readonly signedBy: { readonly id: string; readonly displayName: string };
+  readonly byStudent: boolean;
+  readonly first: boolean;
+  readonly total: number;
+}
+
+const uuids = (ids: readonly string[]): SQL => sql`${sql.param([...ids])}::uuid[]`;
+
+/** The ranges of these sites' patients that wait for a physician, the longest waiting first, in one statement. */
+export async function awaitingPhysician(
+  db: Queryable,
+  siteIds: readonly string[],
+): Promise<AwaitingRow[]> {
+  const { rows } = await db.execute<AwaitingRow>(sql`
+    SELECT p.id, p.version, p.inputs, p.result, ${withdrawalOfPrescription} AS outdated, p.signed_at AS "signedAt",
+           json_build_object('id', u.id, 'displayName', u.display_name) AS "signedBy", u.student AS "byStudent",
+           NOT EXISTS (SELECT FROM prescriptions f
+             WHERE f.enrollment_id = p.enrollment_id AND f.activated_at IS NOT NULL) AS first,
+           (count(*) OVER ())::int AS total, ${patientColumns}
+      FROM prescriptions p
+      JOIN patients pt ON pt.id = p.patient_id
+      JOIN sites s ON s.id = pt.site_id
+      JOIN enrollments e ON e.id = p.enrollment_id
+      JOIN users u ON u.id = p.signed_by
+     WHERE p.awaiting IS NOT NULL AND pt.site_id = ANY(${uuids(siteIds)})
+     ORDER BY p.signed_at, p.id
+     LIMIT ${awaitingShown}`);
+  return rows;
+}
+
+export interface TaskRow extends PatientColumns {
+  readonly kind: TaskKind;
+  readonly prescriptionId: string | null;
+  readonly since: Date | string | null;
+  readonly by: string | null;
+  readonly withdrawn: WithdrawalReason[];
+  readonly total: number;
+}
+
+/** What the range in force of an active course asks for, or that there is none, nor one under way; null: nothing. */
+const rangeTasks = (siteIds: readonly string[], now: Date): SQL => sql`
+  SELECT CASE WHEN p.id IS NULL AND NOT EXISTS (
+                SELECT FROM prescriptions d WHERE d.enrollment_id = e.id AND d.status = 'draft') THEN 'without-range'
+              WHEN cardinality(w.reasons) > 0 THEN 'withdrawn'
+              WHEN p.activated_at + make_interval(days => (
+                SELECT (content ->> 'reviewDueDays')::int FROM policies ORDER BY version DESC LIMIT 1
+              )) < ${now.toISOString()}::timestamptz THEN 'review-due' END AS kind,
+         e.id AS enrollment_id, p.id AS prescription_id, p.activated_at AS since, p.signed_by AS by_id,
+         coalesce(w.reasons, '{}') AS withdrawn
+    FROM enrollments e
+    JOIN patients pt ON pt.id = e.patient_id AND pt.site_id = ANY(${uuids(siteIds)})
+    LEFT JOIN prescriptions p ON p.patient_id = e.patient_id AND p.status = 'active'
+    LEFT JOIN LATERAL (SELECT ${withdrawalOfPrescription} AS reasons) w ON p.id IS NOT NULL
+   WHERE e.status = 'active'`;
+
+const draftTasks = (siteIds: readonly string[]): SQL => sql`
+  SELECT CASE WHEN p.awaiting IS NULL THEN 'unsigned' ELSE 'awaiting-physician' END AS kind,
+         p.enrollment_id, p.id AS prescription_id, coalesce(p.signed_at, p.changed_at, p.created_at) AS since,
+         coalesce(p.signed_by, p.created_by) AS by_id, '{}'::text[] AS withdrawn
+    FROM prescriptions p
+    JOIN patients pt ON pt.id = p.patient_id AND pt.site_id = ANY(${uuids(siteIds)})
+   WHERE p.status = 'draft'`;
+
+/** What to see to for these sites' patients: by kind, the longest waiting first, in one statement. */
+export async function prescribingTasks(
+  db: Queryable,
+  siteIds: readonly string[],
+  now: Date,
+): Promise<TaskRow[]> {
+  const { rows } = await db.execute<TaskRow>(sql`
+    SELECT * FROM (
+      SELECT t.kind, t.prescription_id AS "prescriptionId", t.since, u.display_name AS by, t.withdrawn,
+             (count(*) OVER (PARTITION BY t.kind))::int AS total,
+             row_number() OVER (PARTITION BY t.kind ORDER BY t.since, pt.family_name, pt.given_name, pt.id) AS place,
+             ${patientColumns}
+        FROM (${rangeTasks(siteIds, now)} UNION ALL ${draftTasks(siteIds)}) t
+        JOIN enrollments e ON e.id = t.enrollment_id
+        JOIN patients pt ON pt.id = e.patient_id
+        JOIN sites s ON s.id = pt.site_id
+        LEFT JOIN users u ON u.id = t.by_id
+       WHERE t.kind IS NOT NULL) tasks
+     WHERE place <= ${tasksShown} ORDER BY kind, place`);
+  return rows;
+}

@@ -1,0 +1,27 @@
+import * as z from 'zod';
+
+const beats = z.object({ lower: z.number(), upper: z.number() });
+
+/** What a patient is told of the own range; rates in beats a minute, effort on the Borg 6–20 scale. */
+const toldSchema = z.object({
+  /** `review`: something has changed, so effort leads until the team has set a new range. */
+  state: z.enum(['in-force', 'review']),
+  /** Null where effort leads. */
+  target: beats.nullable(),
+  tenSecondCount: beats.nullable(),
+  stayUnder: z.number().nullable(),
+  resting: z.number(),
+  effort: beats,
+  /** Whether a shock from a device is a sign to stop. */
+  hasDefibrillator: z.boolean(),
+  setOn: z.iso.datetime({ offset: true }),
+  setBy: z.string(),
+});
+
+/** `GET /api/my/range` */
+export const myRangeSchema = z.object({
+  site: z.object({ name: z.string(), phone: z.string(), timeZone: z.string() }),
+  /** Null while none is in force. */
+  range: toldSchema.nullable(),
+});
+export type MyRange = z.infer<typeof myRangeSchema>;
