@@ -49,7 +49,7 @@ export async function applyRanges(
   );
 }
 
-interface StandingRange {
+interface SignedRange {
   readonly id: string;
   readonly patientId: string;
   readonly from: Date;
@@ -61,8 +61,8 @@ interface StandingRange {
 export async function standingRanges(
   connection: PoolClient,
   patientIds: readonly string[],
-): Promise<StandingRange[]> {
-  const { rows } = await connection.query<StandingRange>(
+): Promise<SignedRange[]> {
+  const { rows } = await connection.query<SignedRange>(
     `SELECT id, patient_id AS "patientId", activated_at AS "from", ended_at AS "to", result AS answer
        FROM prescriptions WHERE patient_id = ANY($1) AND activated_at IS NOT NULL`,
     [patientIds],
@@ -76,13 +76,14 @@ interface Session {
 }
 
 /** Reads a session against the range that was really in force, which may be one that a person signed. */
-export function againstStanding(session: Session, ranges: readonly StandingRange[]): Session {
+export function againstStanding(session: Session, ranges: readonly SignedRange[]): Session {
   const { patientId, startedAt } = session.record;
   const range = ranges.find(
     ({ patientId: whose, from, to }) =>
       whose === patientId && from <= startedAt && (to === null || to > startedAt),
   );
   const prescriptionId = range?.id ?? null;
+  if (prescriptionId === session.record.prescriptionId) return session;
   return {
     record: { ...session.record, prescriptionId },
     readings: session.readings.map((reading) => ({

@@ -17,6 +17,7 @@ export interface IssuedRange {
   /** Null: within the limits of the plan, a physiologist's signature was enough. */
   readonly physicianSignedAt: Date | null;
   readonly activeFrom: Date;
+  /** The range in force when it is signed. */
   readonly supersedes: string | null;
 }
 
@@ -51,9 +52,37 @@ export function issueRange(
   };
 }
 
-/** The range in force at an instant. */
-export function rangeAt(ranges: readonly IssuedRange[], at: Date): IssuedRange | null {
-  return ranges.filter(({ activeFrom }) => activeFrom <= at).at(-1) ?? null;
+/** A range as a session is held by it. */
+export interface StandingRange {
+  readonly id: string;
+  readonly answer: PrescriptionAnswer;
+}
+
+/** After a change at the chart effort leads, no higher than usual, and the ceiling stays. */
+function withdrawn(answer: PrescriptionAnswer): PrescriptionAnswer {
+  const { scale, lower, upper } = answer.perceivedExertion;
+  return {
+    ...answer,
+    leadBy: 'perceived-exertion',
+    target: null,
+    guide: null,
+    perceivedExertion: { scale, lower: Math.min(lower, 11), upper: Math.min(upper, 13) },
+  };
+}
+
+/**
+ * The range in force at an instant.
+ * @param withdrawnAt when it was last withdrawn, until another is in force
+ */
+export function rangeAt(
+  ranges: readonly IssuedRange[],
+  at: Date,
+  withdrawnAt: Date | null,
+): StandingRange | null {
+  const range = ranges.filter(({ activeFrom }) => activeFrom <= at).at(-1);
+  if (!range) return null;
+  const holds = !withdrawnAt || withdrawnAt > at || range.activeFrom > withdrawnAt;
+  return { id: range.id, answer: holds ? range.answer : withdrawn(range.answer) };
 }
 
 type PrescriptionRow = RowOf<'prescriptions'>;
@@ -111,7 +140,7 @@ export function prescriptionRows(
         result: range.answer,
         policyVersion: range.answer.policyVersion,
         engineVersion: range.answer.engineVersion,
-        supersedes: range.supersedes,
+        supersedes: life.signedAt && range.supersedes,
         createdAt: range.createdAt,
         createdBy: owner.physiologist,
         signedBy: life.signedAt ? owner.physiologist : null,

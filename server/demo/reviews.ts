@@ -38,7 +38,8 @@ export function writeRange(telling: Telling, day: Day, createdAt: Date, withPhys
   const work = observedWorkOn(readings, day, changedOn);
   const inputs = inputsOn(chart, day, { attended, firstSession, work });
   const key = `${telling.person.key} ${day}`;
-  const supersedes = ranges.at(-1)?.id ?? null;
+  const isFirst = ranges.length === telling.rangesBefore;
+  const supersedes = isFirst ? null : (ranges.at(-1)?.id ?? null);
   ranges.push(
     issueRange(key, inputs, signingOf(telling, day, createdAt, withPhysician), supersedes),
   );
@@ -58,7 +59,7 @@ function review(telling: Telling, on: Day, withPhysician: boolean): void {
   writeRange(telling, on, at, withPhysician);
 }
 
-/** The dose goes up, or a second test is done; the range follows days later, and meanwhile is withdrawn. */
+/** The dose goes up, which withdraws the range until the next, or a second test is done. */
 function turn(telling: Telling, on: Day, at: Date): void {
   const kind = telling.person.fate.turn?.kind;
   telling.turnDone = true;
@@ -68,6 +69,7 @@ function turn(telling: Telling, on: Day, at: Date): void {
   if (kind === 'dose raised') {
     writeDoseRaised(telling.rows, scribe, on);
     telling.changedOn = on;
+    telling.withdrawnAt = at;
     telling.nextRange = { on: on + 3, withPhysician: true };
   } else {
     writeTest(telling.rows, scribe, telling.chart, on);

@@ -119,6 +119,17 @@ describe('the courses', () => {
     expect(distinct(states)).toEqual(['active ', 'completed ', 'draft ', 'draft physician']);
   });
 
+  it('have a range that waits for the physician name the one in force, so that it can be signed', () => {
+    const active = new Map(
+      story.prescriptions
+        .filter(({ status }) => status === 'active')
+        .map(({ patientId, id }) => [patientId, id]),
+    );
+    for (const { patientId, awaiting, supersedes } of story.prescriptions) {
+      if (awaiting) expect(supersedes).toBe(active.get(patientId) ?? null);
+    }
+  });
+
   const rosters = (rows: PeopleRows) => {
     const places = new Map<string, { all: number; monitored: number }>();
     for (const { templateId: template, localDate, status, monitored } of rows.appointments) {

@@ -31,6 +31,8 @@ export interface Telling {
   lastSession: Day | null;
   /** Only what was seen in class after it counts as seen on today's drugs. */
   changedOn: Day;
+  /** When the record last changed so that the range in force no longer rests on it. */
+  withdrawnAt: Date | null;
   /** When the next range is to be written. */
   nextRange: { readonly on: Day; readonly withPhysician: boolean } | null;
   turnDone: boolean;
@@ -53,6 +55,7 @@ export function beginTelling(person: Person, clock: Clock): Telling {
     firstSession: null,
     lastSession: null,
     changedOn: person.eventOn + 1,
+    withdrawnAt: null,
     nextRange: null,
     turnDone: person.fate.turn === null,
   };

@@ -6,7 +6,7 @@ import { isoOf, minutesLater } from './days';
 import { dice, idAt } from './dice';
 import { writeMoney } from './money-rows';
 import { templateId } from './program';
-import type { IssuedRange } from './ranges';
+import type { StandingRange } from './ranges';
 import type { RowOf } from './row-of';
 import type { PeopleRows } from './rows';
 import { vitalRows } from './vitals';
@@ -79,7 +79,7 @@ export function writeSession(
   visit: Visit,
   visitor: Visitor,
   chart: Chart,
-  range: IssuedRange | null,
+  range: StandingRange | null,
   anginaAt: number | null,
 ): RowOf<'vitalSigns'>[] {
   const startedAt = minutesLater(visit.startsAt, 1);
