@@ -109,13 +109,13 @@ function noteAngina(telling: Telling, visit: Visit): void {
   writeAnginaInClass(telling.rows, scribeAt(telling, at), telling.chart, visit.day);
   telling.chart = turned(telling.chart, 'angina in class', visit.day);
   telling.turnDone = true;
-  telling.withdrawnAt = at;
+  telling.withdrawal = { at, reason: 'threshold' };
   telling.nextRange = { on: visit.day + 1, withPhysician: true };
 }
 
 function attend(telling: Telling, course: Course, visit: Visit, visitor: Visitor): void {
   const angina = anginaDue(telling, course, visit);
-  const range = rangeAt(telling.ranges, visit.startsAt, telling.withdrawnAt);
+  const range = rangeAt(telling.ranges, visit.startsAt, telling.withdrawal);
   const anginaAt = angina ? anginaInClass(telling.chart).heartRate : null;
   const readings = writeSession(telling.rows, visit, visitor, telling.chart, range, anginaAt);
   if (visit.state !== 'attended') return;

@@ -56,6 +56,14 @@ export function issueRange(
 export interface StandingRange {
   readonly id: string;
   readonly answer: PrescriptionAnswer;
+  /** Why it leads no more; [] while it holds. */
+  readonly withdrawn: readonly Withdrawal['reason'][];
+}
+
+/** What was charted that the range in force did not rest on. */
+export interface Withdrawal {
+  readonly at: Date;
+  readonly reason: 'drugs' | 'threshold';
 }
 
 /** After a change at the chart effort leads, no higher than usual, and the ceiling stays. */
@@ -72,17 +80,20 @@ function withdrawn(answer: PrescriptionAnswer): PrescriptionAnswer {
 
 /**
  * The range in force at an instant.
- * @param withdrawnAt when it was last withdrawn, until another is in force
+ * @param withdrawal the last one, which holds until another range is in force
  */
 export function rangeAt(
   ranges: readonly IssuedRange[],
   at: Date,
-  withdrawnAt: Date | null,
+  withdrawal: Withdrawal | null,
 ): StandingRange | null {
   const range = ranges.filter(({ activeFrom }) => activeFrom <= at).at(-1);
   if (!range) return null;
-  const holds = !withdrawnAt || withdrawnAt > at || range.activeFrom > withdrawnAt;
-  return { id: range.id, answer: holds ? range.answer : withdrawn(range.answer) };
+  const { id, answer, activeFrom } = range;
+  const isWithdrawn = withdrawal && withdrawal.at <= at && activeFrom <= withdrawal.at;
+  return isWithdrawn
+    ? { id, answer: withdrawn(answer), withdrawn: [withdrawal.reason] }
+    : { id, answer, withdrawn: [] };
 }
 
 type PrescriptionRow = RowOf<'prescriptions'>;

@@ -69,7 +69,7 @@ function turn(telling: Telling, on: Day, at: Date): void {
   if (kind === 'dose raised') {
     writeDoseRaised(telling.rows, scribe, on);
     telling.changedOn = on;
-    telling.withdrawnAt = at;
+    telling.withdrawal = { at, reason: 'drugs' };
     telling.nextRange = { on: on + 3, withPhysician: true };
   } else {
     writeTest(telling.rows, scribe, telling.chart, on);

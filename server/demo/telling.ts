@@ -8,7 +8,7 @@ import type { Day } from './days';
 import { idAt } from './dice';
 import type { EffortReading } from './observed-work';
 import type { Person } from './people';
-import type { IssuedRange } from './ranges';
+import type { IssuedRange, Withdrawal } from './ranges';
 import type { Scribe } from './record-entries';
 import { noRows } from './rows';
 import type { PeopleRows } from './rows';
@@ -32,7 +32,7 @@ export interface Telling {
   /** Only what was seen in class after it counts as seen on today's drugs. */
   changedOn: Day;
   /** When the record last changed so that the range in force no longer rests on it. */
-  withdrawnAt: Date | null;
+  withdrawal: Withdrawal | null;
   /** When the next range is to be written. */
   nextRange: { readonly on: Day; readonly withPhysician: boolean } | null;
   turnDone: boolean;
@@ -55,7 +55,7 @@ export function beginTelling(person: Person, clock: Clock): Telling {
     firstSession: null,
     lastSession: null,
     changedOn: person.eventOn + 1,
-    withdrawnAt: null,
+    withdrawal: null,
     nextRange: null,
     turnDone: person.fate.turn === null,
   };

@@ -91,6 +91,8 @@ export function writeSession(
     patientId: visitor.patientId,
     startedAt,
     prescriptionId: range?.id ?? null,
+    rangeWithdrawn: [...(range?.withdrawn ?? [])],
+    identityConfirmedWith: ['name', 'birth-date'],
     receivedAt: minutesLater(startedAt, 0.1),
     recordedBy: nurse,
     signedAt: minutesLater(visit.endsAt, 4 + (visit.day % 30)),

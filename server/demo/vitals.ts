@@ -35,6 +35,8 @@ export interface SessionFacts {
   readonly anginaAt: number | null;
 }
 
+/** Asked, and had none. */
+const noSymptoms = ['none'];
 const whole = Math.round;
 const clamp = (value: number, low: number, high: number) => Math.max(low, Math.min(high, value));
 
@@ -74,11 +76,12 @@ function effort(answer: PrescriptionAnswer | null, bout: number, draw: Dice): nu
 
 function symptomsOf({ facts, person }: Chart, draw: Dice): string[] {
   if (facts.conditions.peripheralArteryDisease && draw.chance(0.3)) return ['leg-pain'];
-  if (facts.conditions.heartFailure === 'reduced' && draw.chance(0.06)) return ['breathlessness'];
+  if (facts.conditions.heartFailure === 'reduced' && draw.chance(0.06))
+    return ['shortness-of-breath'];
   if (person.situation.diagnosis === 'stable-angina' && draw.chance(0.03))
     return ['chest-discomfort'];
-  if (draw.chance(0.012)) return [draw.pick(['dizziness', 'palpitations', 'fatigue'])];
-  return [];
+  if (draw.chance(0.012)) return [draw.pick(['dizziness', 'palpitations', 'unusual-fatigue'])];
+  return noSymptoms;
 }
 
 /** A person's own pressure and saturation, from which every session differs a little. */
@@ -122,7 +125,7 @@ function atRest(facts: SessionFacts, seated: number, progress: number, draw: Dic
     ...pressure(facts, 0, progress, draw),
     oxygenSaturation: oxygen(facts, 0, draw),
     perceivedExertion: null,
-    symptoms: [],
+    symptoms: noSymptoms,
     note: byDoppler(facts, draw),
   };
 }
