@@ -22,8 +22,11 @@ export async function createFirstAdministrator(
   { token, password, email, displayName }: FirstAdministratorRequest,
 ): Promise<string> {
   await tx.connection.query('SELECT pg_advisory_xact_lock($1)', [FIRST_ADMINISTRATOR_LOCK]);
+  if ((await countUsers(tx)) > 0) {
+    const title = 'Someone has an account already. Ask an administrator to invite you.';
+    throw fail('link-expired', { title });
+  }
   await consumeToken(tx, token, ['first-administrator'], clock.now());
-  if ((await countUsers(tx)) > 0) throw fail('link-expired');
   const about = [email, displayName];
   const passwordHash = await hashNew(tx, hasher, {
     field: 'password',

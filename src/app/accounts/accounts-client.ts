@@ -1,6 +1,7 @@
 import { HttpClient } from '@angular/common/http';
 import { Injectable, inject } from '@angular/core';
 import type {
+  FirstAdministratorRequest,
   ForgottenPasswordRequest,
   SetPasswordRequest,
 } from '@shared/contracts/accounts-contract';
@@ -17,5 +18,9 @@ export class AccountsClient {
 
   setPassword(request: SetPasswordRequest): Observable<unknown> {
     return this.#http.post('/api/auth/password', request);
+  }
+
+  makeFirstAdministrator(request: FirstAdministratorRequest): Observable<unknown> {
+    return this.#http.post('/api/auth/first-administrator', request);
   }
 }

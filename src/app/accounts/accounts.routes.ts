@@ -20,4 +20,10 @@ export const accountsRoutes: Routes = [
     loadComponent: async () =>
       (await import('./set-password-page/set-password-page')).SetPasswordPage,
   },
+  {
+    path: 'first-administrator',
+    title: 'First administrator',
+    loadComponent: async () =>
+      (await import('./first-administrator-page/first-administrator-page')).FirstAdministratorPage,
+  },
 ];
