@@ -3,6 +3,9 @@ import { accountsRoutes } from './accounts/accounts-routes';
 import { usersRoutes } from './accounts/users-routes';
 import type { AppContext } from './app-context';
 import { auditJobs } from './audit/audit-jobs';
+import { billingJobs } from './billing/billing-jobs';
+import { billingRoutes } from './billing/billing-routes';
+import { chargeForPlaces } from './billing/charge-listener';
 import type { RouteDefinition } from './http/route';
 import { serviceRoutes } from './http/service-routes';
 import type { JobDefinition } from './jobs/job';
@@ -28,6 +31,7 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...prescriptionsRoutes,
     ...scheduleRoutes(appointmentListeners),
     ...patientsRoutes,
+    ...billingRoutes,
     ...reportsRoutes,
   ];
   return routes;
@@ -37,5 +41,6 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
 export const featureJobs: readonly JobDefinition[] = [
   ...accountsJobs,
   ...auditJobs,
+  ...billingJobs,
   ...scheduleJobs,
 ];

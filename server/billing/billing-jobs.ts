@@ -1,0 +1,58 @@
+import { and, eq, inArray, lt } from 'drizzle-orm';
+import * as z from 'zod';
+import type { AppContext } from '../app-context';
+import { payments } from '../database/schema';
+import { inTransaction } from '../database/transaction';
+import { job, type JobDefinition } from '../jobs/job';
+import type { PaymentRow } from './charges-repository';
+import { note, sessionOf } from './checkout-service';
+import { sendRefund } from './refunds-service';
+import { expire } from './settling-service';
+
+/** Long enough for a payer's own return and the service's event to come first. */
+const UNDECIDED_MS = 5 * 60_000;
+
+const undecided = (now: Date) =>
+  and(
+    inArray(payments.status, ['preparing', 'pending']),
+    lt(payments.createdAt, new Date(now.getTime() - UNDECIDED_MS)),
+  );
+
+async function reconcileOne(context: AppContext, attempt: PaymentRow): Promise<void> {
+  if (!context.payments) return;
+  const session = await sessionOf(context.payments, context.settings.origin, attempt);
+  if (session.outcome === 'session') return note(context, attempt.id, session);
+  context.log.warn({ attemptId: attempt.id, outcome: session.outcome }, 'attempt undecided');
+}
+
+/** Asks the service about attempts that nobody told the end of, so that a lost event loses no payment. */
+const reconcilePayments = job({
+  name: 'reconcile-payments',
+  payload: z.object({}),
+  schedule: '*/10 * * * *',
+  atStart: true,
+  run: async (_, context) => {
+    const now = context.clock.now();
+    const rows = await context.database.select().from(payments).where(undecided(now)).limit(200);
+    for (const attempt of rows) await reconcileOne(context, attempt);
+  },
+});
+
+/** Closes the pay page of a charge that was taken back. */
+const closeAttempt = job({
+  name: 'close-attempt',
+  payload: z.object({ paymentId: z.uuid() }),
+  run: async ({ paymentId }, context) => {
+    const { database, payments: service } = context;
+    const [row] = await database.select().from(payments).where(eq(payments.id, paymentId));
+    if (!row || !['preparing', 'pending'].includes(row.status)) return;
+    if (row.serviceSessionId !== null && service) {
+      const session = await service.expireSession(row.serviceSessionId);
+      if (session.outcome === 'unavailable') throw new Error('The payment service did not answer');
+      if (session.outcome === 'session') return note(context, row.id, session);
+    }
+    await inTransaction(database, (tx) => expire(tx, row.id));
+  },
+});
+
+export const billingJobs: readonly JobDefinition[] = [reconcilePayments, closeAttempt, sendRefund];

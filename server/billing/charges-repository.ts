@@ -1,0 +1,111 @@
+import { and, eq, inArray, ne, sql } from 'drizzle-orm';
+import type { Transaction } from '../database/client';
+import { charges, payments, refunds } from '../database/schema';
+
+export type ChargeRow = typeof charges.$inferSelect;
+export type PaymentRow = typeof payments.$inferSelect;
+
+/** Every change of a charge, its attempts and its refunds starts with this lock. */
+export async function lockCharge(tx: Transaction, id: string): Promise<ChargeRow | undefined> {
+  const [row] = await tx.select().from(charges).where(eq(charges.id, id)).for('no key update');
+  return row;
+}
+
+/** The charge of an appointment that is not void, locked. */
+export async function lockChargeOf(
+  tx: Transaction,
+  appointmentId: string,
+): Promise<ChargeRow | undefined> {
+  const [row] = await tx
+    .select()
+    .from(charges)
+    .where(and(eq(charges.appointmentId, appointmentId), ne(charges.status, 'void')))
+    .for('no key update');
+  return row;
+}
+
+export async function insertCharge(
+  tx: Transaction,
+  charge: typeof charges.$inferInsert,
+): Promise<ChargeRow> {
+  const [row] = await tx.insert(charges).values(charge).returning();
+  if (!row) throw new Error('The charge was not inserted');
+  return row;
+}
+
+export async function setChargeStatus(
+  tx: Transaction,
+  id: string,
+  status: ChargeRow['status'],
+): Promise<void> {
+  await tx
+    .update(charges)
+    .set({ status, version: sql`${charges.version} + 1` })
+    .where(eq(charges.id, id));
+}
+
+/** The one attempt to pay a charge that is not decided yet. */
+export async function liveAttempt(
+  tx: Transaction,
+  chargeId: string,
+): Promise<PaymentRow | undefined> {
+  const [row] = await tx
+    .select()
+    .from(payments)
+    .where(
+      and(eq(payments.chargeId, chargeId), inArray(payments.status, ['preparing', 'pending'])),
+    );
+  return row;
+}
+
+export async function settledPayment(
+  tx: Transaction,
+  chargeId: string,
+): Promise<PaymentRow | undefined> {
+  const [row] = await tx
+    .select()
+    .from(payments)
+    .where(and(eq(payments.chargeId, chargeId), eq(payments.status, 'settled')));
+  return row;
+}
+
+/** @returns undefined for an id that is none of ours */
+export async function findPayment(tx: Transaction, id: string): Promise<PaymentRow | undefined> {
+  const [row] = await tx.select().from(payments).where(eq(payments.id, id));
+  return row;
+}
+
+export async function insertAttempt(
+  tx: Transaction,
+  charge: ChargeRow,
+  createdBy: string,
+): Promise<PaymentRow> {
+  const { id: chargeId, amountMinor, currency } = charge;
+  const [row] = await tx
+    .insert(payments)
+    .values({ chargeId, amountMinor, currency, createdBy })
+    .returning();
+  if (!row) throw new Error('The attempt was not inserted');
+  return row;
+}
+
+export async function updatePayment(
+  tx: Transaction,
+  id: string,
+  change: Partial<typeof payments.$inferInsert>,
+): Promise<void> {
+  await tx.update(payments).set(change).where(eq(payments.id, id));
+}
+
+/** @returns the refund's id; undefined when this payment is given back already */
+export async function insertRefund(
+  tx: Transaction,
+  refund: typeof refunds.$inferInsert,
+): Promise<string | undefined> {
+  const [row] = await tx
+    .insert(refunds)
+    .values(refund)
+    .onConflictDoNothing({ target: refunds.paymentId })
+    .returning({ id: refunds.id });
+  return row?.id;
+}
