@@ -19,7 +19,10 @@ import { patientsRoutes } from './patients/patients-routes';
 import { sitesRoutes } from './settings/sites-routes';
 
 /** Who acts when a place is taken or given back, inside that transaction and in this order. */
-const appointmentListeners: readonly AppointmentListener[] = [messageOfAppointments];
+const appointmentListeners: readonly AppointmentListener[] = [
+  messageOfAppointments,
+  chargeForPlaces,
+];
 
 /** Every endpoint of the product: a feature adds its own here. */
 export function featureRoutes(context: AppContext): RouteDefinition[] {

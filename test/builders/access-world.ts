@@ -3,6 +3,7 @@ import { appointments } from '../../server/database/schema';
 import { agentFor, visitor, type Agent } from './agent';
 import { buildPatientWithAccount, buildSite, buildUser } from './people';
 import { workedExample } from './prescription-request';
+import { buildCharge } from './money';
 import { buildClassDate, buildEnrollment } from './schedule';
 import type { TestApp } from './test-app';
 
@@ -15,6 +16,7 @@ export interface PatientRecord {
   readonly classDateId: string;
   readonly classTemplateId: string;
   readonly appointmentId: string;
+  readonly chargeId: string;
 }
 
 type Site = Awaited<ReturnType<typeof buildSite>>;
@@ -64,6 +66,7 @@ async function buildRecord(house: TestApp, site: Site, clinician: Agent): Promis
       monitored: true,
     })
     .returning();
+  const charge = await buildCharge(database, { patientId: patient.id });
   const drafted = await clinician
     .post(`/api/patients/${patient.id}/prescriptions`)
     .send({ inputs: workedExample })
@@ -76,6 +79,7 @@ async function buildRecord(house: TestApp, site: Site, clinician: Agent): Promis
     classDateId: classDate.id,
     classTemplateId: classDate.templateId,
     appointmentId: appointment?.id ?? '',
+    chargeId: charge.id,
   };
 }
 

@@ -6,6 +6,7 @@ import { featureRoutes } from '../../server/features';
 import type { RouteDefinition } from '../../server/http/route';
 import { buildAccessWorld, type AccessWorld, type PatientRecord } from '../builders/access-world';
 import type { Agent } from '../builders/agent';
+import { openPaymentDesk, type PaymentDesk } from '../builders/payment-desk';
 import { createTestApp, type TestApp } from '../builders/test-app';
 import { accessTable, type AccessRow } from './access-table';
 
@@ -26,22 +27,28 @@ const unknown: Omit<PatientRecord, 'agent'> = {
   classDateId: randomUUID(),
   classTemplateId: randomUUID(),
   appointmentId: randomUUID(),
+  chargeId: randomUUID(),
 };
 
 /** Done, or refused for a reason of the matter itself. */
 const isAnAnswer = (status: number): boolean => status < 300 || status === 409;
 
 describe('who may call what', () => {
+  let desk: PaymentDesk;
   let house: TestApp;
   let world: AccessWorld;
   let routes: Map<string, RouteDefinition>;
 
   beforeAll(async () => {
-    house = await createTestApp();
+    desk = await openPaymentDesk();
+    house = await createTestApp({ payments: desk.payments });
     world = await buildAccessWorld(house);
     routes = new Map(featureRoutes(house.context).map((route) => [nameOf(route), route]));
   });
-  afterAll(() => house.close());
+  afterAll(async () => {
+    await house.close();
+    await desk.close();
+  });
 
   const rows = Object.entries(accessTable);
   const withRecord = rows.filter(([, row]) => row.record);

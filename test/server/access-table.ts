@@ -31,6 +31,7 @@ const booking: readonly Role[] = ['front-desk', 'nurse', 'exercise-physiologist'
 const prescribing: readonly Role[] = ['exercise-physiologist', 'physician', 'nurse'];
 const signing: readonly Role[] = ['exercise-physiologist', 'physician'];
 const chart: readonly Role[] = ['nurse', 'exercise-physiologist', 'physician'];
+const takingPayments: readonly Role[] = ['front-desk', 'director'];
 const planning: readonly Role[] = ['front-desk', 'administrator'];
 
 const measures: readonly Role[] = ['director', 'physician', 'exercise-physiologist'];
@@ -251,5 +252,23 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
       body: { siteId, localDate: '2026-12-24', reason: 'Holiday' },
     }),
   },
+  'GET /api/charges': {
+    who: [...takingPayments, 'patient'],
+    record: ({ patientId }) => ({ query: `?patientId=${patientId}` }),
+  },
+  'GET /api/charges/:id': {
+    who: [...takingPayments, 'patient'],
+    record: ({ chargeId }) => ({ id: chargeId }),
+  },
+  'POST /api/charges/:id/checkout': {
+    who: ['front-desk', 'patient'],
+    record: ({ chargeId }) => ({ id: chargeId, body: { amountMinor: 2500, currency: 'USD' } }),
+  },
+  'POST /api/billing/charges': {
+    who: takingPayments,
+    strangers: 200,
+    record: () => ({ body: {} }),
+  },
+  'POST /api/payments/webhook': { who: 'anyone', none: 'the signature decides' },
   'DELETE /api/closures/:id': { who: planning, ...timetable },
 };
