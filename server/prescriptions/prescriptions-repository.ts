@@ -94,16 +94,16 @@ export async function lockPrescription(tx: Transaction, id: string) {
 export type Locked = NonNullable<Awaited<ReturnType<typeof lockPrescription>>>;
 
 /** The course of a prescription: whether it is open, and whether a range was ever in force in it. */
-export async function courseOf(tx: Queryable, enrollmentId: string) {
-  const [course] = await tx
-    .select({
-      open: sql<boolean>`${enrollments.status} IN ('active', 'on-hold')`,
-      hadRange: sql<boolean>`EXISTS (
-        SELECT FROM prescriptions p
-         WHERE p.enrollment_id = ${enrollments.id} AND p.activated_at IS NOT NULL)`,
-    })
-    .from(enrollments)
-    .where(eq(enrollments.id, enrollmentId));
+export async function courseOf(
+  tx: Queryable,
+  enrollmentId: string,
+): Promise<{ readonly open: boolean; readonly hadRange: boolean }> {
+  const { rows } = await tx.execute<{ open: boolean; hadRange: boolean }>(sql`
+    SELECT e.status IN ('active', 'on-hold') AS open,
+           EXISTS (SELECT FROM prescriptions p
+             WHERE p.enrollment_id = e.id AND p.activated_at IS NOT NULL) AS "hadRange"
+      FROM enrollments e WHERE e.id = ${enrollmentId}`);
+  const [course] = rows;
   if (!course) throw new Error(`Enrollment ${enrollmentId} is gone`);
   return course;
 }
