@@ -7,6 +7,7 @@ export interface CastMember {
   readonly name?: { readonly givenName: string; readonly familyName: string };
   readonly email?: string;
   readonly site?: SiteKey;
+  readonly sex?: 'female' | 'male';
   readonly situation?: string;
   /** Days from the first day; 0 is that day. */
   readonly enrolled?: number;
@@ -29,6 +30,27 @@ export const cast: ReadonlyMap<number, CastMember> = new Map<number, CastMember>
       situation: 'The patient’s account: ischemia sets a ceiling',
       enrolled: -37,
       fate: { ...stays, pace: 2, reliability: 0.93, maintenance: true, turn: null },
+    },
+  ],
+  // A couple with one mailbox: neither can have an account by it.
+  [
+    140,
+    {
+      name: { givenName: 'Ottilie', familyName: 'Kallioniemi' },
+      email: 'the.kallioniemis@mail.example',
+      sex: 'female',
+      site: 'quayside',
+      situation: 'Valve, walked, not yet tested',
+    },
+  ],
+  [
+    141,
+    {
+      name: { givenName: 'Sigurd', familyName: 'Kallioniemi' },
+      email: 'the.kallioniemis@mail.example',
+      sex: 'male',
+      site: 'quayside',
+      situation: 'Bypass, walked, not yet tested',
     },
   ],
   // A dose raised yesterday: the range in force no longer rests on today's drugs.

@@ -26,7 +26,7 @@ export const familyNames = listed(`
 export const womensNames = listed(`
   Adaeze Agnès Amina Anjali Annelise Araceli Bernadette Birgitta Caridad Cecily Chiyo Claudette
   Concepción Delphine Dorothea Edwina Eleonora Esperanza Eulalie Fatoumata Fern Genoveva Gudrun
-  Hanneke Harriet Henrietta Imogen Ingeborg Ioana Iréne Jacinta Joan Kalpana Kateryna Keiko
+  Hanneke Harriet Henrietta Imogen Ingeborg Ioana Irène Jacinta Joan Kalpana Kateryna Keiko
   Leocadia Lorraine Lubna Mabel Maeve Marisol Marguerite Meiling Nadezhda Ngozi Noémie Odalys
   Ottilie Parvati Philippa Rosalind Rukmini Saoirse Shirin Solveig Tamsin Thandeka Ursula
   Verónica Winifred Xiomara Yetunde Zofia

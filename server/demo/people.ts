@@ -133,7 +133,7 @@ function personAt(index: number, anchor: Day): Person {
   const draw = dice(key);
   const pinned = cast.get(index);
   const situation = situationOf(index, draw);
-  const sex = sexOf(situation, draw);
+  const sex = pinned?.sex ?? sexOf(situation, draw);
   const name = pinned?.name ?? nameOf(index, sex);
   const age = draw.whole(...situation.ages);
   const payer = draw.weigh(payers, ({ weight, from }) => (age >= from ? weight : 0)).name;

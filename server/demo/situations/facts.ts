@@ -103,7 +103,7 @@ export function situation(
     name,
     diagnosis,
     share,
-    ages: stated.ages ?? [48, 79],
+    ages: stated.ages ?? [50, 84],
     sex: stated.sex ?? 'either',
     facts: factsOf(diagnosis, stated),
   };
