@@ -1,3 +1,4 @@
+import { DEFAULT_BOOKING_WINDOW, isLateCancellation } from '@shared/scheduling/booking-window';
 import type { Clock } from './clock';
 import type { Visit } from './courses';
 import { minutesLater } from './days';
@@ -74,11 +75,18 @@ function settle(rows: PeopleRows, visit: Visit, chargeId: string, payer: string,
   );
 }
 
-/** The charge of a self-pay class; void when the place was given back. */
+/** A place given back late is paid all the same; one that the program took back is not. */
+function givenBackAt(visit: Visit): Date | null {
+  const { cancelledAt } = visit;
+  if (!cancelledAt || visit.cancelledByProgram) return cancelledAt;
+  return isLateCancellation(visit, cancelledAt, DEFAULT_BOOKING_WINDOW) ? null : cancelledAt;
+}
+
+/** The charge of a self-pay class; void when the place was given back in time. */
 export function writeMoney(rows: PeopleRows, visit: Visit, owing: Owing, clock: Clock): void {
   const { patientId, appointmentId, payer, owesLast } = owing;
   const chargeId = idAt(visit.bookedAt, visit.key, 'charge');
-  const cancelledAt = visit.cancelledAt;
+  const cancelledAt = givenBackAt(visit);
   const payment = cancelledAt ? null : paysAt(visit, owesLast);
   const paidAt = payment && payment <= clock.now ? payment : null;
   rows.charges.push({

@@ -13,6 +13,7 @@ export interface Outcome {
   readonly state: VisitState;
   readonly cancelledAt: Date | null;
   readonly cancelledReason: string | null;
+  readonly cancelledByProgram: boolean;
 }
 
 /** What has been seen of a course before a day. */
@@ -50,12 +51,14 @@ export const plain = (state: VisitState): Outcome => ({
   state,
   cancelledAt: null,
   cancelledReason: null,
+  cancelledByProgram: false,
 });
 
-const cancelled = (cancelledAt: Date, cancelledReason: string): Outcome => ({
+const cancelled = (cancelledAt: Date, reason: string, byProgram = false): Outcome => ({
   state: 'cancelled',
   cancelledAt,
-  cancelledReason,
+  cancelledReason: reason,
+  cancelledByProgram: byProgram,
 });
 
 /** The day on which a course closes because the person left, once the last session is behind. */
@@ -78,7 +81,7 @@ function leavingOutcome(
   }
   if (day - bookingDays >= closes) return null;
   const reason = context.fate.leaves?.reason ?? 'left';
-  return cancelled(instantAt(closes, 16 * 60, zone), `Course closed: ${reason}`);
+  return cancelled(instantAt(closes, 16 * 60, zone), `Course closed: ${reason}`, true);
 }
 
 function awayOutcome(context: OutcomeContext, day: Day, from: Day): Outcome | null {
@@ -91,15 +94,15 @@ function usualOutcome({ key, slot, fate, anchor }: OutcomeContext, day: Day, see
   const zone = siteOf(slot.site).timeZone;
   const closed = closedDay(anchor);
   if (day === closed.day && slot.site === closed.site) {
-    return cancelled(instantAt(day, 6 * 60 + 5, zone), `Closed: ${closed.reason}`);
+    return cancelled(instantAt(day, 6 * 60 + 5, zone), `Closed: ${closed.reason}`, true);
   }
   const draw = dice(key, 'outcome', isoOf(day));
   if (draw.chance(fate.reliability)) return plain(draw.chance(0.012) ? 'held' : 'attended');
   if (draw.chance(0.45) && seen.missed < mostMissed) return plain('noshow');
   const reason = draw.pick(['Unwell', 'No ride', 'Other appointment', 'Weather', 'Family']);
-  return draw.chance(0.4)
-    ? cancelled(instantAt(day, 6 * 60 + 20, zone), reason)
-    : cancelled(instantAt(day - 1, 15 * 60 + draw.whole(0, 110), zone), reason);
+  if (draw.chance(0.3)) return cancelled(instantAt(day, 6 * 60 + 20, zone), reason);
+  const daysBefore = draw.whole(1, 2);
+  return cancelled(instantAt(day - daysBefore, 15 * 60 + draw.whole(0, 110), zone), reason);
 }
 
 /** What a booking on a day comes to; null: none is made. */

@@ -130,7 +130,7 @@ async function play(
   if (!last) await openProgram(connection, anchor, await hashPassword(demoPassword));
   const lastDay = last ? anchorAt(last.playedTo) : anchor;
   const firstDayNeeded = last ? lastDay - 2 : anchor - daysOfHistory;
-  const firstMissing = last ? lastDay : firstDayNeeded;
+  const firstMissing = last ? lastDay + classesAheadDays : firstDayNeeded;
   const dates = classDateRows(anchor, firstMissing, anchorAt(now) + classesAheadDays);
   await insertRows(connection, schema.classDates, dates);
   const before = last ? tellStory(clockAt(anchor, last.playedTo), last.playedTo) : noRows();
