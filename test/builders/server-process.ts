@@ -7,7 +7,10 @@ import type { TestApp } from './test-app';
 /** The product's own server in a process of its own, as production runs it but without the job queue. */
 export interface ServerProcess {
   readonly origin: string;
-  readonly stop: () => Promise<void>;
+  /** What it printed so far. */
+  readonly output: () => string;
+  /** Asks it to end and waits for it; resolves to its exit status. */
+  readonly stop: () => Promise<number | null>;
 }
 
 const root = fileURLToPath(new URL('../../', import.meta.url));
@@ -36,10 +39,12 @@ async function whenReady(origin: string, child: ChildProcess, output: string[]):
 /**
  * Starts a server process on the database of a test app, with its secrets: sessions made there hold here.
  * @param timeZone the process's own zone, which must not matter
+ * @param env further settings
  */
 export async function startServerProcess(
   testApp: TestApp,
   timeZone = 'UTC',
+  env: Readonly<Record<string, string>> = {},
 ): Promise<ServerProcess> {
   const port = await freePort();
   const origin = `http://127.0.0.1:${port}`;
@@ -55,15 +60,17 @@ export async function startServerProcess(
       PLIMSOLL_SESSION_SECRET: testApp.context.settings.sessionSecret,
       PLIMSOLL_CSRF_SECRET: testApp.context.settings.csrfSecret,
       LOG_LEVEL: 'warn',
+      ...env,
     },
     stdio: ['ignore', 'pipe', 'pipe'],
   });
   child.stdout.on('data', (data) => output.push(String(data)));
   child.stderr.on('data', (data) => output.push(String(data)));
-  const ended = new Promise<void>((resolve) => child.once('exit', () => resolve()));
+  const ended = new Promise<number | null>((resolve) => child.once('exit', resolve));
   await whenReady(origin, child, output);
   return {
     origin,
+    output: () => output.join(''),
     stop: () => {
       child.kill('SIGTERM');
       return ended;
