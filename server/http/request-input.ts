@@ -3,6 +3,7 @@ import type * as z from 'zod';
 import { fieldErrors } from '@shared/contracts/field-errors';
 import type { FieldError } from '@shared/errors';
 import { fail } from './failure';
+import { requireStorable, requireStorableAddress } from './storable-text';
 import type { Input, RequestShape, RouteDefinition } from './route';
 
 const DEFAULT_BODY_LIMIT = 100 * 1024;
@@ -33,11 +34,20 @@ export function bodyReaderOf({ request: shape, bodyLimit }: RouteDefinition): Bo
     const raw = express.raw({ type: () => true, limit });
     return (request, response) => run(raw, request, response);
   }
-  const json = express.json({ limit, strict: false, type: 'application/json' });
+  const sent = new WeakMap<object, Buffer>();
+  const json = express.json({
+    limit,
+    strict: false,
+    type: 'application/json',
+    verify: (request, _response, raw) => void sent.set(request, raw),
+  });
   return async (request, response) => {
     if (!hasBody(request)) return undefined;
     if (!request.is('application/json')) throw fail('not-json');
-    return run(json, request, response);
+    const body = await run(json, request, response);
+    const raw = sent.get(request);
+    if (raw) requireStorable(body, raw);
+    return body;
   };
 }
 
@@ -62,6 +72,7 @@ export function parseInput(
   request: Request,
   body: unknown,
 ): Input<RequestShape> {
+  requireStorableAddress(request);
   const errors: FieldError[] = [];
   const read = (schema: z.ZodType | undefined, value: unknown): unknown =>
     schema ? partOf(schema, value, errors) : undefined;

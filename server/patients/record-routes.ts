@@ -22,6 +22,14 @@ const patientParams = z.object({ id: z.uuid() });
 const entryParams = z.object({ id: z.uuid(), entryId: z.uuid() });
 const ofPatient = { patient: ({ params }: { params: { id: string } }) => params.id };
 
+/** What an entry says it takes the place of is not there to be replaced. */
+const replacing = {
+  constraints: {
+    medications_replaces_medications_id_fk: 'stale-version',
+    thresholds_supersedes_thresholds_id_fk: 'stale-version',
+  },
+} as const;
+
 interface OfEntry {
   readonly input: { readonly params: { readonly id: string; readonly entryId: string } };
 }
@@ -48,6 +56,7 @@ function entryRoutes(kind: RecordKind): RouteDefinition[] {
       summary: `Adds an entry to the record: ${kind.replaceAll('-', ' ')}`,
       access: writers,
       ...ofPatient,
+      ...replacing,
       audit: {
         action: 'record.entered',
         objectType: kind,
@@ -108,6 +117,7 @@ export const recordRoutes: RouteDefinition[] = [
     summary: 'Adds several entries at once, all or none',
     access: { roles: chartRoles },
     ...ofPatient,
+    ...replacing,
     audit: 'handler',
     request: { params: patientParams, body: recordBatchRequestSchema },
     response: { 201: recordBatchResponseSchema },
