@@ -12,6 +12,7 @@ export function area(path: AreaPath, loadChildren: LoadChildrenCallback): Route 
 export const routes: Routes = [
   { path: '', pathMatch: 'full', redirectTo: landing },
   ...accountsRoutes,
+  area('reports', async () => (await import('./reports/reports.routes')).reportsRoutes),
   {
     path: 'not-allowed',
     title: 'Not allowed',

@@ -38,7 +38,12 @@ export const areas = [
     roles: ['nurse', 'exercise-physiologist', 'physician'],
   },
   { path: 'billing', label: 'Billing', icon: 'receipt', roles: ['front-desk', 'director'] },
-  { path: 'reports', label: 'Reports', icon: 'bar-chart', roles: ['director'] },
+  {
+    path: 'reports',
+    label: 'Reports',
+    icon: 'bar-chart',
+    roles: ['director', 'physician', 'exercise-physiologist'],
+  },
   { path: 'settings', label: 'Settings', icon: 'tune', roles: ['administrator'] },
   { path: 'my/sessions', label: 'My sessions', icon: 'event', roles: ['patient'] },
   { path: 'my/range', label: 'My range', icon: 'favorite', roles: ['patient'] },
