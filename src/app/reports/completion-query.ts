@@ -64,20 +64,22 @@ export interface CompletionChoices {
 const isDate = (text: string | null): text is string =>
   text !== null && /^\d{4}-\d{2}-\d{2}$/.test(text);
 
-/** The last fourteen months, this one included. */
-export function usualSpan(today: string): { from: string; to: string } {
+const WINDOW_DAYS = 252;
+
+/** From the first of the month thirteen months ago to the last first session whose 36 weeks have passed. */
+export function ripeSpan(today: string): { from: string; to: string } {
   const [year = 0, month = 1] = today.split('-').map(Number);
   const first = new Date(Date.UTC(year, month - 1 - 13, 1));
-  return { from: first.toISOString().slice(0, 10), to: today };
+  return { from: first.toISOString().slice(0, 10), to: addDays(today, -WINDOW_DAYS - 1) };
 }
 
 export function choicesOf(params: ParamMap, today: string): CompletionChoices {
-  const usual = usualSpan(today);
+  const ripe = ripeSpan(today);
   const [from, to] = [params.get('from'), params.get('to')];
   const grouping = completionGroupings.find((each) => each === params.get('by'));
   return {
-    from: isDate(from) ? from : usual.from,
-    to: isDate(to) ? to : usual.to,
+    from: isDate(from) ? from : ripe.from,
+    to: isDate(to) ? to : ripe.to,
     groupBy: grouping === undefined || grouping === 'none' ? 'diagnosis' : grouping,
     siteId: params.get('site') ?? '',
     sex: params.get('sex') ?? '',

@@ -16,6 +16,8 @@ import { ColourScheme } from '../../core/colour-scheme';
 import { whiskers } from './whiskers';
 
 Chart.register(BarController, BarElement, CategoryScale, LinearScale);
+Chart.defaults.font.family = 'Lato';
+Chart.defaults.font.size = 13;
 
 /** The rates as bars with their intervals. The table beside it says the same in words, so readers skip the picture. */
 @Component({
@@ -82,8 +84,6 @@ export class CompletionChart {
         indexAxis: 'y',
         animation: false,
         maintainAspectRatio: false,
-        font: { family: 'Lato', size: 13 },
-        color: text,
         events: [],
         scales: {
           x: {

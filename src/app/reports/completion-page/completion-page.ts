@@ -72,7 +72,8 @@ export class CompletionPage {
   readonly #params = toSignal(this.#route.queryParamMap, {
     initialValue: this.#route.snapshot.queryParamMap,
   });
-  protected readonly choices = computed(() => choicesOf(this.#params(), localToday()));
+  protected readonly today = localToday();
+  protected readonly choices = computed(() => choicesOf(this.#params(), this.today));
   readonly #call = computed(() => callOf(this.choices()));
   protected readonly report = this.#client.completion(this.#call);
   readonly #sites = this.#client.sites();
