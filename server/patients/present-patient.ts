@@ -27,7 +27,7 @@ export function flagsOf(course: Course | null, range: RangeState | null): Patien
     ['no-range', range?.range === null && isOpen(course)],
     ['review-due', range?.reviewDue === true && isOpen(course)],
     ['on-hold', course?.status === 'on-hold'],
-    ['no-course', !isOpen(course)],
+    ['no-course', course === null],
   ];
   return flags.flatMap(([flag, stands]) => (stands ? [flag] : []));
 }

@@ -1,5 +1,4 @@
 import { and, eq, isNull, lte, sql } from 'drizzle-orm';
-import type { PgTable } from 'drizzle-orm/pg-core';
 import type { RecordKind } from '@shared/contracts/record-contract';
 import type { Transaction } from '../database/client';
 import { exerciseTests, medications, thresholds } from '../database/schema';

@@ -13,6 +13,8 @@ export const routes: Routes = [
   { path: '', pathMatch: 'full', redirectTo: landing },
   ...accountsRoutes,
   area('reports', async () => (await import('./reports/reports.routes')).reportsRoutes),
+  area('patients', async () => (await import('./patients/patients.routes')).patientsRoutes),
+  area('my/details', async () => (await import('./my-details/my-details.routes')).myDetailsRoutes),
   {
     path: 'not-allowed',
     title: 'Not allowed',

@@ -1,0 +1,76 @@
+import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
+import type { Prescription } from '@shared/contracts/prescription-record-contract';
+import { EmptyState } from '../../ui/empty-state/empty-state';
+import { Fact } from '../../ui/fact/fact';
+import { LoadLine } from '../../ui/load-line/load-line';
+import { ProblemMessage } from '../../ui/problem-message/problem-message';
+import { Quantity } from '../../ui/quantity/quantity';
+import { Skeleton } from '../../ui/skeleton/skeleton';
+import { StateChip, type Tone } from '../../ui/state-chip/state-chip';
+import { formatDay } from '../../ui/words/dates';
+import { PatientChart } from '../patient-chart';
+import { PatientsClient } from '../patients-client';
+import { failureOf, valueOf } from '../resource-state';
+
+interface Standing {
+  readonly words: string;
+  readonly tone: Tone;
+}
+
+/** A patient's prescriptions: the one in force as its load line, all of them with who signed. */
+@Component({
+  selector: 'app-ranges-section',
+  imports: [EmptyState, Fact, LoadLine, ProblemMessage, Quantity, Skeleton, StateChip],
+  templateUrl: './ranges-section.html',
+  styleUrl: './ranges-section.scss',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class RangesSection {
+  readonly #chart = inject(PatientChart);
+  readonly #resource = inject(PatientsClient).prescriptions(this.#chart.id);
+
+  protected readonly items = computed(() => valueOf(this.#resource));
+  protected readonly failure = computed(() => failureOf(this.#resource));
+  protected readonly active = computed(() =>
+    this.items()?.find(({ status }) => status === 'active'),
+  );
+  /** What was entered since took the range out of force: effort leads, the ceiling stays. */
+  protected readonly withdrawn = computed(
+    () => valueOf(this.#chart.patient)?.clinical?.flags.includes('range-withdrawn') ?? false,
+  );
+  readonly #timeZone = computed(() => valueOf(this.#chart.patient)?.site.timeZone ?? 'UTC');
+
+  protected readonly day = (instant: string | null) =>
+    instant === null ? null : formatDay(instant, this.#timeZone());
+
+  protected target({ result }: Prescription): string | null {
+    return result.target && `${Number(result.target.lower)}–${Number(result.target.upper)}`;
+  }
+
+  protected effort({ result: { perceivedExertion } }: Prescription): string {
+    return `${perceivedExertion.lower}–${perceivedExertion.upper}`;
+  }
+
+  protected ceiling({ result }: Prescription) {
+    if (result.ceiling === null) return null;
+    const reason = result.ceiling.bindingLimits.join(', ').replaceAll('-', ' ');
+    return { value: Number(result.ceiling.value), reason };
+  }
+
+  protected standing({ status, awaiting }: Prescription): Standing {
+    switch (status) {
+      case 'active':
+        return { words: 'In force', tone: 'in' };
+      case 'draft':
+        return awaiting === 'physician'
+          ? { words: 'Awaits a physician', tone: 'due' }
+          : { words: 'Draft', tone: 'plain' };
+      case 'completed':
+        return { words: 'Superseded', tone: 'plain' };
+      case 'revoked':
+        return { words: 'Put aside', tone: 'plain' };
+      case 'entered-in-error':
+        return { words: 'Entered in error', tone: 'plain' };
+    }
+  }
+}
