@@ -11,6 +11,7 @@ import { serviceRoutes } from './http/service-routes';
 import type { JobDefinition } from './jobs/job';
 import type { AppointmentListener } from './schedule/appointment-events';
 import { messageOfAppointments } from './schedule/appointment-messages';
+import { floorRoutes } from './floor/floor-routes';
 import { prescriptionsRoutes } from './prescriptions/prescriptions-routes';
 import { reportsRoutes } from './reports/reports-routes';
 import { scheduleJobs } from './schedule/schedule-jobs';
@@ -33,6 +34,7 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...sitesRoutes,
     ...prescriptionsRoutes,
     ...scheduleRoutes(appointmentListeners),
+    ...floorRoutes,
     ...patientsRoutes,
     ...billingRoutes,
     ...reportsRoutes,

@@ -1,6 +1,7 @@
 import { roles, type Role } from '@shared/contracts/accounts-contract';
 import { appointments } from '../../server/database/schema';
 import { agentFor, visitor, type Agent } from './agent';
+import { buildSessionRecord } from './floor';
 import { buildPatientWithAccount, buildSite, buildUser } from './people';
 import { workedExample } from './prescription-request';
 import { buildCharge } from './money';
@@ -17,6 +18,8 @@ export interface PatientRecord {
   readonly classTemplateId: string;
   readonly appointmentId: string;
   readonly chargeId: string;
+  readonly sessionRecordId: string;
+  readonly readingId: string;
 }
 
 type Site = Awaited<ReturnType<typeof buildSite>>;
@@ -71,6 +74,12 @@ async function buildRecord(house: TestApp, site: Site, clinician: Agent): Promis
     .post(`/api/patients/${patient.id}/prescriptions`)
     .send({ inputs: workedExample })
     .expect(201);
+  const visit = {
+    appointmentId: appointment?.id ?? '',
+    patientId: patient.id,
+    recordedBy: user.id,
+  };
+  const { record, reading } = await buildSessionRecord(database, visit);
   return {
     agent: await agentFor(house, user),
     siteId: site.id,
@@ -80,6 +89,8 @@ async function buildRecord(house: TestApp, site: Site, clinician: Agent): Promis
     classTemplateId: classDate.templateId,
     appointmentId: appointment?.id ?? '',
     chargeId: charge.id,
+    sessionRecordId: record.id,
+    readingId: reading.id,
   };
 }
 

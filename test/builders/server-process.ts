@@ -11,6 +11,8 @@ export interface ServerProcess {
   readonly output: () => string;
   /** Asks it to end and waits for it; resolves to its exit status. */
   readonly stop: () => Promise<number | null>;
+  /** Ends it at once, as a power cut would: kill -9. */
+  readonly kill: () => Promise<number | null>;
 }
 
 const root = fileURLToPath(new URL('../../', import.meta.url));
@@ -73,6 +75,10 @@ export async function startServerProcess(
     output: () => output.join(''),
     stop: () => {
       child.kill('SIGTERM');
+      return ended;
+    },
+    kill: () => {
+      child.kill('SIGKILL');
       return ended;
     },
   };

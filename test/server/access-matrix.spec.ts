@@ -28,6 +28,8 @@ const unknown: Omit<PatientRecord, 'agent'> = {
   classTemplateId: randomUUID(),
   appointmentId: randomUUID(),
   chargeId: randomUUID(),
+  sessionRecordId: randomUUID(),
+  readingId: randomUUID(),
 };
 
 /** Done, or refused for a reason of the matter itself. */

@@ -1,6 +1,8 @@
+import { v7 as uuidv7 } from 'uuid';
 import { staffRoles, type Role } from '@shared/contracts/accounts-contract';
 import { recordKinds } from '@shared/contracts/record-contract';
 import type { PatientRecord } from '../builders/access-world';
+import { readingBody, recordBody } from '../builders/floor';
 import { workedExample } from '../builders/prescription-request';
 
 /**
@@ -32,6 +34,7 @@ const prescribing: readonly Role[] = ['exercise-physiologist', 'physician', 'nur
 const signing: readonly Role[] = ['exercise-physiologist', 'physician'];
 const chart: readonly Role[] = ['nurse', 'exercise-physiologist', 'physician'];
 const takingPayments: readonly Role[] = ['front-desk', 'director'];
+const floor: readonly Role[] = ['nurse', 'exercise-physiologist'];
 const planning: readonly Role[] = ['front-desk', 'administrator'];
 
 const measures: readonly Role[] = ['director', 'physician', 'exercise-physiologist'];
@@ -271,4 +274,33 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
   },
   'POST /api/payments/webhook': { who: 'anyone', none: 'the signature decides' },
   'DELETE /api/closures/:id': { who: planning, ...timetable },
+
+  'GET /api/class-dates/:id/roster': {
+    who: chart,
+    record: ({ classDateId }) => ({ id: classDateId }),
+  },
+  'GET /api/class-dates/:id/roster/stamp': { who: chart, none: 'counts, and nobody’s' },
+  'GET /api/session-records/:id': {
+    who: chart,
+    record: ({ sessionRecordId }) => ({ id: sessionRecordId }),
+  },
+  'PUT /api/session-records/:id': {
+    who: floor,
+    record: ({ appointmentId }) => ({ id: uuidv7(), body: recordBody(appointmentId) }),
+  },
+  'POST /api/session-records/:id/sign': {
+    who: floor,
+    record: ({ sessionRecordId }) => ({ id: sessionRecordId }),
+  },
+  'PUT /api/vital-signs/:id': {
+    who: floor,
+    record: ({ sessionRecordId }) => ({ id: uuidv7(), body: readingBody(sessionRecordId) }),
+  },
+  'POST /api/vital-signs/:id/amendments': {
+    who: floor,
+    record: ({ readingId }) => ({
+      id: readingId,
+      body: { id: uuidv7(), reason: 'Digits swapped', heartRate: 96 },
+    }),
+  },
 };

@@ -1,0 +1,72 @@
+import { sql } from 'drizzle-orm';
+import type { PrescriptionAnswer } from '@shared/clinical/prescribing';
+import type { Bpm } from '@shared/units';
+import type { Queryable } from '../database/client';
+import { withdrawalOf, type WithdrawalReason } from '../patients/record-changes-queries';
+
+/** What the floor needs of a result; the rest (candidates, workloads …) is most of its bulk. */
+type FloorAnswer = Pick<
+  PrescriptionAnswer,
+  | 'leadBy'
+  | 'target'
+  | 'guide'
+  | 'ceiling'
+  | 'askLine'
+  | 'perceivedExertion'
+  | 'pressureCeiling'
+  | 'oxygenFloor'
+>;
+
+/** A range that is in force, or that a visit was begun with. */
+export interface FloorRange extends Record<string, unknown> {
+  readonly id: string;
+  readonly patientId: string;
+  readonly active: boolean;
+  readonly answer: FloorAnswer;
+  readonly restingHeartRate: Bpm | null;
+  readonly rhythm: string | null;
+  /** Why it would lead no more now; of a range in force alone. */
+  readonly withdrawn: readonly WithdrawalReason[];
+}
+
+const COLUMNS = sql`
+  p.id, p.patient_id AS "patientId", p.status = 'active' AS active,
+  jsonb_build_object(
+    'leadBy', p.result -> 'leadBy', 'target', p.result -> 'target', 'guide', p.result -> 'guide',
+    'ceiling', p.result -> 'ceiling', 'askLine', p.result -> 'askLine',
+    'perceivedExertion', p.result -> 'perceivedExertion',
+    'pressureCeiling', p.result -> 'pressureCeiling', 'oxygenFloor', p.result -> 'oxygenFloor') AS answer,
+  (p.inputs #>> '{resting,seated}')::float AS "restingHeartRate", p.inputs ->> 'rhythm' AS rhythm,
+  CASE WHEN p.status = 'active'
+    THEN ${withdrawalOf({ patientId: sql`p.patient_id`, madeAt: sql`p.created_at`, inputs: sql`p.inputs` })}
+    ELSE '{}' END AS withdrawn`;
+
+/** The ranges in force of these patients, and these ranges whether or not they still are; in one statement. */
+export async function floorRanges(
+  db: Queryable,
+  wanted: { readonly patientIds: readonly string[]; readonly rangeIds: readonly string[] },
+): Promise<FloorRange[]> {
+  const { rows } = await db.execute<FloorRange>(sql`
+    SELECT ${COLUMNS} FROM prescriptions p
+     WHERE (p.status = 'active' AND p.patient_id = ANY(${sql.param([...wanted.patientIds])}::uuid[]))
+        OR p.id = ANY(${sql.param([...wanted.rangeIds])}::uuid[])`);
+  return rows;
+}
+
+/** The range that was in force at an instant, else the one that is now; undefined without either. */
+export async function floorRangeAt(
+  db: Queryable,
+  patientId: string,
+  at: Date,
+): Promise<FloorRange | undefined> {
+  const instant = at.toISOString();
+  const { rows } = await db.execute<FloorRange>(sql`
+    SELECT ${COLUMNS} FROM prescriptions p
+     WHERE p.patient_id = ${patientId}
+       AND (p.status = 'active'
+            OR (p.activated_at <= ${instant}::timestamptz AND p.ended_at > ${instant}::timestamptz
+                AND p.status = 'completed'))
+     ORDER BY p.activated_at <= ${instant}::timestamptz DESC, p.activated_at
+     LIMIT 1`);
+  return rows[0];
+}
