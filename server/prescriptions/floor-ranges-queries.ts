@@ -1,8 +1,9 @@
 import { sql } from 'drizzle-orm';
 import type { PrescriptionAnswer } from '@shared/clinical/prescribing';
 import type { Bpm } from '@shared/units';
+import type { WithdrawalReason } from '@shared/clinical/withdrawal';
 import type { Queryable } from '../database/client';
-import { withdrawalOf, type WithdrawalReason } from '../patients/record-changes-queries';
+import { withdrawalOf } from '../patients/record-changes-queries';
 
 /** What the floor needs of a result; the rest (candidates, workloads …) is most of its bulk. */
 type FloorAnswer = Pick<
