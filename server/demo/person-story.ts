@@ -89,7 +89,7 @@ function enroll(telling: Telling, course: Course, at: Date): void {
     telling.chart = { ...telling.chart, facts };
     telling.changedOn = plan.eventOn;
   }
-  writeRange(telling, plan.enrolledOn, atSite(site, plan.enrolledOn, workday.range), true);
+  writeRange(telling, plan.enrolledOn, atSite(site, plan.enrolledOn, workday.range));
 }
 
 /** Angina comes in the first class on or after its day, and with it a threshold and a new range. */
@@ -110,7 +110,7 @@ function noteAngina(telling: Telling, visit: Visit): void {
   telling.chart = turned(telling.chart, 'angina in class', visit.day);
   telling.turnDone = true;
   telling.withdrawal = { at, reason: 'threshold' };
-  telling.nextRange = { on: visit.day + 1, withPhysician: true };
+  telling.nextRange = { on: visit.day + 1, afterChange: true };
 }
 
 function attend(telling: Telling, course: Course, visit: Visit, visitor: Visitor): void {

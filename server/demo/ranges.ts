@@ -27,8 +27,11 @@ export interface Signing {
   readonly physicianSignedAt: Date | null;
 }
 
+/** What the engine made of the inputs. */
+export type Evaluated = Pick<IssuedRange, 'inputs' | 'answer'>;
+
 /** The engine's answer by the published policy; a choice that no longer applies is given up, as a clinician would. */
-function evaluate(inputs: PrescriptionRequestInput): Pick<IssuedRange, 'inputs' | 'answer'> {
+export function evaluate(inputs: PrescriptionRequestInput): Evaluated {
   const evaluation = evaluatePrescription(prescriptionRequestSchema.parse(inputs), defaultPolicy);
   if (evaluation.ok) return { inputs, answer: evaluation.answer };
   if (inputs.choice.method === null && inputs.choice.maximum === null) {
@@ -39,13 +42,13 @@ function evaluate(inputs: PrescriptionRequestInput): Pick<IssuedRange, 'inputs' 
 
 export function issueRange(
   key: string,
-  inputs: PrescriptionRequestInput,
+  evaluated: Evaluated,
   signing: Signing,
   supersedes: string | null,
 ): IssuedRange {
   return {
     id: idAt(signing.createdAt, key, 'prescription'),
-    ...evaluate(inputs),
+    ...evaluated,
     ...signing,
     activeFrom: signing.physicianSignedAt ?? signing.signedAt,
     supersedes,
@@ -110,9 +113,14 @@ type Lifetime = Pick<
   'status' | 'version' | 'awaiting' | 'signedAt' | 'physicianSignedAt' | 'activatedAt' | 'endedAt'
 >;
 
-/** What has happened to a range by now. */
+/** What has happened to a range by now. One that still waits when its course ends is put aside. */
 function lifetime(range: IssuedRange, endsAt: Date | null, now: Date): Lifetime {
   const happened = (at: Date | null) => (at !== null && at <= now ? at : null);
+  if (endsAt && endsAt <= now && endsAt <= range.activeFrom) {
+    const signedAt = range.signedAt < endsAt ? range.signedAt : null;
+    const kept = { awaiting: null, physicianSignedAt: null, activatedAt: null };
+    return { status: 'revoked', version: signedAt ? 3 : 2, signedAt, endedAt: endsAt, ...kept };
+  }
   const signedAt = happened(range.signedAt);
   const physicianSignedAt = happened(range.physicianSignedAt);
   const activatedAt = happened(range.activeFrom);
@@ -129,6 +137,8 @@ function lifetime(range: IssuedRange, endsAt: Date | null, now: Date): Lifetime 
   };
 }
 
+const earlier = (a: Date | null, b: Date | null) => (a && b ? (a < b ? a : b) : (a ?? b));
+
 /**
  * The rows of a person's ranges in the order of issue.
  * @param closesAt when the last one ends with its course; null: it stays in force
@@ -142,7 +152,7 @@ export function prescriptionRows(
   return ranges
     .filter(({ createdAt }) => createdAt <= now)
     .map((range, each) => {
-      const life = lifetime(range, ranges[each + 1]?.activeFrom ?? closesAt, now);
+      const life = lifetime(range, earlier(ranges[each + 1]?.activeFrom ?? null, closesAt), now);
       return {
         id: range.id,
         patientId: owner.patientId,

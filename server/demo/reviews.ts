@@ -1,11 +1,14 @@
+import { physicianCausesOf } from '@shared/clinical/plan-limits';
+import { defaultPolicy } from '@shared/clinical/prescribing';
+import { prescriptionRequestSchema } from '@shared/contracts/prescriptions-contract';
 import { canTurn, inputsOn, seatedAfter, turned } from './chart';
 import { atSite, workday } from './charting';
 import type { CoursePlan } from './courses';
 import type { Day } from './days';
 import { minutesLater } from './days';
 import { observedWorkOn } from './observed-work';
-import { issueRange, signedAtOnce } from './ranges';
-import type { Signing } from './ranges';
+import { evaluate, issueRange, signedAtOnce } from './ranges';
+import type { Evaluated, Signing } from './ranges';
 import { writeDoseRaised } from './record-drugs';
 import { writeRestingRates, writeTest } from './record-rows';
 import { scribeAt } from './telling';
@@ -17,10 +20,16 @@ const reviewEveryDays = 28;
 const seenWithinDays = 12;
 const postponedBy = 7;
 
-function signingOf(telling: Telling, day: Day, createdAt: Date, withPhysician: boolean): Signing {
-  if (!withPhysician) return signedAtOnce(createdAt);
+/** Whether no range of this course has been written yet. */
+const isFirst = ({ ranges, rangesBefore }: Telling) => ranges.length === rangesBefore;
+
+/** A physician signs too where staff may not sign alone. */
+function signingOf(telling: Telling, day: Day, createdAt: Date, evaluated: Evaluated): Signing {
   const { site, fate } = telling.person;
-  const first = telling.ranges.length === telling.rangesBefore;
+  const first = isFirst(telling);
+  const inputs = prescriptionRequestSchema.parse(evaluated.inputs);
+  const proposal = { inputs, result: evaluated.answer, first, student: false };
+  if (physicianCausesOf(proposal, defaultPolicy).length === 0) return signedAtOnce(createdAt);
   const { physiologist, physician } = first ? fate.signing : { physiologist: 0, physician: 1 };
   return {
     createdAt,
@@ -33,30 +42,27 @@ function signingOf(telling: Telling, day: Day, createdAt: Date, withPhysician: b
 }
 
 /** Writes the range that the record gives on a day, and sets the day of the next. */
-export function writeRange(telling: Telling, day: Day, createdAt: Date, withPhysician: boolean) {
+export function writeRange(telling: Telling, day: Day, createdAt: Date): void {
   const { chart, ranges, attended, firstSession, readings, changedOn } = telling;
   const work = observedWorkOn(readings, day, changedOn);
-  const inputs = inputsOn(chart, day, { attended, firstSession, work });
-  const key = `${telling.person.key} ${day}`;
-  const isFirst = ranges.length === telling.rangesBefore;
-  const supersedes = isFirst ? null : (ranges.at(-1)?.id ?? null);
-  ranges.push(
-    issueRange(key, inputs, signingOf(telling, day, createdAt, withPhysician), supersedes),
-  );
-  telling.nextRange = { on: day + reviewEveryDays, withPhysician: false };
+  const evaluated = evaluate(inputsOn(chart, day, { attended, firstSession, work }));
+  const signing = signingOf(telling, day, createdAt, evaluated);
+  const supersedes = isFirst(telling) ? null : (ranges.at(-1)?.id ?? null);
+  ranges.push(issueRange(`${telling.person.key} ${day}`, evaluated, signing, supersedes));
+  telling.nextRange = { on: day + reviewEveryDays, afterChange: false };
 }
 
-function review(telling: Telling, on: Day, withPhysician: boolean): void {
+function review(telling: Telling, on: Day, afterChange: boolean): void {
   const seenLast = telling.lastSession ?? on;
-  if (!withPhysician && on - seenLast > seenWithinDays) {
-    telling.nextRange = { on: on + postponedBy, withPhysician };
+  if (!afterChange && on - seenLast > seenWithinDays) {
+    telling.nextRange = { on: on + postponedBy, afterChange };
     return;
   }
   const at = atSite(telling.person.site, on, workday.review);
   const seated = seatedAfter(telling.chart, telling.attended);
-  const days = withPhysician ? [2, 1, 0] : [4, 2, 0];
+  const days = afterChange ? [2, 1, 0] : [4, 2, 0];
   writeRestingRates(telling.rows, scribeAt(telling, at), telling.chart, seated, on, days);
-  writeRange(telling, on, at, withPhysician);
+  writeRange(telling, on, at);
 }
 
 /** The dose goes up, which withdraws the range until the next, or a second test is done. */
@@ -70,10 +76,10 @@ function turn(telling: Telling, on: Day, at: Date): void {
     writeDoseRaised(telling.rows, scribe, on);
     telling.changedOn = on;
     telling.withdrawal = { at, reason: 'drugs' };
-    telling.nextRange = { on: on + 3, withPhysician: true };
+    telling.nextRange = { on: on + 3, afterChange: true };
   } else {
     writeTest(telling.rows, scribe, telling.chart, on);
-    telling.nextRange = { on: on + 1, withPhysician: true };
+    telling.nextRange = { on: on + 1, afterChange: true };
   }
 }
 
@@ -96,7 +102,7 @@ export function passTime(telling: Telling, plan: CoursePlan, until: Date): void 
     if (turnOn !== null && turnAt && turnAt < until && (!rangeAt || turnAt < rangeAt)) {
       turn(telling, turnOn, turnAt);
     } else if (nextRange && rangeAt && rangeAt < until) {
-      review(telling, nextRange.on, nextRange.withPhysician);
+      review(telling, nextRange.on, nextRange.afterChange);
     } else return;
   }
 }

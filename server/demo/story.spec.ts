@@ -1,5 +1,7 @@
 import { describe, expect, it } from 'vitest';
-import type { PrescriptionAnswer } from '@shared/clinical/prescribing';
+import { physicianCausesOf } from '@shared/clinical/plan-limits';
+import { defaultPolicy } from '@shared/clinical/prescribing';
+import type { PrescriptionAnswer, PrescriptionRequest } from '@shared/clinical/prescribing';
 import { patientAccount } from './accounts';
 import { anchorAt, clockAt } from './clock';
 import { isoOf } from './days';
@@ -116,7 +118,20 @@ describe('the courses', () => {
 
   it('have ranges in every state, drafts and ranges that wait for the physician too', () => {
     const states = story.prescriptions.map(({ status, awaiting }) => `${status} ${awaiting ?? ''}`);
-    expect(distinct(states)).toEqual(['active ', 'completed ', 'draft ', 'draft physician']);
+    const known = ['active ', 'completed ', 'draft ', 'draft physician', 'revoked '];
+    expect(distinct(states)).toEqual(known);
+  });
+
+  it('have a physician’s signature wherever the plan wants one', () => {
+    for (const row of story.prescriptions) {
+      if (!row.activatedAt || row.physicianSignedAt) continue;
+      const inputs = row.inputs as PrescriptionRequest;
+      const result = row.result as PrescriptionAnswer;
+      const first = !row.supersedes;
+      expect(physicianCausesOf({ inputs, result, first, student: false }, defaultPolicy)).toEqual(
+        [],
+      );
+    }
   });
 
   it('have a range that waits for the physician name the one in force, so that it can be signed', () => {

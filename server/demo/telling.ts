@@ -34,7 +34,7 @@ export interface Telling {
   /** When the record last changed so that the range in force no longer rests on it. */
   withdrawal: Withdrawal | null;
   /** When the next range is to be written. */
-  nextRange: { readonly on: Day; readonly withPhysician: boolean } | null;
+  nextRange: { readonly on: Day; readonly afterChange: boolean } | null;
   turnDone: boolean;
 }
 
