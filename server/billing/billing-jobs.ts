@@ -1,11 +1,9 @@
 import { and, eq, inArray, lt } from 'drizzle-orm';
 import * as z from 'zod';
-import type { AppContext } from '../app-context';
 import { payments } from '../database/schema';
 import { inTransaction } from '../database/transaction';
 import { job, type JobDefinition } from '../jobs/job';
-import type { PaymentRow } from './charges-repository';
-import { note, sessionOf } from './checkout-service';
+import { note, resolveAttempt } from './checkout-service';
 import { sendRefund } from './refunds-service';
 import { expire } from './settling-service';
 
@@ -18,13 +16,6 @@ const undecided = (now: Date) =>
     lt(payments.createdAt, new Date(now.getTime() - UNDECIDED_MS)),
   );
 
-async function reconcileOne(context: AppContext, attempt: PaymentRow): Promise<void> {
-  if (!context.payments) return;
-  const session = await sessionOf(context.payments, context.settings.origin, attempt);
-  if (session.outcome === 'session') return note(context, attempt.id, session);
-  context.log.warn({ attemptId: attempt.id, outcome: session.outcome }, 'attempt undecided');
-}
-
 /** Asks the service about attempts that nobody told the end of, so that a lost event loses no payment. */
 const reconcilePayments = job({
   name: 'reconcile-payments',
@@ -32,9 +23,11 @@ const reconcilePayments = job({
   schedule: '*/10 * * * *',
   atStart: true,
   run: async (_, context) => {
-    const now = context.clock.now();
-    const rows = await context.database.select().from(payments).where(undecided(now)).limit(200);
-    for (const attempt of rows) await reconcileOne(context, attempt);
+    const { payments: service, database } = context;
+    if (!service) return;
+    const since = undecided(context.clock.now());
+    const rows = await database.select().from(payments).where(since).limit(200);
+    for (const attempt of rows) await resolveAttempt(context, service, attempt);
   },
 });
 

@@ -78,12 +78,12 @@ export async function findPayment(tx: Transaction, id: string): Promise<PaymentR
 export async function insertAttempt(
   tx: Transaction,
   charge: ChargeRow,
-  createdBy: string,
+  made: { readonly createdBy: string; readonly createdAt: Date },
 ): Promise<PaymentRow> {
   const { id: chargeId, amountMinor, currency } = charge;
   const [row] = await tx
     .insert(payments)
-    .values({ chargeId, amountMinor, currency, createdBy })
+    .values({ chargeId, amountMinor, currency, ...made })
     .returning();
   if (!row) throw new Error('The attempt was not inserted');
   return row;
@@ -95,6 +95,18 @@ export async function updatePayment(
   change: Partial<typeof payments.$inferInsert>,
 ): Promise<void> {
   await tx.update(payments).set(change).where(eq(payments.id, id));
+}
+
+/** Changes an attempt that is still under way; what was decided meanwhile stays. */
+export async function updateUndecided(
+  tx: Transaction,
+  id: string,
+  change: Partial<typeof payments.$inferInsert>,
+): Promise<void> {
+  await tx
+    .update(payments)
+    .set(change)
+    .where(and(eq(payments.id, id), inArray(payments.status, ['preparing', 'pending'])));
 }
 
 /** @returns the refund's id; undefined when this payment is given back already */

@@ -8,7 +8,7 @@ import {
   insertAttempt,
   liveAttempt,
   lockCharge,
-  updatePayment,
+  updateUndecided,
   type PaymentRow,
 } from './charges-repository';
 import { expire, settle } from './settling-service';
@@ -21,7 +21,7 @@ export interface Shown {
 /** The attempt that is under way, else a new one: committed before the service is asked. */
 async function prepare(
   database: Database,
-  actor: Actor,
+  { actor, now }: { readonly actor: Actor; readonly now: Date },
   chargeId: string,
   shown: Shown,
 ): Promise<PaymentRow | Failure> {
@@ -31,24 +31,27 @@ async function prepare(
     if (charge.status !== 'open') return fail('charge-not-open');
     const same = charge.amountMinor === shown.amountMinor && charge.currency === shown.currency;
     if (!same) return fail('price-changed');
-    return (await liveAttempt(tx, chargeId)) ?? insertAttempt(tx, charge, actor.id);
+    return (
+      (await liveAttempt(tx, chargeId)) ??
+      insertAttempt(tx, charge, { createdBy: actor.id, createdAt: now })
+    );
   });
 }
 
 /** The attempt's session as the service has it. Its id is the idempotency key: asking again makes no second one. */
-export async function sessionOf(
+async function sessionOf(
   payments: Payments,
   origin: string,
   { id, chargeId, amountMinor, currency, serviceSessionId }: PaymentRow,
 ): Promise<CheckoutSession | PaymentsFailure> {
   if (serviceSessionId !== null) return payments.retrieveSession(serviceSessionId);
-  const back = `${origin}/my/payments`;
+  const back = `${origin}/payments/${chargeId}`;
   return payments.createCheckoutSession({
     chargeId,
     attemptId: id,
     amountMinor,
     currency: currency.toLowerCase(),
-    successUrl: `${back}?paid=${chargeId}`,
+    successUrl: `${back}?paid=yes`,
     cancelUrl: back,
   });
 }
@@ -64,30 +67,42 @@ export async function note(
     if (session.paid) return settle(tx, { ...session, attemptId }, now);
     if (session.status === 'expired') return expire(tx, attemptId);
     const { sessionId: serviceSessionId, url: serviceSessionUrl } = session;
-    return updatePayment(tx, attemptId, { status: 'pending', serviceSessionId, serviceSessionUrl });
+    const opened = { status: 'pending', serviceSessionId, serviceSessionUrl } as const;
+    return updateUndecided(tx, attemptId, opened);
   });
 }
 
 async function giveUp({ database }: AppContext, attemptId: string): Promise<void> {
-  await inTransaction(database, (tx) => updatePayment(tx, attemptId, { status: 'failed' }));
+  await inTransaction(database, (tx) => updateUndecided(tx, attemptId, { status: 'failed' }));
 }
 
-const BUSY = 'The payment page did not answer. Nothing was paid; try again in a moment.';
+/**
+ * What the service keeps failing under one idempotency key it fails for good, so a new attempt takes over. A page that was
+ * made all the same is known to nobody; if it were paid, the second payment would go back.
+ */
+const STUCK_MS = 30_000;
 
-async function open(
+const isStuck = ({ serviceSessionId, createdAt }: PaymentRow, now: Date): boolean =>
+  serviceSessionId === null && now.getTime() - createdAt.getTime() > STUCK_MS;
+
+/** Asks how an attempt stands and writes it down; one of which the service wants to know nothing is given up. */
+export async function resolveAttempt(
   context: AppContext,
   payments: Payments,
   attempt: PaymentRow,
-): Promise<CheckoutSession | Failure> {
+): Promise<CheckoutSession | null> {
   const session = await sessionOf(payments, context.settings.origin, attempt);
   if (session.outcome === 'session') {
     await note(context, attempt.id, session);
     return session;
   }
-  context.log.warn({ attemptId: attempt.id, outcome: session.outcome }, 'checkout refused');
-  if (session.outcome !== 'unavailable') await giveUp(context, attempt.id);
-  return fail('unavailable', { title: BUSY, retryAfterSeconds: 5 });
+  context.log.warn({ attemptId: attempt.id, outcome: session.outcome }, 'attempt undecided');
+  const hopeless = session.outcome !== 'unavailable' || isStuck(attempt, context.clock.now());
+  if (hopeless) await giveUp(context, attempt.id);
+  return null;
 }
+
+const BUSY = 'The payment page did not answer. Nothing was paid; try again in a moment.';
 
 /**
  * Leads to the pay page of a charge. However many ask at once, one attempt is under way and all get its page; an
@@ -104,11 +119,11 @@ export async function checkOut(
   const { payments, database } = context;
   if (!payments) return fail('unavailable', { title: 'Paying online is not set up here.' });
   for (const _ of ['the attempt under way', 'a new one']) {
-    const attempt = await prepare(database, actor, chargeId, shown);
+    const attempt = await prepare(database, { actor, now: context.clock.now() }, chargeId, shown);
     if (attempt instanceof Failure) return attempt;
-    const session = await open(context, payments, attempt);
-    if (session instanceof Failure) return session;
-    if (session.paid) return fail('charge-not-open');
+    const session = await resolveAttempt(context, payments, attempt);
+    if (session === null) break;
+    if (session.paid || session.status === 'complete') return fail('charge-not-open');
     if (session.url !== null) return session.url;
   }
   return fail('unavailable', { title: BUSY, retryAfterSeconds: 5 });

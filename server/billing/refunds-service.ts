@@ -1,4 +1,4 @@
-import { eq } from 'drizzle-orm';
+import { and, eq } from 'drizzle-orm';
 import * as z from 'zod';
 import type { AppContext } from '../app-context';
 import { recordAudit, type AuditSource } from '../audit/audit-service';
@@ -84,7 +84,10 @@ export async function settleRefund(
 async function refuse(context: AppContext, { refund }: Given, code: string): Promise<void> {
   const now = context.clock.now();
   await inTransaction(context.database, async (tx) => {
-    await tx.update(refunds).set({ status: 'failed' }).where(eq(refunds.id, refund.id));
+    await tx
+      .update(refunds)
+      .set({ status: 'failed' })
+      .where(and(eq(refunds.id, refund.id), eq(refunds.status, 'pending')));
     const object = { objectType: 'refund', objectId: refund.id, outcome: 'failure' as const };
     const entry = { action: 'refund.failed', ...object, details: { code } };
     await recordAudit(tx, byNobody(now), [entry]);

@@ -76,8 +76,8 @@ async function receive(
   }
   await setChargeStatus(tx, chargeId, 'paid');
   const { patientId } = charge;
-  const about = { kind: 'receipt', dedupeKey: `receipt:${id}`, subject: { paymentId: id } };
-  await enqueueMessage(tx, { ...about, patientId, dueAt: now });
+  const about = { kind: 'receipt', dedupeKey: `receipt:${id}` } as const;
+  await enqueueMessage(tx, { ...about, patientId, subject: { paymentId: id }, dueAt: now });
 }
 
 /** Settles an attempt once, whatever told of it and however often: webhook, return page or reconciliation. */
@@ -102,11 +102,14 @@ export async function expire(tx: Transaction, attemptId: string | null): Promise
 /** The service tells that a payment went back. */
 export async function settleRefundOf(
   tx: Transaction,
-  attemptId: string | null,
+  {
+    attemptId,
+    refundedMinor,
+  }: { readonly attemptId: string | null; readonly refundedMinor: number },
   now: Date,
 ): Promise<void> {
   const found = await attemptOf(tx, attemptId);
-  if (!found) return;
+  if (!found || refundedMinor < found.payment.amountMinor) return;
   const [given] = await tx
     .select({ refund: refunds, payment: payments })
     .from(refunds)

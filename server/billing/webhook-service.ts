@@ -24,7 +24,7 @@ async function apply(tx: Transaction, event: Verified, now: Date): Promise<void>
     case 'payment-succeeded':
       return settle(tx, event.payment, now);
     case 'charge-refunded':
-      return settleRefundOf(tx, event.payment.attemptId, now);
+      return settleRefundOf(tx, { ...event.payment, refundedMinor: event.refundedMinor }, now);
     case 'payment-failed':
     case 'other':
       // A refused card leaves the pay page open for another try.
