@@ -1,6 +1,7 @@
 import type { Logger } from 'pino';
 import type { DemoAccount } from '@shared/contracts/accounts-contract';
 import type { Database } from './database/client';
+import type { Mailer } from './mail/mailer';
 import type { Payments } from './payments/payments';
 
 export interface Clock {
@@ -33,6 +34,8 @@ export interface AppContext {
   readonly clock: Clock;
   /** Null while no payment service is configured. */
   readonly payments: Payments | null;
+  /** Null while no mail server is configured: messages wait in the outbox. */
+  readonly mailer: Mailer | null;
   readonly settings: AppSettings;
   readonly log: Logger;
 }

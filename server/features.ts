@@ -9,6 +9,9 @@ import { chargeForPlaces } from './billing/charge-listener';
 import type { RouteDefinition } from './http/route';
 import { serviceRoutes } from './http/service-routes';
 import type { JobDefinition } from './jobs/job';
+import { messagesJobs } from './messages/messages-jobs';
+import { messagesRoutes } from './messages/messages-routes';
+import { remindOfAppointments } from './messages/reminder-listener';
 import type { AppointmentListener } from './schedule/appointment-events';
 import { messageOfAppointments } from './schedule/appointment-messages';
 import { floorRoutes } from './floor/floor-routes';
@@ -22,6 +25,7 @@ import { sitesRoutes } from './settings/sites-routes';
 /** Who acts when a place is taken or given back, inside that transaction and in this order. */
 const appointmentListeners: readonly AppointmentListener[] = [
   messageOfAppointments,
+  remindOfAppointments,
   chargeForPlaces,
 ];
 
@@ -37,6 +41,7 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...floorRoutes,
     ...patientsRoutes,
     ...billingRoutes,
+    ...messagesRoutes,
     ...reportsRoutes,
   ];
   return routes;
@@ -47,5 +52,6 @@ export const featureJobs: readonly JobDefinition[] = [
   ...accountsJobs,
   ...auditJobs,
   ...billingJobs,
+  ...messagesJobs,
   ...scheduleJobs,
 ];

@@ -11,6 +11,8 @@ import { demoAccounts } from './demo/accounts';
 import { featureJobs } from './features';
 import { createLog } from './http/log';
 import { startWorker } from './jobs/worker';
+import type { Mailer } from './mail/mailer';
+import { createMailer } from './mail/smtp-mailer';
 import { createPayments } from './payments/stripe-payments';
 
 /** Beside the bundle in dist/server; in development the client serves itself. */
@@ -29,6 +31,10 @@ const settingsOf = (config: Config): AppSettings => ({
   checkResponses: false,
 });
 
+function mailerOf({ smtp: { url, from } }: Config): Mailer | null {
+  return url === null ? null : createMailer({ url, from });
+}
+
 function contextOf(config: Config): AppContext {
   const log = createLog(config.logLevel);
   const open = (url: string): Database =>
@@ -41,6 +47,7 @@ function contextOf(config: Config): AppContext {
     reportsDatabase: config.databaseReplicaUrl ? open(config.databaseReplicaUrl) : database,
     clock: { now: () => new Date() },
     payments: config.stripe && createPayments(config.stripe),
+    mailer: mailerOf(config),
     log,
     settings: settingsOf(config),
   };
@@ -80,6 +87,7 @@ async function start(): Promise<void> {
   let stopping: Promise<void> | undefined;
   const stop = async (): Promise<void> => {
     await Promise.all([close(server), worker?.stop()]);
+    context.mailer?.close();
     await context.database.$client.end();
     if (context.reportsDatabase !== context.database) await context.reportsDatabase.$client.end();
     context.log.info('stopped');

@@ -43,6 +43,24 @@ interface UsedToken {
 export const passwordLink = (origin: string, token: string): string =>
   `${origin}${setPasswordPath}#token=${token}`;
 
+/** Makes a link for one use, to be sent at once. */
+export async function issueLink(
+  tx: Transaction,
+  asked: {
+    readonly purpose: TokenPurpose;
+    readonly userId: string;
+    readonly origin: string;
+    readonly now: Date;
+  },
+): Promise<{ readonly link: string; readonly expiresAt: Date }> {
+  const { purpose, userId, origin, now } = asked;
+  const token = await issueToken(tx, purpose, userId, now);
+  return {
+    link: passwordLink(origin, token),
+    expiresAt: new Date(now.getTime() + LIFETIME[purpose]),
+  };
+}
+
 /**
  * Uses a token up, together with all others of its person: of several calls at once only one has it.
  * @throws Failure `link-expired` when it was used, has expired, is for something else, or never was

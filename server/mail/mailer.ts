@@ -32,6 +32,8 @@ export type MailOutcome =
 
 /** `detail` is for the log and for staff: it may hold what the mail server said. */
 export interface Mailer {
+  /** The name that people see as the sender. */
+  readonly senderName: string;
   /** Tries once, at most 60 s; never throws for what a mail server or a network does. */
   send(mail: OutgoingMail): Promise<MailOutcome>;
   /** Lets what is under way finish and closes the connections. */

@@ -49,6 +49,7 @@ export function createMailer(config: SmtpConfig): Mailer {
   };
 
   return {
+    senderName: from.name || from.address,
     send(mail) {
       const fault = checkMail(mail);
       if (fault) return Promise.resolve({ outcome: 'permanent', ...fault });

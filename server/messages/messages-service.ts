@@ -1,9 +1,10 @@
 import { v7 as uuidv7 } from 'uuid';
+import type { MessageKind } from '@shared/contracts/messages-contract';
 import type { Transaction } from '../database/client';
 import { addJob } from '../jobs/job';
 
 export interface NewMessage {
-  readonly kind: string;
+  readonly kind: MessageKind;
   /** A message with the same key is sent once, ever. */
   readonly dedupeKey: string;
   readonly userId?: string;
@@ -24,4 +25,13 @@ export async function enqueueMessage(tx: Transaction, message: NewMessage): Prom
   );
   if (added.rowCount === 0) return;
   await addJob(tx, 'send-message', { outboxId: id }, { jobKey: dedupeKey, runAt: dueAt });
+}
+
+/** Takes back a message that has not gone out; one that is on its way reads the state again by itself. */
+export async function withdrawMessage(tx: Transaction, dedupeKey: string): Promise<void> {
+  await tx.connection.query(
+    `UPDATE outbox SET status = 'cancelled', last_error = 'withdrawn'
+      WHERE dedupe_key = $1 AND status = 'pending'`,
+    [dedupeKey],
+  );
 }

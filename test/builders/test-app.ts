@@ -25,6 +25,7 @@ export interface TestAppOptions {
   readonly clock?: TestClock;
   readonly settings?: Partial<AppSettings>;
   readonly payments?: AppContext['payments'];
+  readonly mailer?: AppContext['mailer'];
   /** Mounted beside the product's own. */
   readonly extraRoutes?: readonly RouteDefinition[];
 }
@@ -57,6 +58,7 @@ function appOn(testDatabase: TestDatabase, options: TestAppOptions): TestApp {
     reportsDatabase: database,
     clock,
     payments: options.payments ?? null,
+    mailer: options.mailer ?? null,
     settings: { ...testSettings, ...options.settings },
     log,
   };

@@ -272,6 +272,11 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
     strangers: 200,
     record: () => ({ body: {} }),
   },
+  'POST /api/messages/undelivered': {
+    who: takingPayments,
+    strangers: 200,
+    record: () => ({ body: {} }),
+  },
   'POST /api/payments/webhook': { who: 'anyone', none: 'the signature decides' },
   'DELETE /api/closures/:id': { who: planning, ...timetable },
 

@@ -35,6 +35,8 @@ export const outbox = pgTable(
     dueAt: instant().notNull(),
     status: outboxStatus().notNull().default('pending'),
     attempts: integer().notNull().default(0),
+    /** Not tried before: the end of a worker's hold on it, or of the wait after a failed try. */
+    holdUntil: instant(),
     lastError: text(),
     sentAt: instant(),
     createdAt: madeAt(),

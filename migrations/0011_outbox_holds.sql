@@ -1,0 +1,1 @@
+ALTER TABLE "outbox" ADD COLUMN "hold_until" timestamp with time zone;
