@@ -18,6 +18,7 @@ export interface Csrf {
 /** Signed double submit; a visitor is known by a cookie of its own, so that no session row is made for one. */
 export function createCsrf(settings: AppSettings): Csrf {
   const { secureCookies: secure, csrfSecret, origin } = settings;
+  const own = ownOrigins(origin);
   const visitorCookie = cookieName('visitor', secure);
   const visitors = new WeakMap<Request, string>();
   const { generateCsrfToken, validateRequest } = doubleCsrf({
@@ -53,14 +54,22 @@ export function createCsrf(settings: AppSettings): Csrf {
       request.cookies = cookiesOf(request);
       return validateRequest(request);
     },
-    isForeign: (request) => isForeign(request, origin),
+    isForeign: (request) => isForeign(request, own),
   };
 }
 
+/** Our own origin; on this machine alone, by either of its names. */
+function ownOrigins(origin: string): ReadonlySet<string> {
+  const { protocol, hostname, port } = new URL(origin);
+  const names = ['127.0.0.1', 'localhost'];
+  if (protocol !== 'http:' || !names.includes(hostname)) return new Set([origin]);
+  return new Set(names.map((name) => `http://${name}${port && `:${port}`}`));
+}
+
 /** A browser states where a request comes from and pages cannot forge it; programs state nothing. */
-function isForeign(request: Request, origin: string): boolean {
+function isForeign(request: Request, own: ReadonlySet<string>): boolean {
   const site = request.get('sec-fetch-site');
   if (site !== undefined && site !== 'same-origin' && site !== 'none') return true;
   const stated = request.get('origin');
-  return stated !== undefined && stated !== origin;
+  return stated !== undefined && !own.has(stated);
 }

@@ -54,7 +54,11 @@ export function requestLog(log: Logger): RequestHandler {
       res: (response: Response) => ({ status: response.statusCode }),
       err: serializeError,
     },
-    customProps: (request) => ({ route: routeOf(request), userId: request.actor?.id ?? null }),
+    customProps: (request, response) => ({
+      route: routeOf(request),
+      userId: request.actor?.id ?? null,
+      code: response.locals['code'] as unknown,
+    }),
     customLogLevel: (_request, response, error) =>
       error || response.statusCode >= 500 ? 'error' : 'info',
     customSuccessMessage: () => 'call',

@@ -74,6 +74,7 @@ function send(route: RouteDefinition, response: Response, answer: AnyAnswer): vo
   const kind = route.response[answer.status];
   response.status(answer.status).set(answer.headers ?? {});
   if (kind && 'stream' in kind) {
+    response.type(kind.stream).flushHeaders();
     (answer.body as (response: Response) => void)(response);
   } else if (kind && 'text' in kind) {
     response.type(kind.text).send(answer.body);

@@ -59,6 +59,7 @@ export const callId = (request: Request): string => request.id as string;
 export function sendProblem(response: Response, failure: Failure): void {
   const { code, details } = failure;
   const status = errorStatus[code];
+  response.locals['code'] = code;
   if (details.retryAfterSeconds !== undefined) {
     response.set('Retry-After', String(Math.max(1, Math.ceil(details.retryAfterSeconds))));
   }

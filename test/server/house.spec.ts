@@ -1,10 +1,11 @@
 import { randomUUID } from 'node:crypto';
+import type { Response } from 'express';
 import request from 'supertest';
 import * as z from 'zod';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { fail } from '../../server/http/failure';
 import { created, noContent, ok } from '../../server/http/answers';
-import { route, textAnswer, type RouteDefinition } from '../../server/http/route';
+import { eventStream, route, textAnswer, type RouteDefinition } from '../../server/http/route';
 import { createApp } from '../../server/app';
 import { suppressions } from '../../server/database/schema';
 import { agentFor, visitor, type Agent } from '../builders/agent';
@@ -70,6 +71,21 @@ const routes: RouteDefinition[] = [
   route({
     ...anything,
     method: 'get',
+    path: '/api/stream',
+    keepsSessionAlive: false,
+    request: {},
+    response: { 200: eventStream },
+    handler: () =>
+      Promise.resolve(
+        ok((response: Response) => {
+          response.write('data: one\n\n');
+          setTimeout(() => response.end('data: two\n\n'), 30);
+        }),
+      ),
+  }),
+  route({
+    ...anything,
+    method: 'get',
     path: '/api/files/:token.csv',
     access: 'public',
     request: { params: z.object({ token: z.string() }) },
@@ -93,6 +109,10 @@ describe('the way of a request', () => {
     const empty = await agent.post('/api/things').send({ how: 'quietly' }).expect(204);
     expect(empty.text).toBe('');
     await agent.post('/api/things/search').send({ q: 'x' }).expect(200, { q: 'x' });
+    const stream = await agent.get('/api/stream').set('Accept-Encoding', 'gzip').expect(200);
+    expect(stream.headers['content-type']).toBe('text/event-stream; charset=utf-8');
+    expect(stream.headers).not.toHaveProperty('content-encoding');
+    expect(stream.text).toBe('data: one\n\ndata: two\n\n');
     const text = await agent.get('/api/files/tok.csv').expect(200);
     expect(text.headers['content-type']).toBe('text/csv; charset=utf-8');
     expect(text.text).toContain('tok,1');
@@ -134,6 +154,13 @@ describe('the way of a request', () => {
       ms: expect.any(Number),
       msg: 'call',
     });
+  });
+
+  it('says in the log what was refused and why, and nothing of what was sent', async () => {
+    await agent.post('/api/things').send({ how: 'well', secret: 'hush' }).expect(422);
+    const line = house.logged().at(-1);
+    expect(line).toMatchObject({ res: { status: 422 }, code: 'invalid-request' });
+    expect(JSON.stringify(line)).not.toContain('hush');
   });
 
   it('says when to try again', async () => {
