@@ -52,7 +52,10 @@ const NEEDED: Readonly<Record<CompletionDefinition, string>> = {
 const STILL_OPEN = `e.status IN ('active', 'on-hold')
   AND (($3::timestamptz AT TIME ZONE s.time_zone)::date - e.first_session_on) <= ${WINDOW_DAYS}`;
 
-/** The courses of a scope, each with its group and its state. Takes the values of `scopeValues`. */
+/**
+ * The courses of a scope, each with its group and its state. Takes the values of `scopeValues`. Supervised courses alone:
+ * maintenance that people pay themselves (phase 3) follows no event and has no end to complete.
+ */
 export const courseRows = ({ definition, groupBy }: CompletionScope): string => `
   SELECT e.*, p.family_name, p.given_name, p.record_number, s.name AS site_name, ${GROUPS[groupBy]} AS grouped,
     CASE WHEN e.attended_in_window >= ${NEEDED[definition]} THEN 'completed'
@@ -61,7 +64,7 @@ export const courseRows = ({ definition, groupBy }: CompletionScope): string => 
   JOIN patients p ON p.id = e.patient_id
   JOIN sites s ON s.id = e.site_id
   WHERE e.first_session_on >= $1::date AND e.first_session_on < $2::date
-    AND e.site_id = ANY($4::uuid[])
+    AND e.phase = 2 AND e.site_id = ANY($4::uuid[])
     AND ($5::uuid IS NULL OR e.site_id = $5)
     AND ($6::text IS NULL OR p.sex_at_birth::text = $6)
     AND ($7::text IS NULL OR ${AGE_BAND} = $7)
