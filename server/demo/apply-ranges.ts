@@ -1,4 +1,4 @@
-import { placeHeartRate } from '@shared/clinical/placement';
+import { placeReading } from '@shared/clinical/placement';
 import type { PrescriptionAnswer } from '@shared/clinical/prescribing';
 import { bpm } from '@shared/units';
 import type { PoolClient } from 'pg';
@@ -90,8 +90,8 @@ export function againstStanding(session: Session, ranges: readonly SignedRange[]
       ...reading,
       prescriptionId,
       placement:
-        range && reading.phase === 'exercise' && typeof reading.heartRate === 'number'
-          ? placeHeartRate(bpm(reading.heartRate), range.answer)
+        range && typeof reading.heartRate === 'number'
+          ? placeReading(reading.phase, bpm(reading.heartRate), range.answer)
           : null,
     })),
   };

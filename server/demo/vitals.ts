@@ -1,5 +1,5 @@
 import { bpm } from '@shared/units';
-import { placeHeartRate } from '@shared/clinical/placement';
+import { placeReading } from '@shared/clinical/placement';
 import type { PrescriptionAnswer } from '@shared/clinical/prescribing';
 import type { RowOf } from './row-of';
 import type { Chart } from './chart';
@@ -200,8 +200,8 @@ function withAngina(reading: Reading, anginaAt: number | null): Reading {
 }
 
 function placementOf(facts: SessionFacts, { phase, heartRate }: Reading): VitalRow['placement'] {
-  if (phase !== 'exercise' || typeof heartRate !== 'number' || !facts.answer) return null;
-  return placeHeartRate(bpm(heartRate), facts.answer);
+  if (typeof heartRate !== 'number' || !facts.answer) return null;
+  return placeReading(phase, bpm(heartRate), facts.answer);
 }
 
 function rowOf(facts: SessionFacts, reading: Reading, name: string): VitalRow {
