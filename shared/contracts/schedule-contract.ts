@@ -19,15 +19,6 @@ export const appointmentStatuses = [
 export const appointmentStatusSchema = z.enum(appointmentStatuses);
 export type AppointmentStatus = z.infer<typeof appointmentStatusSchema>;
 
-/** The statuses in which an appointment holds its place. */
-export const placeHolding: readonly AppointmentStatus[] = [
-  'booked',
-  'arrived',
-  'checked-in',
-  'fulfilled',
-  'noshow',
-];
-
 export const classKindSchema = z.enum(['exercise', 'orientation', 'education']);
 export type ClassKind = z.infer<typeof classKindSchema>;
 

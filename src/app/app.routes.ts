@@ -12,6 +12,11 @@ export function area(path: AreaPath, loadChildren: LoadChildrenCallback): Route 
 export const routes: Routes = [
   { path: '', pathMatch: 'full', redirectTo: landing },
   ...accountsRoutes,
+  area('schedule', async () => (await import('./schedule/schedule.routes')).scheduleRoutes),
+  area(
+    'my/sessions',
+    async () => (await import('./my-sessions/my-sessions.routes')).mySessionsRoutes,
+  ),
   area('reports', async () => (await import('./reports/reports.routes')).reportsRoutes),
   area('patients', async () => (await import('./patients/patients.routes')).patientsRoutes),
   area('my/details', async () => (await import('./my-details/my-details.routes')).myDetailsRoutes),

@@ -29,7 +29,14 @@ export const areas = [
     path: 'schedule',
     label: 'Schedule',
     icon: 'calendar-month',
-    roles: ['front-desk', 'exercise-physiologist', 'physician', 'nurse', 'director'],
+    roles: [
+      'front-desk',
+      'exercise-physiologist',
+      'physician',
+      'nurse',
+      'director',
+      'administrator',
+    ],
   },
   {
     path: 'floor',

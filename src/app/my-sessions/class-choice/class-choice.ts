@@ -1,0 +1,49 @@
+import { ChangeDetectionStrategy, Component, computed, input, output } from '@angular/core';
+import { MatButton } from '@angular/material/button';
+import type { ClassDate } from '@shared/contracts/schedule-contract';
+import { formatMoney } from '@shared/units/money';
+import { dateInWords, spanOf } from '../../ui/site-time/site-time';
+import { type Own, isBookable, ownIn, placesLeft } from '../bookable-days';
+
+/** Classes to choose from, each with its places left and what it costs, said before it is booked. */
+@Component({
+  selector: 'app-class-choice',
+  imports: [MatButton],
+  templateUrl: './class-choice.html',
+  styleUrl: './class-choice.scss',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class ClassChoice {
+  readonly dates = input.required<readonly ClassDate[]>();
+  readonly own = input.required<Own>();
+  readonly timeZone = input.required<string>();
+  /** Whether each tells its day too, for a list of several days. */
+  readonly withDay = input(false);
+  readonly busy = input(false);
+  readonly booked = output<ClassDate>();
+
+  protected readonly rows = computed(() => {
+    const now = new Date();
+    return this.dates().map((date) => {
+      const left = placesLeft(date, this.own());
+      return {
+        date,
+        day: dateInWords(date.localDate, 'long'),
+        span: spanOf(date, this.timeZone()),
+        price: date.price && formatMoney(date.price.amountMinor, date.price.currency),
+        bookable: isBookable(date, this.own(), this.timeZone(), now),
+        why: this.#whyNot(date, left, now),
+        left: left === 1 ? '1 place left' : `${left} places left`,
+      };
+    });
+  });
+
+  #whyNot(date: ClassDate, left: number, now: Date): string {
+    if (ownIn(date, this.own())) return 'This one is yours';
+    if (date.status !== 'scheduled') return 'No class on this day';
+    if (new Date(date.startsAt) <= now) return 'Already started';
+    if (date.booked >= date.capacity) return 'Full';
+    if (left <= 0) return 'No monitored place left';
+    return 'Not open for you at this time';
+  }
+}

@@ -1,0 +1,124 @@
+import { provideHttpClient, withInterceptors } from '@angular/common/http';
+import { HttpTestingController, provideHttpClientTesting } from '@angular/common/http/testing';
+import { type ComponentFixture, TestBed } from '@angular/core/testing';
+import { provideRouter } from '@angular/router';
+import { Notices } from '../../core/notices';
+import { problemInterceptor } from '../../core/problem-interceptor';
+import { SessionsPage } from './sessions-page';
+
+const id = (number: number) => `019ae2f0-7e55-7000-8000-00000000000${number}`;
+const inDays = (days: number) => new Date(Date.now() + days * 86_400_000).toISOString();
+
+const session = (number: number, days: number, given: object = {}) => ({
+  id: id(number),
+  classDateId: id(number),
+  patientId: id(9),
+  status: 'booked',
+  startsAt: inDays(days),
+  endsAt: inDays(days + 0.04),
+  version: 1,
+  className: `Class ${number}`,
+  kind: 'exercise',
+  localDate: inDays(days).slice(0, 10),
+  monitored: true,
+  price: null,
+  cancelledReason: null,
+  site: { id: id(8), name: 'Quayside', timeZone: 'UTC', phone: '555-0100' },
+  ...given,
+});
+
+describe('SessionsPage', () => {
+  let fixture: ComponentFixture<SessionsPage>;
+  let server: HttpTestingController;
+  let undo: (() => void) | undefined;
+
+  const page = () => fixture.nativeElement as HTMLElement;
+  const words = () => page().textContent.replace(/\s+/g, ' ');
+
+  async function settle(): Promise<void> {
+    await new Promise((resolve) => setTimeout(resolve));
+    fixture.detectChanges();
+  }
+
+  async function answer(items: object[]): Promise<void> {
+    server.expectOne(({ url }) => url === '/api/appointments').flush({ items, nextCursor: null });
+    await settle();
+  }
+
+  async function press(text: string): Promise<void> {
+    const buttons = [...page().querySelectorAll('button')];
+    buttons.find((button) => button.textContent.trim() === text)?.click();
+    await settle();
+  }
+
+  beforeEach(async () => {
+    TestBed.configureTestingModule({
+      providers: [
+        provideRouter([]),
+        provideHttpClient(withInterceptors([problemInterceptor])),
+        provideHttpClientTesting(),
+        {
+          provide: Notices,
+          useValue: {
+            offerUndo: (_: string, back: () => void) => {
+              undo = back;
+              return Promise.resolve();
+            },
+          },
+        },
+      ],
+    });
+    server = TestBed.inject(HttpTestingController);
+    fixture = TestBed.createComponent(SessionsPage);
+    fixture.detectChanges();
+    await settle();
+  });
+
+  afterEach(() => {
+    server.verify();
+  });
+
+  it('shows the next session first, and what it costs', async () => {
+    const price = { name: 'Class', amountMinor: 1800, currency: 'USD' };
+    await answer([
+      session(1, -0.1),
+      session(2, 1, { status: 'cancelled' }),
+      session(3, 2),
+      session(4, 3, { price }),
+    ]);
+    const [next, ...later] = page().querySelectorAll('app-session-card');
+    expect(next?.textContent).toContain('Class 3');
+    expect(later.map((card) => card.textContent)).toEqual([expect.stringContaining('Class 4')]);
+    expect(words()).toContain('You pay $18.00 for this class.');
+    expect(words()).not.toContain('Class 2');
+  });
+
+  it('says what a late cancellation is before it is one', async () => {
+    await answer([session(3, 0.5)]);
+    await press('Cancel');
+    expect(words()).toContain('It is less than 24 hours before the class.');
+    await press('Keep it');
+    expect(words()).not.toContain('It is less than 24 hours before the class.');
+  });
+
+  it('cancels, and books again when it is taken back', async () => {
+    await answer([session(3, 2)]);
+    await press('Cancel');
+    expect(words()).toContain('Your place will be free for someone else.');
+    await press('Yes, cancel it');
+    const request = server.expectOne(`/api/appointments/${id(3)}`);
+    expect(request.request.body).toEqual({ status: 'cancelled', version: 1 });
+    request.flush({ ...session(3, 2), status: 'cancelled', version: 2 });
+    await settle();
+    await answer([]);
+    expect(words()).toContain('You have no session booked');
+    undo?.();
+    await settle();
+    const again = server.expectOne('/api/appointments');
+    expect(again.request.body).toEqual({ classDateId: id(3) });
+    again.flush(session(4, 2));
+    await settle();
+    await answer([session(4, 2)]);
+    expect(words()).toContain('Class 4');
+  });
+});
