@@ -5,6 +5,7 @@ import type { AppContext } from './app-context';
 import { auditJobs } from './audit/audit-jobs';
 import { billingJobs } from './billing/billing-jobs';
 import { billingRoutes } from './billing/billing-routes';
+import { calendarRoutes } from './calendar/calendar-routes';
 import { chargeForPlaces } from './billing/charge-listener';
 import type { RouteDefinition } from './http/route';
 import { serviceRoutes } from './http/service-routes';
@@ -41,6 +42,7 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...floorRoutes,
     ...patientsRoutes,
     ...billingRoutes,
+    ...calendarRoutes,
     ...messagesRoutes,
     ...reportsRoutes,
   ];

@@ -272,6 +272,8 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
     strangers: 200,
     record: () => ({ body: {} }),
   },
+  'POST /api/my/calendar-link': { who: ['patient'], none: 'one’s own calendar alone' },
+  'GET /api/calendar/:token.ics': { who: 'anyone', none: 'the token decides' },
   'POST /api/messages/undelivered': {
     who: takingPayments,
     strangers: 200,

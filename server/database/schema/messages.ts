@@ -1,4 +1,5 @@
 import {
+  customType,
   index,
   integer,
   jsonb,
@@ -11,6 +12,8 @@ import {
 import { users } from './accounts';
 import { id, instant, madeAt } from './columns';
 import { patients } from './patients';
+
+const bytes = customType<{ data: Buffer }>({ dataType: () => 'bytea' });
 
 export const outboxStatus = pgEnum('outbox_status', [
   'pending',
@@ -51,5 +54,14 @@ export const outbox = pgTable(
 export const suppressions = pgTable('suppressions', {
   address: text().primaryKey(),
   reason: text().notNull(),
+  createdAt: madeAt(),
+});
+
+/** Where a patient's own calendar program reads; one address a patient, kept as a hash. */
+export const calendarLinks = pgTable('calendar_links', {
+  patientId: uuid()
+    .primaryKey()
+    .references(() => patients.id),
+  tokenHash: bytes().notNull().unique(),
   createdAt: madeAt(),
 });
