@@ -2,6 +2,7 @@ import type { LoadChildrenCallback, Route, Routes } from '@angular/router';
 import { accountsRoutes } from './accounts/accounts.routes';
 import { allow, landing } from './core/access-guard';
 import { type AreaPath, areaOf } from './core/navigation';
+import { paymentRoutes } from './my-payments/payment.routes';
 
 /** The lazy routes of an area, open to the roles that navigation.ts names; the rail shows it from then on. */
 export function area(path: AreaPath, loadChildren: LoadChildrenCallback): Route {
@@ -20,6 +21,12 @@ export const routes: Routes = [
   area('reports', async () => (await import('./reports/reports.routes')).reportsRoutes),
   area('patients', async () => (await import('./patients/patients.routes')).patientsRoutes),
   area('my/details', async () => (await import('./my-details/my-details.routes')).myDetailsRoutes),
+  area('billing', async () => (await import('./billing/billing.routes')).billingRoutes),
+  area(
+    'my/payments',
+    async () => (await import('./my-payments/my-payments.routes')).myPaymentsRoutes,
+  ),
+  ...paymentRoutes,
   {
     path: 'not-allowed',
     title: 'Not allowed',

@@ -1,0 +1,13 @@
+import type { Routes } from '@angular/router';
+
+export const billingRoutes: Routes = [
+  {
+    path: '',
+    loadComponent: async () => (await import('./charges-page/charges-page')).ChargesPage,
+  },
+  {
+    path: 'messages',
+    title: 'Messages that did not arrive',
+    loadComponent: async () => (await import('./messages-page/messages-page')).MessagesPage,
+  },
+];

@@ -1,0 +1,53 @@
+import { ChangeDetectionStrategy, Component, inject } from '@angular/core';
+import { MatButton } from '@angular/material/button';
+import { RouterLink } from '@angular/router';
+import type { Undelivered } from '@shared/contracts/messages-contract';
+import { EmptyState } from '../../ui/empty-state/empty-state';
+import { PageHeader } from '../../ui/page-header/page-header';
+import { ProblemMessage } from '../../ui/problem-message/problem-message';
+import { Skeleton } from '../../ui/skeleton/skeleton';
+import { BillingClient } from '../billing-client';
+import { PagedList } from '../paged-list';
+
+const kinds: Readonly<Record<Undelivered['kind'], string>> = {
+  'booking-confirmation': 'Booking confirmed',
+  'booking-cancellation': 'Booking cancelled',
+  reminder: 'Reminder',
+  receipt: 'Receipt',
+  invitation: 'Invitation to an account',
+  'password-reset': 'Link for a new password',
+};
+
+const reasons: Readonly<Record<Undelivered['reason'], string>> = {
+  'no-address': 'The record holds no e-mail address.',
+  'address-refused-before': 'The address refused an earlier message.',
+  'address-refused': 'The address does not exist.',
+  'message-refused': 'The mail server would not take it.',
+  'not-reached': 'The mail server could not be reached for two days.',
+};
+
+/** Whom no message reached, so that the desk can call. */
+@Component({
+  selector: 'app-messages-page',
+  imports: [EmptyState, MatButton, PageHeader, ProblemMessage, RouterLink, Skeleton],
+  templateUrl: './messages-page.html',
+  styleUrl: '../charges-page/charges-page.scss',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class MessagesPage {
+  readonly #client = inject(BillingClient);
+
+  protected readonly list = new PagedList((cursor) => this.#client.undelivered(cursor));
+  protected readonly kinds = kinds;
+  protected readonly reasons = reasons;
+
+  constructor() {
+    void this.list.begin();
+  }
+
+  protected timeOf({ dueAt }: Undelivered): string {
+    return new Intl.DateTimeFormat('en-US', { dateStyle: 'medium', timeStyle: 'short' }).format(
+      new Date(dueAt),
+    );
+  }
+}
