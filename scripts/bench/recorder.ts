@@ -1,0 +1,78 @@
+import { createServer } from 'node:http';
+import type { AddressInfo } from 'node:net';
+import pg from 'pg';
+import { createApp } from '../../server/app';
+import type { AppContext } from '../../server/app-context';
+import { openDatabase } from '../../server/database/client';
+import { featureRoutes } from '../../server/features';
+import { createLog } from '../../server/http/log';
+import type { Product } from './product';
+
+export interface Statement {
+  readonly text: string;
+  readonly values: readonly unknown[];
+}
+
+/** What the house adds to the business of a request: its own cost is what is measured. */
+const house =
+  /^\s*(BEGIN|COMMIT|ROLLBACK)|FROM sessions|UPDATE sessions|INSERT INTO audit_events|AS "userId" FROM patients/i;
+
+function contextOf(product: Product): AppContext {
+  const database = openDatabase(product.databaseUrl);
+  return {
+    database,
+    reportsDatabase: database,
+    clock: { now: () => new Date() },
+    payments: null,
+    log: createLog('silent'),
+    settings: {
+      origin: product.url,
+      secureCookies: false,
+      sessionSecret: product.secrets.session,
+      csrfSecret: product.secrets.csrf,
+      trustProxyHops: 0,
+      demo: true,
+      demoAccounts: [],
+      clientFolder: null,
+      version: 'bench',
+      checkResponses: false,
+    },
+  };
+}
+
+export interface Recorder {
+  /** The business statements of one call, in order. */
+  readonly record: (path: string, init: RequestInit) => Promise<Statement[]>;
+  readonly close: () => Promise<void>;
+}
+
+/** The server in this process, its connections watched: a bare handler then runs the very same SQL. */
+export async function startRecorder(product: Product): Promise<Recorder> {
+  const heard: Statement[] = [];
+  // eslint-disable-next-line @typescript-eslint/unbound-method -- called with its own `this` below
+  const original = pg.Client.prototype.query;
+  pg.Client.prototype.query = function (this: pg.Client, ...given: unknown[]) {
+    const [first, second] = given;
+    const config = typeof first === 'string' ? { text: first, values: second } : first;
+    const { text, values } = config as { text: string; values?: unknown[] };
+    heard.push({ text, values: Array.isArray(values) ? values : [] });
+    return Reflect.apply(original, this, given) as never;
+  } as typeof original;
+  const context = contextOf(product);
+  const server = createServer(createApp(context, featureRoutes(context)));
+  await new Promise<void>((resolve) => server.listen(0, '127.0.0.1', resolve));
+  const { port } = server.address() as AddressInfo;
+  return {
+    record: async (path, init) => {
+      heard.length = 0;
+      const response = await fetch(`http://127.0.0.1:${port}${path}`, init);
+      if (!response.ok) throw new Error(`${path}: ${await response.text()}`);
+      return heard.filter(({ text }) => !house.test(text));
+    },
+    close: async () => {
+      pg.Client.prototype.query = original;
+      server.close();
+      await context.database.$client.end();
+    },
+  };
+}
