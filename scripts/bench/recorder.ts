@@ -53,11 +53,11 @@ export async function startRecorder(product: Product): Promise<Recorder> {
   const original = pg.Client.prototype.query;
   pg.Client.prototype.query = function (this: pg.Client, ...given: unknown[]) {
     const [first, second] = given;
-    const config = typeof first === 'string' ? { text: first, values: second } : first;
-    const { text, values } = config as { text: string; values?: unknown[] };
-    heard.push({ text, values: Array.isArray(values) ? values : [] });
+    const config = (typeof first === 'string' ? { text: first } : first) as Partial<Statement>;
+    const values = Array.isArray(second) ? (second as unknown[]) : (config.values ?? []);
+    heard.push({ text: config.text ?? '', values });
     return Reflect.apply(original, this, given) as never;
-  } as typeof original;
+  };
   const context = contextOf(product);
   const server = createServer(createApp(context, featureRoutes(context)));
   await new Promise<void>((resolve) => server.listen(0, '127.0.0.1', resolve));
