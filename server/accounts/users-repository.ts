@@ -1,8 +1,7 @@
-import { eq, inArray } from 'drizzle-orm';
+import { and, eq, inArray, sql } from 'drizzle-orm';
 import type { Role, User } from '@shared/contracts/accounts-contract';
 import type { Queryable, Transaction } from '../database/client';
 import { sites, userRoles, users, userSites } from '../database/schema';
-import { sql } from 'drizzle-orm';
 
 export interface UserToInsert {
   readonly email: string;
@@ -31,19 +30,32 @@ const userColumns = {
   >`ARRAY(SELECT v.site_id::text FROM user_sites v WHERE v.user_id = ${users.id} ORDER BY 1)`,
 };
 
-/** @param after name and id of the row before, null from the start */
-export const listUsers = (
-  db: Queryable,
-  limit: number,
-  after: readonly [string, string] | null,
-): Promise<User[]> =>
+const isPatient = sql`EXISTS (SELECT 1 FROM user_roles r WHERE r.user_id = ${users.id} AND r.role = 'patient')`;
+
+/** A member of staff who is a patient as well is on both lists. */
+const belongsTo = {
+  staff: sql`(NOT ${isPatient} OR EXISTS (SELECT 1 FROM user_roles r WHERE r.user_id = ${users.id} AND r.role <> 'patient'))`,
+  patients: isPatient,
+};
+
+export interface UsersPage {
+  readonly limit: number;
+  /** Name and id of the row before, null from the start. */
+  readonly after: readonly [string, string] | null;
+  readonly who?: keyof typeof belongsTo | undefined;
+}
+
+export const listUsers = (db: Queryable, { limit, after, who }: UsersPage): Promise<User[]> =>
   db
     .select(userColumns)
     .from(users)
     .where(
-      after
-        ? sql`(${users.displayName}, ${users.id}) > (${after[0]}, ${after[1]}::uuid)`
-        : undefined,
+      and(
+        after
+          ? sql`(${users.displayName}, ${users.id}) > (${after[0]}, ${after[1]}::uuid)`
+          : undefined,
+        who && belongsTo[who],
+      ),
     )
     .orderBy(users.displayName, users.id)
     .limit(limit);

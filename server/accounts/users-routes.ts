@@ -8,9 +8,10 @@ import {
 } from '@shared/contracts/accounts-contract';
 import { created, noContent, ok } from '../http/answers';
 import { decodeCursor, pageOf } from '../http/cursor';
+import { fail } from '../http/failure';
 import { route } from '../http/route';
 import { invitePatient } from './patient-account-service';
-import { listUsers } from './users-repository';
+import { findUser, listUsers } from './users-repository';
 import { changeUser, endUserSessions, inviteAgain, inviteUser } from './users-service';
 
 const byId = z.object({ id: z.uuid() });
@@ -28,8 +29,25 @@ export const usersRoutes = [
     response: { 200: usersResponseSchema },
     handler: async ({ tx, input: { query } }) => {
       const after = query.cursor ? decodeCursor(cursorKeys, query.cursor) : null;
-      const rows = await listUsers(tx, query.limit + 1, after);
+      const rows = await listUsers(tx, { limit: query.limit + 1, after, who: query.who });
       return ok(pageOf(rows, query.limit, (user) => [user.displayName, user.id]));
+    },
+  }),
+  route({
+    method: 'get',
+    path: '/api/users/:id',
+    summary: 'An account',
+    access,
+    audit: {
+      action: 'user.read',
+      objectType: 'user',
+      objectId: ({ input }) => input.params.id,
+    },
+    request: { params: byId },
+    response: { 200: userSchema },
+    handler: async ({ tx, input }) => {
+      const user = await findUser(tx, input.params.id);
+      return user ? ok(user) : fail('not-found');
     },
   }),
   route({

@@ -118,8 +118,9 @@ export const userSchema = z.object({
 });
 export type User = z.infer<typeof userSchema>;
 
-/** `GET /api/users`, by name. */
+/** `GET /api/users`, by name; `who` leaves out the others. */
 export const usersQuerySchema = z.strictObject({
+  who: z.enum(['staff', 'patients']).optional(),
   cursor: z.string().max(500).optional(),
   limit: z.coerce.number().int().min(1).max(100).default(25),
 });
@@ -127,6 +128,7 @@ export const usersResponseSchema = z.object({
   items: z.array(userSchema),
   nextCursor: z.string().nullable(),
 });
+export type UsersResponse = z.infer<typeof usersResponseSchema>;
 
 const staffRole = roleSchema.exclude(['patient']);
 
