@@ -7,6 +7,7 @@ import { billingJobs } from './billing/billing-jobs';
 import { billingRoutes } from './billing/billing-routes';
 import { calendarRoutes } from './calendar/calendar-routes';
 import { chargeForPlaces } from './billing/charge-listener';
+import { auditRoutes } from './audit/audit-routes';
 import type { RouteDefinition } from './http/route';
 import { serviceRoutes } from './http/service-routes';
 import type { JobDefinition } from './jobs/job';
@@ -16,6 +17,7 @@ import { remindOfAppointments } from './messages/reminder-listener';
 import type { AppointmentListener } from './schedule/appointment-events';
 import { messageOfAppointments } from './schedule/appointment-messages';
 import { floorRoutes } from './floor/floor-routes';
+import { policyRoutes } from './prescriptions/policy-routes';
 import { prescriptionsRoutes } from './prescriptions/prescriptions-routes';
 import { reportsRoutes } from './reports/reports-routes';
 import { scheduleJobs } from './schedule/schedule-jobs';
@@ -37,6 +39,8 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...accountsRoutes(context),
     ...usersRoutes,
     ...sitesRoutes,
+    ...auditRoutes,
+    ...policyRoutes,
     ...prescriptionsRoutes,
     ...scheduleRoutes(appointmentListeners),
     ...floorRoutes,

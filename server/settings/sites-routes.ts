@@ -1,7 +1,12 @@
-import { newSiteSchema, siteSchema, sitesResponseSchema } from '@shared/contracts/sites-contract';
+import {
+  newSiteSchema,
+  siteSchema,
+  sitesDetailsResponseSchema,
+  sitesResponseSchema,
+} from '@shared/contracts/sites-contract';
 import { created, ok } from '../http/answers';
 import { route } from '../http/route';
-import { insertSite, listSites } from './sites-repository';
+import { insertSite, listSiteDetails, listSites } from './sites-repository';
 
 export const sitesRoutes = [
   route({
@@ -14,6 +19,17 @@ export const sitesRoutes = [
     request: {},
     response: { 200: sitesResponseSchema },
     handler: async ({ context }) => ok({ items: await listSites(context.database) }),
+  }),
+  route({
+    method: 'get',
+    path: '/api/settings/sites',
+    summary: 'The sites with their addresses and telephone numbers',
+    access: { roles: ['administrator'] },
+    audit: 'none',
+    transaction: 'none',
+    request: {},
+    response: { 200: sitesDetailsResponseSchema },
+    handler: async ({ context }) => ok({ items: await listSiteDetails(context.database) }),
   }),
   route({
     method: 'post',

@@ -29,3 +29,9 @@ export const newSiteSchema = z.strictObject({
   phone: z.string().trim().min(1, 'Enter a telephone number').max(40),
 });
 export type NewSite = z.infer<typeof newSiteSchema>;
+
+/** `GET /api/settings/sites`: the sites with where they are and how to call them. */
+export const siteDetailsSchema = siteSchema.extend({ address: z.string(), phone: z.string() });
+export type SiteDetails = z.infer<typeof siteDetailsSchema>;
+
+export const sitesDetailsResponseSchema = z.object({ items: z.array(siteDetailsSchema) });

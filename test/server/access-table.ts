@@ -71,6 +71,7 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
   'POST /api/auth/change-password': { who: 'signed-in', ...ownAccount },
 
   'GET /api/users': accounts,
+  'GET /api/users/:id': accounts,
   'POST /api/users': accounts,
   'PATCH /api/users/:id': accounts,
   'POST /api/users/:id/invitation': accounts,
@@ -124,6 +125,12 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
   },
 
   'GET /api/sites': { who: 'signed-in', none: 'names of sites alone' },
+  'GET /api/settings/sites': { who: administrator, none: 'addresses of sites alone' },
+  'GET /api/audit': { who: administrator, none: 'the audit is the whole program’s' },
+  'GET /api/policy': {
+    who: [...signing, 'administrator'],
+    none: 'the policy is the whole program’s',
+  },
   'POST /api/sites': { who: administrator, none: 'names of sites alone' },
 
   'POST /api/prescriptions/evaluate': { who: prescribing, none: 'stores and reads nothing' },
