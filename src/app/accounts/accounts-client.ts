@@ -1,6 +1,7 @@
 import { HttpClient } from '@angular/common/http';
 import { Injectable, inject } from '@angular/core';
 import type {
+  ChangePasswordRequest,
   FirstAdministratorRequest,
   ForgottenPasswordRequest,
   SetPasswordRequest,
@@ -18,6 +19,11 @@ export class AccountsClient {
 
   setPassword(request: SetPasswordRequest): Observable<unknown> {
     return this.#http.post('/api/auth/password', request);
+  }
+
+  /** @throws Problem `wrong-password` when the current one is another */
+  changePassword(request: ChangePasswordRequest): Observable<unknown> {
+    return this.#http.post('/api/auth/change-password', request);
   }
 
   makeFirstAdministrator(request: FirstAdministratorRequest): Observable<unknown> {

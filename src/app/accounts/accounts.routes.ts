@@ -1,5 +1,6 @@
 import type { Routes } from '@angular/router';
-import { signedOut } from '../core/access-guard';
+import { allow, signedOut } from '../core/access-guard';
+import { staff } from '../core/navigation';
 
 export const accountsRoutes: Routes = [
   {
@@ -19,6 +20,13 @@ export const accountsRoutes: Routes = [
     title: 'Set your password',
     loadComponent: async () =>
       (await import('./set-password-page/set-password-page')).SetPasswordPage,
+  },
+  {
+    path: 'change-password',
+    title: 'Change your password',
+    canMatch: [allow({ roles: [...staff, 'patient'] })],
+    loadComponent: async () =>
+      (await import('./change-password-page/change-password-page')).ChangePasswordPage,
   },
   {
     path: 'first-administrator',

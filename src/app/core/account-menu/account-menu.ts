@@ -6,21 +6,12 @@ import {
   inject,
   viewChild,
 } from '@angular/core';
-import { Router } from '@angular/router';
-import type { Role } from '@shared/contracts/accounts-contract';
+import { Router, RouterLink } from '@angular/router';
 import { Icon } from '../../ui/icon/icon';
 import { ColourScheme, type Scheme, schemes } from '../colour-scheme';
+import { mayOpen, staff } from '../navigation';
+import { roleNames } from '../role-names';
 import { Session } from '../session';
-
-const roleNames: Record<Role, string> = {
-  patient: 'Patient',
-  nurse: 'Nurse',
-  'exercise-physiologist': 'Exercise physiologist',
-  physician: 'Physician',
-  'front-desk': 'Front desk',
-  director: 'Program director',
-  administrator: 'Administrator',
-};
 
 const schemeNames: Record<Scheme, string> = {
   system: 'As this device',
@@ -31,7 +22,7 @@ const schemeNames: Record<Scheme, string> = {
 /** Who is signed in, the choice of colours, and the way out; a native popover, so it closes with Escape. */
 @Component({
   selector: 'app-account-menu',
-  imports: [Icon],
+  imports: [Icon, RouterLink],
   templateUrl: './account-menu.html',
   styleUrl: './account-menu.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -49,6 +40,8 @@ export class AccountMenu {
       .map((role) => roleNames[role])
       .join(', '),
   );
+  /** The description of the calls is open to staff. */
+  protected readonly reference = computed(() => mayOpen({ roles: staff }, this.#session.roles()));
   protected readonly scheme = this.#colourScheme.choice;
   protected readonly schemes = schemes.map((value) => ({ value, name: schemeNames[value] }));
 
@@ -56,8 +49,12 @@ export class AccountMenu {
     this.#colourScheme.choice.set(scheme);
   }
 
-  protected async signOut(): Promise<void> {
+  protected close(): void {
     this.panel().nativeElement.hidePopover();
+  }
+
+  protected async signOut(): Promise<void> {
+    this.close();
     await this.#session.signOut();
     await this.#router.navigateByUrl('/sign-in');
   }
