@@ -1,7 +1,7 @@
 import type { LoadChildrenCallback, Route, Routes } from '@angular/router';
 import { accountsRoutes } from './accounts/accounts.routes';
 import { allow, landing } from './core/access-guard';
-import { type AreaPath, areaOf } from './core/navigation';
+import { type AreaPath, areaOf, staff } from './core/navigation';
 import { paymentRoutes } from './my-payments/payment.routes';
 
 /** The lazy routes of an area, open to the roles that navigation.ts names; the rail shows it from then on. */
@@ -27,6 +27,13 @@ export const routes: Routes = [
     async () => (await import('./my-payments/my-payments.routes')).myPaymentsRoutes,
   ),
   ...paymentRoutes,
+  area('settings', async () => (await import('./settings/settings.routes')).settingsRoutes),
+  {
+    path: 'api-reference',
+    title: 'API reference',
+    canMatch: [allow({ roles: staff })],
+    loadComponent: async () => (await import('./settings/api-page/api-page')).ApiPage,
+  },
   {
     path: 'not-allowed',
     title: 'Not allowed',

@@ -1,0 +1,159 @@
+import { DatePipe } from '@angular/common';
+import {
+  ChangeDetectionStrategy,
+  Component,
+  DestroyRef,
+  type OnInit,
+  computed,
+  inject,
+  signal,
+} from '@angular/core';
+import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
+import { FormControl, FormGroup, ReactiveFormsModule } from '@angular/forms';
+import { MatButton } from '@angular/material/button';
+import { MatError, MatFormField, MatHint, MatLabel } from '@angular/material/form-field';
+import { MatInput } from '@angular/material/input';
+import { RouterLink } from '@angular/router';
+import { type AuditEvent, auditQuerySchema } from '@shared/contracts/audit-contract';
+import { firstValueFrom } from 'rxjs';
+import { PagedList } from '../../core/paged-list';
+import { type Problem, toProblem } from '../../core/problem';
+import { EmptyState } from '../../ui/empty-state/empty-state';
+import { FieldError } from '../../ui/field-error/field-error';
+import { zodValidator } from '../../ui/field-error/zod-validator';
+import { PageHeader } from '../../ui/page-header/page-header';
+import { ProblemMessage } from '../../ui/problem-message/problem-message';
+import { Skeleton } from '../../ui/skeleton/skeleton';
+import { StateChip } from '../../ui/state-chip/state-chip';
+import { type AuditFilter, SettingsClient } from '../settings-client';
+import { detailWords } from './detail-words';
+
+interface Person {
+  readonly id: string;
+  readonly displayName: string;
+}
+
+const text = () => new FormControl('', { nonNullable: true });
+
+/** Who did what to which record, the newest first; looking at it is an event too. */
+@Component({
+  selector: 'app-audit-page',
+  imports: [
+    DatePipe,
+    EmptyState,
+    FieldError,
+    MatButton,
+    MatError,
+    MatFormField,
+    MatHint,
+    MatInput,
+    MatLabel,
+    PageHeader,
+    ProblemMessage,
+    ReactiveFormsModule,
+    RouterLink,
+    Skeleton,
+    StateChip,
+  ],
+  templateUrl: './audit-page.html',
+  styleUrls: ['../settings-page.scss', './audit-page.scss'],
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class AuditPage implements OnInit {
+  readonly #client = inject(SettingsClient);
+  readonly #destroyRef = inject(DestroyRef);
+  readonly #refused = signal<Problem | null>(null);
+  #filter: AuditFilter = {};
+
+  protected readonly people = signal<readonly Person[]>([]);
+  protected readonly zone = Intl.DateTimeFormat().resolvedOptions().timeZone;
+  protected readonly filters = new FormGroup({
+    actorId: text(),
+    recordNumber: text(),
+    action: new FormControl('', {
+      nonNullable: true,
+      validators: (control) =>
+        control.value === '' ? null : zodValidator(auditQuerySchema.shape.action)(control),
+    }),
+  });
+  protected readonly list = new PagedList<AuditEvent>(
+    (cursor) => this.#client.audit(this.#filter, cursor),
+    this.#destroyRef,
+  );
+  protected readonly problem = computed(() => this.#refused() ?? this.list.problem());
+  protected readonly rows = computed(() =>
+    this.list.items()?.map((event) => ({ ...event, words: detailWords(event) })),
+  );
+
+  ngOnInit(): void {
+    this.list.load();
+    this.#client
+      .users('staff', null)
+      .pipe(takeUntilDestroyed(this.#destroyRef))
+      .subscribe({
+        next: ({ items }) => {
+          for (const person of items) this.#offer(person);
+        },
+        error: (error: unknown) => {
+          this.#refused.set(toProblem(error));
+        },
+      });
+  }
+
+  /** Looks the record number up, then lists anew. */
+  protected async look(): Promise<void> {
+    this.filters.markAllAsTouched();
+    const { actorId, action } = this.filters.getRawValue();
+    if (this.filters.controls.action.invalid) return;
+    this.#refused.set(null);
+    try {
+      const patientId = await this.#patientOf(this.filters.controls.recordNumber.value.trim());
+      if (patientId === undefined) return;
+      this.#show({
+        ...(actorId !== '' && { actorId }),
+        ...(patientId !== null && { patientId }),
+        ...(action !== '' && { action }),
+      });
+    } catch (error) {
+      this.#refused.set(toProblem(error));
+    }
+  }
+
+  protected ofPerson(person: Person): void {
+    this.#offer(person);
+    this.filters.controls.actorId.setValue(person.id);
+    this.#show({ ...this.#filter, actorId: person.id });
+  }
+
+  protected ofPatient(patient: NonNullable<AuditEvent['patient']>): void {
+    this.filters.controls.recordNumber.setValue(patient.recordNumber ?? '');
+    this.#show({ ...this.#filter, patientId: patient.id });
+  }
+
+  protected showAll(): void {
+    this.filters.reset();
+    this.#show({});
+  }
+
+  #show(filter: AuditFilter): void {
+    this.#filter = filter;
+    this.list.restart();
+  }
+
+  #offer({ id, displayName }: Person): void {
+    this.people.update((people) =>
+      people.some((one) => one.id === id) ? people : [...people, { id, displayName }],
+    );
+  }
+
+  /** Null when no number is asked for; undefined when nobody has it, which is then told at the field. */
+  async #patientOf(recordNumber: string): Promise<string | null | undefined> {
+    if (recordNumber === '') return null;
+    const id = await firstValueFrom(this.#client.patientByNumber(recordNumber));
+    if (id !== undefined) return id;
+    const server =
+      'No patient of your sites has this number. You may also choose a number in the list.';
+    this.filters.controls.recordNumber.setErrors({ server });
+    return undefined;
+  }
+}
