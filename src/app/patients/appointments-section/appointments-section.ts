@@ -7,7 +7,7 @@ import { Skeleton } from '../../ui/skeleton/skeleton';
 import { StateChip, type Tone } from '../../ui/state-chip/state-chip';
 import { formatDay, formatTime } from '../../ui/words/dates';
 import { PatientChart } from '../patient-chart';
-import { PagedList } from '../paged-list';
+import { PagedList } from '../../core/paged-list';
 import { PatientsClient } from '../patients-client';
 
 const statusWords: Readonly<Record<AppointmentStatus, string>> = {

@@ -4,7 +4,7 @@ import { Skeleton } from '../../ui/skeleton/skeleton';
 import { ConditionsSection } from '../conditions-section/conditions-section';
 import { MedicationReview } from '../medication-review/medication-review';
 import { PatientChart } from '../patient-chart';
-import { failureOf, valueOf } from '../resource-state';
+import { failureOf, valueOf } from '../../core/resource-state';
 import { RecordSection } from '../record-section/record-section';
 import type { ListedKind } from '../record-section/section-words';
 

@@ -27,7 +27,7 @@ import { EntryField } from '../entry-field/entry-field';
 import { PatientAccess } from '../patient-access';
 import { PatientChart } from '../patient-chart';
 import { PatientsClient } from '../patients-client';
-import { valueOf } from '../resource-state';
+import { valueOf } from '../../core/resource-state';
 import { courseFields, courseRules, courseStart } from './course-form';
 
 const endings = changeEnrollmentRequestSchema.shape;

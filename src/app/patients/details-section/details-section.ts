@@ -20,7 +20,7 @@ import {
   readPatientGroup,
 } from '../patient-form/patient-form';
 import { PatientsClient } from '../patients-client';
-import { valueOf } from '../resource-state';
+import { valueOf } from '../../core/resource-state';
 
 const accountWords: Readonly<Record<Patient['account'], string>> = {
   none: 'None',

@@ -12,7 +12,7 @@ import { formatLocalDate } from '../../ui/words/dates';
 import { ceilingWords, rangeWords } from '../../ui/words/range-words';
 import { PatientAccess } from '../patient-access';
 import { PatientChart } from '../patient-chart';
-import { failureOf, valueOf } from '../resource-state';
+import { failureOf, valueOf } from '../../core/resource-state';
 
 interface Part {
   readonly path: string;

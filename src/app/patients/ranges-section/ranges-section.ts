@@ -10,7 +10,7 @@ import { StateChip, type Tone } from '../../ui/state-chip/state-chip';
 import { formatDay } from '../../ui/words/dates';
 import { PatientChart } from '../patient-chart';
 import { PatientsClient } from '../patients-client';
-import { failureOf, valueOf } from '../resource-state';
+import { failureOf, valueOf } from '../../core/resource-state';
 
 interface Standing {
   readonly words: string;

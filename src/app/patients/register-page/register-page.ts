@@ -12,7 +12,7 @@ import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { formatLocalDate } from '../../ui/words/dates';
 import { PatientForm, patientGroup, readPatientGroup } from '../patient-form/patient-form';
 import { PatientsClient } from '../patients-client';
-import { valueOf } from '../resource-state';
+import { valueOf } from '../../core/resource-state';
 
 const typingPauseMs = 300;
 
