@@ -24,6 +24,7 @@ function contextOf(product: Product): AppContext {
     reportsDatabase: database,
     clock: { now: () => new Date() },
     payments: null,
+    mailer: null,
     log: createLog('silent'),
     settings: {
       origin: product.url,

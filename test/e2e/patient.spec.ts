@@ -7,7 +7,9 @@ const desk = useDesk();
 /** Opens a day of next month on which there is a class that the patient pays: Tuesdays, Thursdays and Saturdays. */
 async function openSelfPayDay(page: Page): Promise<void> {
   await page.getByRole('button', { name: 'Next month' }).click();
-  const day = page.getByRole('gridcell', { name: /^(Tuesday|Thursday|Saturday), \w+ \d+, \d+ free/ });
+  const day = page.getByRole('gridcell', {
+    name: /^(Tuesday|Thursday|Saturday), \w+ \d+, \d+ free/,
+  });
   await day.nth(2).click();
   await page
     .getByRole('button', { name: /, you pay/ })
