@@ -95,7 +95,7 @@ function classesOf(site: SiteKey): ClassPlan[] {
     hour: maintenanceHour,
     weekdays: maintenanceDays,
     capacity: 12,
-    monitoredPlaces: 0,
+    monitoredPlaces: 4,
     selfPay: true,
   };
   return [...insured, maintenance];
