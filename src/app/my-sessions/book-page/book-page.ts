@@ -15,7 +15,7 @@ import { DEFAULT_BOOKING_WINDOW, lastPatientDate } from '@shared/scheduling/book
 import { addDays, localDateAt } from '@shared/scheduling/wall-time';
 import { Bookings } from '../../core/bookings';
 import { Notices } from '../../core/notices';
-import { type Problem, toProblem } from '../../core/problem';
+import { toProblem } from '../../core/problem';
 import { Timetable } from '../../core/timetable';
 import { Icon } from '../../ui/icon/icon';
 import { PageHeader } from '../../ui/page-header/page-header';
@@ -23,7 +23,7 @@ import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { dateInWords, otherZoneNote, spanOf } from '../../ui/site-time/site-time';
 import { Skeleton } from '../../ui/skeleton/skeleton';
 import { type Own, dayStates, isBookable } from '../bookable-days';
-import { ClassChoice } from '../class-choice/class-choice';
+import { ClassChoice, type Refused } from '../class-choice/class-choice';
 import { MonthGrid } from '../month-grid/month-grid';
 import { MySessionsClient } from '../my-sessions-client';
 
@@ -130,12 +130,12 @@ export class BookPage {
   });
 
   protected readonly busy = signal(false);
-  readonly #failed = signal<Problem | null>(null);
+  protected readonly refused = signal<Refused | null>(null);
   protected readonly problem = computed(() => {
     const failed = [this.#record, this.#appointments, this.#sites, this.#inMonth]
       .map((resource) => resource.error())
       .find((error) => error !== undefined);
-    return this.#failed() ?? (failed ? toProblem(failed) : null);
+    return failed ? toProblem(failed) : null;
   });
 
   protected chooseSite(id: string): void {
@@ -158,14 +158,14 @@ export class BookPage {
     const site = this.site();
     if (this.busy() || !site) return;
     this.busy.set(true);
-    this.#failed.set(null);
+    this.refused.set(null);
     try {
       await this.#bookings.book({ classDateId: date.id });
       await this.#router.navigateByUrl('/my/sessions');
       const when = `${dateInWords(date.localDate, 'long')}, ${spanOf(date, site.timeZone)}`;
       await this.#notices.say(`You are booked: ${when}.`);
     } catch (error) {
-      this.#failed.set(toProblem(error));
+      this.refused.set({ classDateId: date.id, problem: toProblem(error) });
       for (const resource of [this.#inMonth, this.#soon, this.#appointments]) resource.reload();
     } finally {
       this.busy.set(false);

@@ -2,13 +2,21 @@ import { ChangeDetectionStrategy, Component, computed, input, output } from '@an
 import { MatButton } from '@angular/material/button';
 import type { ClassDate } from '@shared/contracts/schedule-contract';
 import { formatMoney } from '@shared/units/money';
+import type { Problem } from '../../core/problem';
+import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { dateInWords, spanOf } from '../../ui/site-time/site-time';
 import { type Own, isBookable, ownIn, placesLeft } from '../bookable-days';
+
+/** A class that could not be booked, and why. */
+export interface Refused {
+  readonly classDateId: string;
+  readonly problem: Problem;
+}
 
 /** Classes to choose from, each with its places left and what it costs, said before it is booked. */
 @Component({
   selector: 'app-class-choice',
-  imports: [MatButton],
+  imports: [MatButton, ProblemMessage],
   templateUrl: './class-choice.html',
   styleUrl: './class-choice.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -20,6 +28,8 @@ export class ClassChoice {
   /** Whether each tells its day too, for a list of several days. */
   readonly withDay = input(false);
   readonly busy = input(false);
+  /** What went wrong with a class of the list, told in its row. */
+  readonly refused = input<Refused | null>(null);
   readonly booked = output<ClassDate>();
 
   protected readonly rows = computed(() => {
@@ -33,6 +43,7 @@ export class ClassChoice {
         price: date.price && formatMoney(date.price.amountMinor, date.price.currency),
         bookable: isBookable(date, this.own(), this.timeZone(), now),
         why: this.#whyNot(date, left, now),
+        problem: this.refused()?.classDateId === date.id ? (this.refused()?.problem ?? null) : null,
         left: left === 1 ? '1 place left' : `${left} places left`,
       };
     });

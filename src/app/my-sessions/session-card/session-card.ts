@@ -2,13 +2,15 @@ import { ChangeDetectionStrategy, Component, computed, input, output, signal } f
 import { MatButton } from '@angular/material/button';
 import type { AppointmentItem } from '@shared/contracts/schedule-contract';
 import { formatMoney } from '@shared/units/money';
+import type { Problem } from '../../core/problem';
+import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { dateInWords, otherZoneNote, spanOf } from '../../ui/site-time/site-time';
 import { isLate, mayCancel } from '../bookable-days';
 
 /** One session to come: when, where, and giving the place back. */
 @Component({
   selector: 'app-session-card',
-  imports: [MatButton],
+  imports: [MatButton, ProblemMessage],
   templateUrl: './session-card.html',
   styleUrl: './session-card.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -16,6 +18,8 @@ import { isLate, mayCancel } from '../bookable-days';
 export class SessionCard {
   readonly appointment = input.required<AppointmentItem>();
   readonly busy = input(false);
+  /** Why it could not be cancelled. */
+  readonly problem = input<Problem | null>(null);
   readonly cancelled = output();
 
   protected readonly asking = signal(false);

@@ -42,30 +42,37 @@ export class SessionsPage {
     () => this.problem() === null && !this.#appointments.hasValue(),
   );
   protected readonly busy = signal(false);
-  readonly #failed = signal<Problem | null>(null);
+  /** What went wrong, and with which session; null is with one that is no longer there. */
+  readonly #failed = signal<{ readonly id: string | null; readonly problem: Problem } | null>(null);
   protected readonly problem = computed(() => {
-    const error = this.#appointments.error();
-    return this.#failed() ?? (error ? toProblem(error) : null);
+    const [failed, error] = [this.#failed(), this.#appointments.error()];
+    if (failed?.id === null) return failed.problem;
+    return error ? toProblem(error) : null;
   });
+
+  protected problemOf({ id }: AppointmentItem): Problem | null {
+    const failed = this.#failed();
+    return failed?.id === id ? failed.problem : null;
+  }
 
   protected async cancel(appointment: AppointmentItem): Promise<void> {
     const { id, version, localDate, classDateId } = appointment;
-    await this.#try(async () => {
+    await this.#try(id, async () => {
       await this.#bookings.change(id, { status: 'cancelled', version });
       await this.#notices.offerUndo(`Cancelled: ${dateInWords(localDate, 'long')}.`, () => {
-        void this.#try(() => this.#bookings.book({ classDateId }));
+        void this.#try(null, () => this.#bookings.book({ classDateId }));
       });
     });
   }
 
-  async #try(work: () => Promise<unknown>): Promise<void> {
+  async #try(id: string | null, work: () => Promise<unknown>): Promise<void> {
     if (this.busy()) return;
     this.busy.set(true);
     this.#failed.set(null);
     try {
       await work();
     } catch (error) {
-      this.#failed.set(toProblem(error));
+      this.#failed.set({ id, problem: toProblem(error) });
     } finally {
       this.busy.set(false);
       this.#appointments.reload();
