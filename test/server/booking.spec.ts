@@ -331,9 +331,11 @@ describe('messages', () => {
     const { rows } = await testApp.context.database.$client.query<{
       kind: string;
       subject: object;
-    }>('SELECT kind, subject FROM outbox WHERE patient_id = $1 ORDER BY created_at, kind DESC', [
-      patientId,
-    ]);
+    }>(
+      `SELECT kind, subject FROM outbox WHERE patient_id = $1 AND kind LIKE 'booking-%'
+        ORDER BY created_at, kind DESC`,
+      [patientId],
+    );
     return rows;
   };
 
