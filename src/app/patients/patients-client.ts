@@ -36,6 +36,9 @@ import {
 } from '@shared/contracts/vitals-history-contract';
 import { type Observable, map } from 'rxjs';
 
+/** A session is a table of its own: some fill a screen or two. */
+const sessionsAPage = 8;
+
 @Injectable({ providedIn: 'root' })
 export class PatientsClient {
   readonly #http = inject(HttpClient);
@@ -129,7 +132,9 @@ export class PatientsClient {
 
   vitals(id: string, cursor: string | null): Observable<VitalsHistory> {
     return this.#http
-      .get(`/api/patients/${id}/vital-signs`, { params: cursor === null ? {} : { cursor } })
+      .get(`/api/patients/${id}/vital-signs`, {
+        params: { limit: sessionsAPage, ...(cursor !== null && { cursor }) },
+      })
       .pipe(map((answer) => vitalsHistoryResponseSchema.parse(answer)));
   }
 

@@ -28,7 +28,7 @@ const parts: readonly Part[] = [
   { path: 'devices', label: 'Devices', chart: true },
   { path: 'tests', label: 'Tests and limits', chart: true },
   { path: 'resting', label: 'Resting and body', chart: true },
-  { path: 'conditions', label: 'Diagnoses', chart: true },
+  { path: 'conditions', label: 'Diagnoses and conditions', chart: true },
   { path: 'appointments', label: 'Appointments', chart: false },
   { path: 'vitals', label: 'Vitals', chart: true },
   { path: 'details', label: 'Details', chart: false },
