@@ -3,7 +3,7 @@ import type { Role } from '@shared/contracts/accounts-contract';
 /** What a patient's page is made of, by who needs it. */
 export type FieldGroup = 'identity' | 'contact' | 'course' | 'chart';
 
-/** Those who treat: they read and write the chart. */
+/** Those who treat: they read and write the chart, and open and end courses, which rest on a diagnosis. */
 export const chartRoles: readonly Role[] = ['nurse', 'exercise-physiologist', 'physician'];
 
 const desk: readonly Role[] = ['front-desk', 'director', 'administrator'];
@@ -40,9 +40,6 @@ export const searchRoles: readonly Role[] = [...chartRoles, ...desk];
 
 /** Who registers patients and keeps their names and contacts. */
 export const registrarRoles: readonly Role[] = [...chartRoles, 'front-desk', 'administrator'];
-
-/** Courses rest on a diagnosis, so those who treat open and end them. */
-export const enrollmentRoles: readonly Role[] = chartRoles;
 
 /** What a patient changes of their own record; everything else is the program's. */
 export const ownFields: readonly string[] = ['timeZone'];

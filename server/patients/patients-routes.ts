@@ -16,7 +16,7 @@ import {
 import { created, ok } from '../http/answers';
 import { route } from '../http/route';
 import { changeEnrollment, openEnrollment } from './enrollments-service';
-import { chartRoles, enrollmentRoles, registrarRoles, searchRoles } from './patients-policy';
+import { chartRoles, registrarRoles, searchRoles } from './patients-policy';
 import { changePatient, readPatient, registerPatient, search } from './patients-service';
 import { recordRoutes } from './record-routes';
 import { readVitals } from './vitals-service';
@@ -97,7 +97,7 @@ export const patientsRoutes = [
     method: 'post',
     path: '/api/patients/:id/enrollments',
     summary: 'Opens a course',
-    access: { roles: enrollmentRoles },
+    access: { roles: chartRoles },
     ...ofPatient,
     audit: {
       action: 'enrollment.opened',
@@ -115,7 +115,7 @@ export const patientsRoutes = [
     method: 'patch',
     path: '/api/patients/:id/enrollments/:enrollmentId',
     summary: 'Holds, resumes or ends a course, or corrects who pays',
-    access: { roles: enrollmentRoles },
+    access: { roles: chartRoles },
     ...ofPatient,
     audit: {
       action: 'enrollment.changed',

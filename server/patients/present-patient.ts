@@ -94,6 +94,7 @@ export function presentPatient(
     clinical: chart && {
       risk: chart.risk,
       range: chart.range.range,
+      withdrawn: [...chart.range.withdrawn],
       flags: flagsOf(current?.enrollment ?? null, chart.range),
     },
   };

@@ -1,5 +1,6 @@
 import * as z from 'zod';
 import { sexes } from '../clinical/prescribing/request';
+import { withdrawalReasons } from '../clinical/withdrawal';
 import { emailSchema } from './accounts-contract';
 import {
   cursorField,
@@ -145,6 +146,8 @@ export const patientSchema = z.object({
         .object({ level: z.enum(['low', 'moderate', 'high', 'unknown']), assessedOn: z.string() })
         .nullable(),
       range: rangeInForceSchema.nullable(),
+      /** Why the range no longer holds; [] while it does. */
+      withdrawn: z.array(z.enum(withdrawalReasons)),
       flags: z.array(patientFlagSchema),
     })
     .nullable(),

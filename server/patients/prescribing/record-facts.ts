@@ -1,6 +1,6 @@
 import type { DiagnosisKind } from '@shared/contracts/patients-contract';
 import type { InputOrigin } from '@shared/contracts/prescribing-inputs-contract';
-import type { PatientRecord, RecordEntry, RecordKind } from '@shared/contracts/record-contract';
+import type { PatientRecord, RecordEntry } from '@shared/contracts/record-contract';
 import type { SexAtBirth } from '@shared/clinical/prescribing';
 import { addDays } from '@shared/scheduling/wall-time';
 
@@ -63,5 +63,3 @@ export function withoutErrors(record: PatientRecord): PatientRecord {
   ]);
   return Object.fromEntries(kept) as PatientRecord;
 }
-
-export type Entries<K extends RecordKind> = PatientRecord[K];

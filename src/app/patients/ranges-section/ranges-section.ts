@@ -1,5 +1,6 @@
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
 import type { Prescription } from '@shared/contracts/prescription-record-contract';
+import { withdrawalWords } from '@shared/clinical/withdrawal';
 import { EmptyState } from '../../ui/empty-state/empty-state';
 import { Fact } from '../../ui/fact/fact';
 import { LoadLine } from '../../ui/load-line/load-line';
@@ -35,8 +36,10 @@ export class RangesSection {
     this.items()?.find(({ status }) => status === 'active'),
   );
   /** What was entered since took the range out of force: effort leads, the ceiling stays. */
-  protected readonly withdrawn = computed(
-    () => valueOf(this.#chart.patient)?.clinical?.flags.includes('range-withdrawn') ?? false,
+  protected readonly withdrawn = computed(() =>
+    (valueOf(this.#chart.patient)?.clinical?.withdrawn ?? []).map(
+      (reason) => withdrawalWords[reason],
+    ),
   );
   readonly #timeZone = computed(() => valueOf(this.#chart.patient)?.site.timeZone ?? 'UTC');
 
