@@ -1,8 +1,12 @@
 import type { LoadChildrenCallback, Route, Routes } from '@angular/router';
+import type { Role } from '@shared/contracts/accounts-contract';
 import { accountsRoutes } from './accounts/accounts.routes';
 import { allow, landing } from './core/access-guard';
 import { type AreaPath, areaOf, staff } from './core/navigation';
 import { paymentRoutes } from './my-payments/payment.routes';
+
+/** Who works out and reads ranges; the server decides again on every call. */
+const prescribingRoles: readonly Role[] = ['exercise-physiologist', 'physician', 'nurse'];
 
 /** The lazy routes of an area, open to the roles that navigation.ts names; the rail shows it from then on. */
 export function area(path: AreaPath, loadChildren: LoadChildrenCallback): Route {
@@ -33,6 +37,18 @@ export const routes: Routes = [
     title: 'API reference',
     canMatch: [allow({ roles: staff })],
     loadComponent: async () => (await import('./settings/api-page/api-page')).ApiPage,
+  },
+  {
+    path: 'patients/:patientId/prescriptions',
+    canMatch: [allow({ roles: prescribingRoles })],
+    loadChildren: async () =>
+      (await import('./prescriptions/prescriptions.routes')).newPrescriptionRoutes,
+  },
+  {
+    path: 'prescriptions',
+    canMatch: [allow({ roles: prescribingRoles })],
+    loadChildren: async () =>
+      (await import('./prescriptions/prescriptions.routes')).prescriptionRoutes,
   },
   {
     path: 'not-allowed',

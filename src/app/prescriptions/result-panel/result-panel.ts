@@ -1,0 +1,96 @@
+import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import { reasonWords } from '@shared/clinical/prescribing/can-lead';
+import type { PrescriptionAnswer, Workload } from '@shared/clinical/prescribing/answer';
+import { Fact } from '../../ui/fact/fact';
+import { Quantity } from '../../ui/quantity/quantity';
+import {
+  ceilingReason,
+  metsFloor,
+  metsText,
+  modalityWords,
+  percentText,
+  rangeText,
+  settingText,
+} from '../../ui/words/prescription-words';
+
+interface MachineRow {
+  readonly machine: string;
+  readonly start: string | null;
+  readonly limit: string | null;
+  readonly why: string | null;
+}
+
+const sentence = (words: string): string => `${words.charAt(0).toUpperCase()}${words.slice(1)}.`;
+
+/** A row a machine, with what it is set to at the low and at the high end. */
+function machinesOf(workloads: readonly Workload[]): MachineRow[] {
+  const modalities = [...new Set(workloads.map(({ modality }) => modality))];
+  return modalities.map((modality) => {
+    const at = (point: Workload['point']) =>
+      workloads.find((one) => one.modality === modality && one.point === point);
+    const [start, limit] = [at('start'), at('limit')];
+    return {
+      machine: modalityWords[modality],
+      start: start ? settingText(start) : null,
+      limit: limit ? settingText(limit) : null,
+      why: start?.why ?? limit?.why ?? null,
+    };
+  });
+}
+
+/** What a range comes to: what leads, the ceiling with its reason, effort, work, and what the patient is told. */
+@Component({
+  selector: 'app-result-panel',
+  imports: [Fact, Quantity],
+  templateUrl: './result-panel.html',
+  styleUrl: './result-panel.scss',
+  changeDetection: ChangeDetectionStrategy.OnPush,
+})
+export class ResultPanel {
+  readonly answer = input.required<PrescriptionAnswer>();
+
+  protected readonly rangeText = rangeText;
+  protected readonly metsText = metsText;
+  protected readonly workFloor = metsFloor;
+  protected readonly reasons = computed(() =>
+    this.answer().reasons.map((reason) => sentence(reasonWords[reason])),
+  );
+  protected readonly ceilingReason = computed(() => ceilingReason(this.answer()));
+  protected readonly machines = computed(() => machinesOf(this.answer().workloads));
+  protected readonly arms = computed(
+    () =>
+      this.answer()
+        .workloads.map((one) => (one.modality === 'arm' ? one.target : null))
+        .find((target) => target !== null) ?? null,
+  );
+
+  /** Where the ceiling cuts: "It binds before 80 % of reserve (119) and allows 64 %." */
+  protected readonly binding = computed(() => {
+    const { ceiling, target, method, maximum, intensity, intensityAtCeiling, candidates } =
+      this.answer();
+    if (ceiling === null || target?.upper !== ceiling.value) return null;
+    const own = candidates.find(
+      (one) => one.method === method && one.maximum === (maximum?.method ?? null),
+    );
+    if (!own?.upper || own.upper <= ceiling.value) return null;
+    const before =
+      method === 'heart-rate-reserve'
+        ? `${percentText(intensity.upper)} of reserve (${own.upper})`
+        : `the upper end of ${own.upper}`;
+    const allows =
+      intensityAtCeiling === null
+        ? ''
+        : ` and allows ${Math.floor(intensityAtCeiling * 100)} % of reserve`;
+    return `It binds before ${before}${allows}.`;
+  });
+
+  /** What the patient's page says. */
+  protected readonly told = computed(() => {
+    const { patientTarget, tenSecondCount, ceiling, perceivedExertion } = this.answer();
+    const count = tenSecondCount && ` ${rangeText(tenSecondCount)} beats in 10 seconds.`;
+    const stay = ceiling ? ` Stay under ${ceiling.value}.` : '';
+    return patientTarget
+      ? `${rangeText(patientTarget)} beats a minute.${count ?? ''}${stay}`
+      : `Go by how it feels: ${rangeText(perceivedExertion)} on the effort scale.${stay}`;
+  });
+}
