@@ -17,6 +17,20 @@ export function area(path: AreaPath, loadChildren: LoadChildrenCallback): Route 
 export const routes: Routes = [
   { path: '', pathMatch: 'full', redirectTo: landing },
   ...accountsRoutes,
+  {
+    path: 'patients/:patientId/prescriptions',
+    canMatch: [allow({ roles: prescribingRoles })],
+    loadChildren: async () =>
+      (await import('./prescriptions/prescriptions.routes')).newPrescriptionRoutes,
+  },
+  {
+    path: 'prescriptions',
+    canMatch: [allow({ roles: prescribingRoles })],
+    loadChildren: async () =>
+      (await import('./prescriptions/prescriptions.routes')).prescriptionRoutes,
+  },
+  area('today', async () => (await import('./today/today.routes')).todayRoutes),
+  area('my/range', async () => (await import('./my-range/my-range.routes')).myRangeRoutes),
   area('schedule', async () => (await import('./schedule/schedule.routes')).scheduleRoutes),
   area(
     'my/sessions',
@@ -37,18 +51,6 @@ export const routes: Routes = [
     title: 'API reference',
     canMatch: [allow({ roles: staff })],
     loadComponent: async () => (await import('./settings/api-page/api-page')).ApiPage,
-  },
-  {
-    path: 'patients/:patientId/prescriptions',
-    canMatch: [allow({ roles: prescribingRoles })],
-    loadChildren: async () =>
-      (await import('./prescriptions/prescriptions.routes')).newPrescriptionRoutes,
-  },
-  {
-    path: 'prescriptions',
-    canMatch: [allow({ roles: prescribingRoles })],
-    loadChildren: async () =>
-      (await import('./prescriptions/prescriptions.routes')).prescriptionRoutes,
   },
   {
     path: 'not-allowed',

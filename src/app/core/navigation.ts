@@ -27,7 +27,7 @@ export const areas = [
     path: 'today',
     label: 'Today',
     icon: 'event-available',
-    roles: ['exercise-physiologist', 'physician', 'nurse', 'front-desk'],
+    roles: ['exercise-physiologist', 'physician', 'nurse'],
   },
   {
     path: 'patients',

@@ -1,0 +1,39 @@
+import { HttpClient, type HttpResourceRef, httpResource } from '@angular/common/http';
+import { Injectable, inject } from '@angular/core';
+import {
+  type Prescription,
+  prescriptionSchema,
+} from '@shared/contracts/prescription-record-contract';
+import {
+  type AwaitingItem,
+  type PrescribingTasks,
+  awaitingListSchema,
+  tasksSchema,
+} from '@shared/contracts/prescriptions-waiting-contract';
+import type * as z from 'zod';
+import { type Observable, map } from 'rxjs';
+
+export type AwaitingList = z.infer<typeof awaitingListSchema>;
+
+@Injectable({ providedIn: 'root' })
+export class TodayClient {
+  readonly #http = inject(HttpClient);
+
+  awaiting(): HttpResourceRef<AwaitingList | undefined> {
+    return httpResource(() => '/api/prescriptions/awaiting-signature', {
+      parse: (answer) => awaitingListSchema.parse(answer),
+    });
+  }
+
+  tasks(): HttpResourceRef<PrescribingTasks | undefined> {
+    return httpResource(() => '/api/prescriptions/tasks', {
+      parse: (answer) => tasksSchema.parse(answer),
+    });
+  }
+
+  sign({ id, version }: Pick<AwaitingItem, 'id' | 'version'>): Observable<Prescription> {
+    return this.#http
+      .post(`/api/prescriptions/${id}/sign`, { version })
+      .pipe(map((answer) => prescriptionSchema.parse(answer)));
+  }
+}
