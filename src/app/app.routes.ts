@@ -36,6 +36,7 @@ export const routes: Routes = [
     'my/sessions',
     async () => (await import('./my-sessions/my-sessions.routes')).mySessionsRoutes,
   ),
+  area('floor', async () => (await import('./floor/floor.routes')).floorRoutes),
   area('reports', async () => (await import('./reports/reports.routes')).reportsRoutes),
   area('patients', async () => (await import('./patients/patients.routes')).patientsRoutes),
   area('my/details', async () => (await import('./my-details/my-details.routes')).myDetailsRoutes),
