@@ -6,6 +6,7 @@ import type { Patient } from '@shared/contracts/patients-contract';
 import { firstValueFrom } from 'rxjs';
 import { Notices } from '../../core/notices';
 import { type Problem, toProblem } from '../../core/problem';
+import { failureOf, valueOf } from '../../core/resource-state';
 import { Session } from '../../core/session';
 import { Fact } from '../../ui/fact/fact';
 import { PageHeader } from '../../ui/page-header/page-header';
@@ -57,15 +58,10 @@ export class MyDetailsPage {
   readonly #resource = this.#client.details(
     computed(() => this.#session.user()?.patientId ?? undefined),
   );
-  protected readonly patient = computed(() =>
-    this.#resource.hasValue() ? this.#resource.value() : undefined,
-  );
+  protected readonly patient = computed(() => valueOf(this.#resource));
   protected readonly hasRecord = computed(() => Boolean(this.#session.user()?.patientId));
   readonly #refused = signal<Problem | null>(null);
-  protected readonly problem = computed(() => {
-    const error = this.#resource.error();
-    return this.#refused() ?? (error === undefined ? null : toProblem(error.cause ?? error));
-  });
+  protected readonly problem = computed(() => this.#refused() ?? failureOf(this.#resource));
 
   protected readonly usualZones = usual.map(option);
   protected readonly otherZones = Intl.supportedValuesOf('timeZone')

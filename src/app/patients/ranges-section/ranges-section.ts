@@ -1,8 +1,11 @@
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
+import { MatButton } from '@angular/material/button';
+import { RouterLink } from '@angular/router';
 import type { Prescription } from '@shared/contracts/prescription-record-contract';
 import { withdrawalWords } from '@shared/clinical/withdrawal';
 import { EmptyState } from '../../ui/empty-state/empty-state';
 import { Fact } from '../../ui/fact/fact';
+import { Icon } from '../../ui/icon/icon';
 import { LoadLine } from '../../ui/load-line/load-line';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { Quantity } from '../../ui/quantity/quantity';
@@ -21,7 +24,18 @@ interface Standing {
 /** A patient's prescriptions: the one in force as its load line, all of them with who signed. */
 @Component({
   selector: 'app-ranges-section',
-  imports: [EmptyState, Fact, LoadLine, ProblemMessage, Quantity, Skeleton, StateChip],
+  imports: [
+    EmptyState,
+    Fact,
+    Icon,
+    LoadLine,
+    MatButton,
+    ProblemMessage,
+    Quantity,
+    RouterLink,
+    Skeleton,
+    StateChip,
+  ],
   templateUrl: './ranges-section.html',
   styleUrl: './ranges-section.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -30,6 +44,14 @@ export class RangesSection {
   readonly #chart = inject(PatientChart);
   readonly #resource = inject(PatientsClient).prescriptions(this.#chart.id);
 
+  protected readonly id = this.#chart.id;
+  /** A range belongs to a course. */
+  protected readonly runs = computed(
+    () =>
+      valueOf(this.#chart.patient)?.enrollments.some(
+        ({ status }) => status === 'active' || status === 'on-hold',
+      ) ?? false,
+  );
   protected readonly items = computed(() => valueOf(this.#resource));
   protected readonly failure = computed(() => failureOf(this.#resource));
   protected readonly active = computed(() =>
