@@ -24,7 +24,7 @@ const DIFFERENCES = `
       FROM appointments a JOIN class_dates d ON d.id = a.class_date_id JOIN class_templates t ON t.id = d.template_id
      WHERE a.status = 'fulfilled' AND a.exercised AND t.kind = 'exercise'
   ), attended AS (
-    SELECT id, count(*) AS attended, count(*) FILTER (WHERE local_date < first_on + 252) AS in_window
+    SELECT id, count(*) AS attended, count(*) FILTER (WHERE local_date <= first_on + 252) AS in_window
       FROM sessions GROUP BY id
   ), told AS (
     SELECT 'class_dates.booked' AS counter, d.id::text, d.booked AS kept, coalesce(f.booked, 0) AS counted
