@@ -9,11 +9,15 @@ import {
 } from '@shared/contracts/schedule-contract';
 import { requirePatientAccess } from '../accounts/access-service';
 import { created, ok } from '../http/answers';
+import { decodeCursor, pageOf } from '../http/cursor';
 import { fail, Failure } from '../http/failure';
 import { route, type RouteDefinition } from '../http/route';
-import { decodePosition, encodePosition } from './appointment-cursor';
 import type { AppointmentListener } from './appointment-events';
-import { findAppointmentPatient, listPatientAppointments } from './appointments-queries';
+import {
+  findAppointmentPatient,
+  listPatientAppointments,
+  type AppointmentsPosition,
+} from './appointments-queries';
 import type { BookedRow } from './booking-repository';
 import { bookAppointment } from './booking-service';
 import { scheduleContext } from './schedule-context';
@@ -41,6 +45,13 @@ function patientOf(
   throw fail('invalid-request', { errors: [{ path: 'patientId', code: 'required', message }] });
 }
 
+const position = z.tuple([z.iso.datetime(), z.uuid()]);
+
+function positionOf(cursor: string): AppointmentsPosition {
+  const [startsAt, id] = decodeCursor(position, cursor);
+  return { startsAt: new Date(startsAt), id };
+}
+
 const list = route({
   method: 'get',
   path: '/api/appointments',
@@ -57,12 +68,9 @@ const list = route({
   handler: async ({ actor, tx, input: { query } }) => {
     const patientId = patientOf(actor, query.patientId);
     await requirePatientAccess(tx, actor, patientId);
-    const after = query.cursor === undefined ? null : decodePosition(query.cursor);
+    const after = query.cursor === undefined ? null : positionOf(query.cursor);
     const found = await listPatientAppointments(tx, patientId, { ...query, after });
-    const items = found.slice(0, query.limit);
-    const last = found.length > query.limit ? items.at(-1) : undefined;
-    const nextCursor = last && encodePosition({ ...last, startsAt: new Date(last.startsAt) });
-    return ok({ items, nextCursor: nextCursor ?? null });
+    return ok(pageOf(found, query.limit, ({ startsAt, id }) => [startsAt, id]));
   },
 });
 
