@@ -1,7 +1,7 @@
 import type { CompletionReport } from '@shared/contracts/reports-contract';
 
 /** A spreadsheet would run a cell that begins so as a formula. */
-const FORMULA = /^[=+\-@\t\r]/;
+const FORMULA = /^[=+\-@\t\r\n]/;
 
 function cell(value: string | number | null): string {
   if (value === null) return '';

@@ -35,7 +35,9 @@ const filters = {
   diagnosis: z.string().trim().min(1).max(40).optional(),
 };
 
-const span = { from: localDate, to: localDate };
+/** ISO 8601 knows a year 0 that calendars, and the database, do not. */
+const spanDate = localDate.refine((date) => date >= '1900', 'Give a year from 1900 on');
+const span = { from: spanDate, to: spanDate };
 
 const inOrder = ({ from, to }: { from: string; to: string }): boolean => from < to;
 const orderFault = {
