@@ -5,19 +5,9 @@ import type { PrescriptionRequestInput } from '@shared/contracts/prescriptions-c
 import type { Queryable } from '../database/client';
 import { prescriptions, users } from '../database/schema';
 
-// The only door for other features.
-export type { RangeInForce } from './range-in-force';
-export { rangeInForce, rangesInForce } from './range-in-force-queries';
-
 const author = alias(users, 'author');
 const signer = alias(users, 'signer');
 const physician = alias(users, 'physician');
-
-/** A person who wrote or signed, as pages name them. */
-export interface Signatory {
-  readonly id: string;
-  readonly displayName: string;
-}
 
 /** A prescription with those who made and signed it; `inputs` and `result` are as they were stored. */
 export type PrescriptionRow = Awaited<ReturnType<typeof selectPrescriptions>>[number];

@@ -8,7 +8,7 @@ import { buildEnrollment } from './schedule';
 import type { TestApp } from './test-app';
 
 export type Site = Awaited<ReturnType<typeof buildSite>>;
-export type Staff = Awaited<ReturnType<typeof buildStaff>>;
+type Staff = Awaited<ReturnType<typeof buildStaff>>;
 
 /** Someone of a role at a site, signed in. */
 export async function buildStaff(house: TestApp, siteId: string, role: Role, student = false) {
