@@ -1,4 +1,5 @@
 import { randomBytes } from 'node:crypto';
+import { availableParallelism } from 'node:os';
 import argon2 from 'argon2';
 import { fail } from '../http/failure';
 import { normalizePassword } from './password-rule';
@@ -6,9 +7,9 @@ import { normalizePassword } from './password-rule';
 /** OWASP Password Storage Cheat Sheet: Argon2id with 19 MiB of memory, 2 iterations and 1 degree of parallelism. */
 const PARAMETERS = { type: argon2.argon2id, memoryCost: 19456, timeCost: 2, parallelism: 1 };
 
-/** Two of the four threads that Node keeps for such work; the rest stay free for files and names. */
-const AT_ONCE = 2;
-/** Some 1.5 s of work; whoever comes after that is asked to try again. */
+/** One core stays free to answer everyone else, and one of the four threads that Node keeps for such work. */
+const AT_ONCE = Math.max(1, Math.min(3, availableParallelism() - 1));
+/** Some 2 s of work; whoever comes after that is asked to try again. */
 const WAITING = 100;
 
 /** @returns argon2id in PHC form, with its parameters and a salt of its own */

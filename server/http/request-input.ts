@@ -8,8 +8,14 @@ import type { Input, RequestShape, RouteDefinition } from './route';
 
 const DEFAULT_BODY_LIMIT = 100 * 1024;
 
+export interface Body {
+  readonly value: unknown;
+  /** The bytes of JSON; undefined where there is none. */
+  readonly json?: Buffer | undefined;
+}
+
 /** Reads a request's body as its route wants it, after the caller was let in. */
-export type BodyReader = (request: Request, response: Response) => Promise<unknown>;
+export type BodyReader = (request: Request, response: Response) => Promise<Body>;
 
 const hasBody = (request: Request): boolean =>
   request.headers['transfer-encoding'] !== undefined ||
@@ -32,7 +38,7 @@ export function bodyReaderOf({ request: shape, bodyLimit }: RouteDefinition): Bo
   const limit = bodyLimit ?? DEFAULT_BODY_LIMIT;
   if (shape.body === 'raw') {
     const raw = express.raw({ type: () => true, limit });
-    return (request, response) => run(raw, request, response);
+    return async (request, response) => ({ value: await run(raw, request, response) });
   }
   const sent = new WeakMap<object, Buffer>();
   const json = express.json({
@@ -42,12 +48,9 @@ export function bodyReaderOf({ request: shape, bodyLimit }: RouteDefinition): Bo
     verify: (request, _response, raw) => void sent.set(request, raw),
   });
   return async (request, response) => {
-    if (!hasBody(request)) return undefined;
+    if (!hasBody(request)) return { value: undefined };
     if (!request.is('application/json')) throw fail('not-json');
-    const body = await run(json, request, response);
-    const raw = sent.get(request);
-    if (raw) requireStorable(body, raw);
-    return body;
+    return { value: await run(json, request, response), json: sent.get(request) };
   };
 }
 
@@ -67,24 +70,21 @@ function partOf(schema: z.ZodType, value: unknown, errors: FieldError[]): unknow
  * Holds path, query, headers and body against the route's contract.
  * @throws Failure `invalid-request` with one error a field
  */
-export function parseInput(
-  shape: RequestShape,
-  request: Request,
-  body: unknown,
-): Input<RequestShape> {
+export function parseInput(shape: RequestShape, request: Request, body: Body): Input<RequestShape> {
   requireStorableAddress(request);
   const errors: FieldError[] = [];
   const read = (schema: z.ZodType | undefined, value: unknown): unknown =>
     schema ? partOf(schema, value, errors) : undefined;
   if (!shape.query) refuseExtra(Object.keys(request.query), errors);
-  if (!shape.body && !isEmpty(body)) errors.push(unexpected('body'));
+  if (!shape.body && !isEmpty(body.value)) errors.push(unexpected('body'));
   const input = {
     params: read(shape.params, request.params),
     query: read(shape.query, request.query),
     headers: read(shape.headers, request.headers),
-    body: shape.body === 'raw' ? (body ?? Buffer.alloc(0)) : read(shape.body, body),
+    body: shape.body === 'raw' ? (body.value ?? Buffer.alloc(0)) : read(shape.body, body.value),
   };
   if (errors.length > 0) throw fail('invalid-request', { errors });
+  if (body.json) requireStorable(body.value, body.json);
   return input;
 }
 

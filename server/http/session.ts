@@ -7,7 +7,7 @@ import { SessionStore } from './session-store';
 
 /** Loads the session that the cookie names and, with it, `request.actor`. A visitor makes no row. */
 export function sessionMiddleware({ database, clock, settings }: AppContext): RequestHandler {
-  return session({
+  const load = session({
     name: cookieName('sid', settings.secureCookies),
     secret: settings.sessionSecret,
     store: new SessionStore(database.$client, clock),
@@ -16,6 +16,12 @@ export function sessionMiddleware({ database, clock, settings }: AppContext): Re
     saveUninitialized: false,
     cookie: { httpOnly: true, sameSite: 'lax', path: '/', secure: settings.secureCookies },
   });
+  if (!settings.secureCookies) return load;
+  return (request, response, next) => {
+    // TLS ends before this process: the origin that people type tells it, not this connection.
+    Object.defineProperty(request, 'secure', { value: true });
+    load(request, response, next);
+  };
 }
 
 const settled = (act: (done: (error?: Error | null) => void) => void): Promise<void> =>

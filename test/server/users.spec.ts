@@ -155,10 +155,20 @@ describe('accounts, as administrators keep them', () => {
       passwordHash: 'never compared',
     });
     const second = await agentFor(house, other);
-    const replies = await Promise.all([
+    // Both calls are let in, wait for the same moment, and go on together.
+    const gate = await house.context.database.$client.connect();
+    await gate.query('BEGIN');
+    await gate.query('SELECT 1 FROM users WHERE id = ANY ($1) FOR UPDATE', [
+      [other.id, administrator.id],
+    ]);
+    const calls = [
       agent.patch(`/api/users/${other.id}`).send({ roles: ['nurse'] }),
       second.patch(`/api/users/${administrator.id}`).send({ disabled: true }),
-    ]);
+    ].map((call) => call.then((reply) => reply));
+    await new Promise((resolve) => setTimeout(resolve, 300));
+    await gate.query('COMMIT');
+    gate.release();
+    const replies = await Promise.all(calls);
     const [done, refused] = replies.map((reply) => reply.status).sort();
     expect(done).toBe(200);
     // Whoever comes a moment later is no administrator any more, or signed out, when the call is looked at.
