@@ -35,7 +35,7 @@ export function standingOf({
   selector: 'app-history-list',
   imports: [RouterLink, StateChip],
   template: `
-    <div class="scroll-x" tabindex="0" role="region" aria-label="Versions">
+    <div class="scroll-x" tabindex="0" role="region" aria-label="Table of versions">
       <table class="data">
         <thead>
           <tr>

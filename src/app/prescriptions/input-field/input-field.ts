@@ -9,6 +9,11 @@ import { FieldError } from '../../ui/field-error/field-error';
 import { NumberInput } from '../../ui/number-input/number-input';
 import type { FieldSpec } from '../rests-on/field-specs';
 
+const yesAndNo = [
+  { value: true, label: 'Yes' },
+  { value: false, label: 'No' },
+];
+
 /** One field of the request. */
 @Component({
   selector: 'app-input-field',
@@ -35,6 +40,18 @@ export class InputField {
   protected readonly control = computed(
     () => this.group().get(this.spec().path) as FormControl<string | null>,
   );
+  protected readonly unit = computed(() => {
+    const field = this.spec();
+    return field.kind === 'number' ? field.unit : '';
+  });
+  protected readonly hint = computed(() => {
+    const field = this.spec();
+    return field.kind === 'number' ? (field.hint ?? '') : '';
+  });
+  protected readonly options = computed(() => {
+    const field = this.spec();
+    return field.kind === 'choice' ? field.options : yesAndNo;
+  });
   /** What becomes of the control elsewhere, as by another field's value, shows here too. */
   readonly #happened = toSignal(
     toObservable(this.control).pipe(switchMap((control) => control.events)),

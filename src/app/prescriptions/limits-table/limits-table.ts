@@ -14,7 +14,7 @@ import { limitReason } from '../../ui/words/prescription-words';
         rate.
       </p>
     } @else {
-      <div class="scroll-x" tabindex="0" role="region" aria-label="Limits">
+      <div class="scroll-x" tabindex="0" role="region" aria-label="Table of limits">
         <table class="data">
           <thead>
             <tr>

@@ -76,7 +76,7 @@ const fractionHint = `${fraction.lowest * 100} to ${fraction.highest * 100} %`;
 function condition(kind: ConditionKind): FieldSpec {
   const path = `conditions.${kind}`;
   const label = conditionWords[kind];
-  const words = conditionAnswerWords(kind) as Readonly<Record<string, string>>;
+  const words = conditionAnswerWords(kind);
   if (kind === 'heartFailure') return choice(path, label, heartFailures, words);
   if (kind === 'transplant') return choice(path, label, transplants, words);
   return yesNo(path, label);

@@ -29,10 +29,10 @@ type Of<K extends RowId> = (
 ) => RowWords & { readonly of?: K };
 
 const dash = '–';
-const shown = (value: unknown): string =>
+const shown = (value: number | string | null | undefined): string =>
   value === null || value === undefined || value === '' ? dash : String(value);
-const wordOf = (words: Readonly<Record<string, string>>, key: unknown): string =>
-  words[String(key)] ?? dash;
+const wordOf = (words: Readonly<Record<string, string>>, key: string | null): string =>
+  words[key ?? ''] ?? dash;
 
 const none: RowWords = { value: 'none' };
 
@@ -95,7 +95,7 @@ const devices: Of<'devices'> = ({ devices: { icd, upperTrackingRate } }) => ({
 
 const conditions: Of<'conditions'> = ({ conditions: given }) => {
   const held = conditionKinds.flatMap((kind) => {
-    const answer = given[kind] as unknown;
+    const answer = given[kind] as string | boolean | null;
     if (answer === true) return [conditionWords[kind]];
     if (answer === false || answer === 'none') return [];
     if (answer === null) return [`${conditionWords[kind]}: not answered`];

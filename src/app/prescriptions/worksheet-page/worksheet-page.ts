@@ -14,7 +14,6 @@ import { Router, RouterLink } from '@angular/router';
 import { physicianCausesOf } from '@shared/clinical/plan-limits';
 import { engineVersion } from '@shared/clinical/prescribing';
 import type { Candidate } from '@shared/clinical/prescribing/answer';
-import { withdrawalWords } from '@shared/clinical/withdrawal';
 import type { Prescription } from '@shared/contracts/prescription-record-contract';
 import { firstValueFrom } from 'rxjs';
 import { Notices } from '../../core/notices';
@@ -30,8 +29,7 @@ import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { Skeleton } from '../../ui/skeleton/skeleton';
 import { StateChip } from '../../ui/state-chip/state-chip';
-import { diagnosisWords, riskWords } from '../../ui/words/clinical-words';
-import { formatDay, formatLocalDate, formatTime } from '../../ui/words/dates';
+import { formatDay, formatTime } from '../../ui/words/dates';
 import { HistoryList, signaturesOf, standingOf } from '../history-list/history-list';
 import { LimitsTable } from '../limits-table/limits-table';
 import { PrescriptionsClient } from '../prescriptions-client';
@@ -40,6 +38,7 @@ import { isSameAt, rows } from '../rests-on/rows';
 import { ResultPanel } from '../result-panel/result-panel';
 import { WaysTable } from '../ways-table/ways-table';
 import { WorksheetState } from '../worksheet/worksheet-state';
+import { detailText, withdrawnText } from './head-words';
 import { loadLineFacts } from './load-line-facts';
 import { causesText, signingQuestion } from './signing-words';
 
@@ -136,19 +135,19 @@ export class WorksheetPage {
 
   protected readonly problem = signal<Problem | null>(null);
   protected readonly busy = signal(false);
-  readonly #roles = computed(() => this.#session.roles());
+  readonly #signs = computed(() =>
+    this.#session.roles().some((role) => role === 'exercise-physiologist' || role === 'physician'),
+  );
   readonly #asPhysician = computed(
-    () => this.#roles().includes('physician') && this.worksheet()?.student === false,
+    () => this.#session.roles().includes('physician') && this.worksheet()?.student === false,
   );
   protected readonly maySign = computed(() => {
     const fixed = this.fixed();
     if (fixed) return fixed.awaiting === 'physician' && this.#asPhysician();
-    return this.#roles().some((role) => role === 'exercise-physiologist' || role === 'physician');
+    return this.#signs();
   });
   protected readonly mayPutAside = computed(
-    () =>
-      this.stored()?.status === 'draft' &&
-      this.#roles().some((role) => role === 'exercise-physiologist' || role === 'physician'),
+    () => this.stored()?.status === 'draft' && this.#signs(),
   );
   /** Why a physician signs too, as the fields stand. */
   protected readonly causes = computed(() => {
@@ -172,23 +171,12 @@ export class WorksheetPage {
 
   protected readonly detail = computed(() => {
     const worksheet = this.worksheet();
-    if (!worksheet) return null;
-    const { patient, course } = worksheet;
-    const risk = this.fixed()?.inputs.risk ?? this.state.request()?.risk;
-    return [
-      `${patient.ageYears}`,
-      `born ${formatLocalDate(patient.birthDate)}`,
-      patient.recordNumber,
-      course && `${course.attended} of ${course.planned} sessions`,
-      course && `${diagnosisWords[course.diagnosis]}, ${formatLocalDate(course.eventOn)}`,
-      risk && riskWords[risk],
-    ]
-      .filter(Boolean)
-      .join(' · ');
+    const inputs = this.fixed()?.inputs ?? this.state.request();
+    return worksheet ? detailText(worksheet, inputs?.risk) : null;
   });
   protected readonly withdrawn = computed(() => {
-    const reasons = this.worksheet()?.inForce?.withdrawn ?? [];
-    return reasons.length > 0 ? reasons.map((reason) => withdrawalWords[reason]).join('; ') : null;
+    const worksheet = this.worksheet();
+    return worksheet ? withdrawnText(worksheet) : null;
   });
   protected readonly standing = computed(() => {
     const stored = this.stored();

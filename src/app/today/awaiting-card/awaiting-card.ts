@@ -119,17 +119,17 @@ export class AwaitingCard {
 
   /** Takes the focus to what is to be pressed next. */
   focus(): void {
-    this.#focusOn('.act button, .act a');
+    this.#focusOn('.act .main');
   }
 
   protected ask(): void {
     this.asking.set(true);
-    this.#focusOn('.confirm .yes');
+    this.#focusOn('.act .main');
   }
 
   protected back(): void {
     this.asking.set(false);
-    this.#focusOn('.act button');
+    this.#focusOn('.act .main');
   }
 
   protected async sign(): Promise<void> {

@@ -17,7 +17,7 @@ import { TasksSection } from '../tasks-section/tasks-section';
       <app-tasks-section />
     }
   `,
-  styles: ':host { display: grid; grid-template-columns: minmax(0, 1fr); gap: 1.125rem }',
+  styleUrl: './today-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class TodayPage {

@@ -64,7 +64,8 @@ export const metsFloor = (mets: number): string => (Math.floor(mets * 10 + 1e-6)
 export const metsText = ({ lower, upper }: { lower: number; upper: number }): string =>
   `${(Math.ceil(lower * 10 - 1e-6) / 10).toFixed(1)}–${metsFloor(upper)}`;
 
-export const percentText = (fraction: number): string => `${Number((fraction * 100).toFixed(1))} %`;
+export const percentText = (fraction: number): string =>
+  `${Number((fraction * 100).toFixed(1))}\u00a0%`;
 
 export const percentRange = ({ lower, upper }: { lower: number; upper: number }): string =>
   `${Number((lower * 100).toFixed(1))}–${percentText(upper)}`;
