@@ -8,7 +8,6 @@ import { buildEnrollment } from './schedule';
 import type { TestApp } from './test-app';
 
 export type Site = Awaited<ReturnType<typeof buildSite>>;
-type Staff = Awaited<ReturnType<typeof buildStaff>>;
 
 /** Someone of a role at a site, signed in. */
 export async function buildStaff(house: TestApp, siteId: string, role: Role, student = false) {

@@ -72,7 +72,10 @@ describe('a session that ends while a request is under way', () => {
 
     const sid = /^s:(.+)\./.exec(agent.cookies['sid'] ?? '')?.[1] ?? '';
     const data = await new Promise<SessionData>((resolve, reject) => {
-      store.get(sid, (error, found) => (found ? resolve(found) : reject(error)));
+      store.get(sid, (error, found) => {
+        if (found) resolve(found);
+        else reject(error instanceof Error ? error : new Error('No such session'));
+      });
     });
     await new Promise((resolve) => store.destroy(sid, resolve));
     house.clock.advance(minutes(2));

@@ -1,11 +1,5 @@
-import {
-  ChangeDetectionStrategy,
-  Component,
-  ElementRef,
-  input,
-  output,
-  viewChild,
-} from '@angular/core';
+import type { ElementRef } from '@angular/core';
+import { ChangeDetectionStrategy, Component, input, output, viewChild } from '@angular/core';
 import type { VitalSign } from '@shared/clinical/vital-sign-bounds';
 import { digitsIn } from '../reading-draft';
 import { signWords } from '../visit/floor-words';
