@@ -32,7 +32,7 @@ function ofRate(visit: Visit, draft: ReadingDraft): Finding | null {
     const advice =
       `Over the ceiling of ${ceiling.value} (${ceilingReason(ceiling)}). First slow the work down and ask about symptoms. ` +
       `Recheck in ${readingIntervals.overCeiling} minutes. ${localPolicy}`;
-    return finding('over', `over ceiling ${ceiling.value}`, null, advice);
+    return finding('over', `over ${ceiling.value}`, null, advice);
   }
   if (draft.phase === 'exercise' && isPastAskLine(visit, rate)) {
     return finding(
@@ -43,10 +43,8 @@ function ofRate(visit: Visit, draft: ReadingDraft): Finding | null {
     );
   }
   if (placement === null || target === null) return null;
-  const range = rangeText(target);
-  if (placement === 'in') return finding('in', `in range ${range}`);
-  const icon = placement === 'below' ? 'arrow-down' : 'arrow-up';
-  return finding('due', `${placement} ${range}`, icon);
+  if (placement === 'in') return finding('in', 'in range');
+  return finding('due', placement, placement === 'below' ? 'arrow-down' : 'arrow-up');
 }
 
 function ofEffort({ perceivedExertion: wanted }: Visit, draft: ReadingDraft): Finding | null {

@@ -10,7 +10,13 @@ let fields = 0;
 @Component({
   selector: 'app-pad-field',
   template: `
-    <label [attr.for]="id" [class.visually-hidden]="labelHidden()">{{ words[field()] }}</label>
+    <label [attr.for]="id" [class.visually-hidden]="labelHidden()">
+      {{ words[field()] }}
+      @if (before(); as value) {
+        <small>before {{ value }}</small>
+      }
+    </label>
+    <ng-content />
     <span class="box">
       <input
         #box
@@ -19,7 +25,6 @@ let fields = 0;
         autocomplete="off"
         enterkeyhint="next"
         [id]="id"
-        [attr.placeholder]="before() === null ? null : 'before ' + before()"
         [attr.aria-invalid]="fault() !== undefined"
         [attr.aria-describedby]="id + '-fault'"
         [value]="digits()"

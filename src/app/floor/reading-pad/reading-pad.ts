@@ -11,7 +11,6 @@ import {
 import { symptomCodes, type SymptomCode } from '@shared/contracts/floor-contract';
 import { type VitalPhase, type VitalSign, vitalPhases } from '@shared/clinical/vital-sign-bounds';
 import { Icon } from '../../ui/icon/icon';
-import { StateChip } from '../../ui/state-chip/state-chip';
 import {
   type ReadingDraft,
   erased,
@@ -21,30 +20,18 @@ import {
   typed,
   withSymptom,
 } from '../reading-draft';
-import { phaseWords, signWords, symptomText, symptomWords } from '../visit/floor-words';
+import { phaseWords, symptomText, symptomWords } from '../visit/floor-words';
 import { type Visit, currentReadings, lastWith } from '../visit/visit';
+import { FindingChip } from './finding-chip';
 import { findingsOf } from './findings';
 import { PadField } from './pad-field';
-
-interface Row {
-  readonly label: string;
-  readonly fields: readonly VitalSign[];
-  readonly unit: string;
-}
-
-const rows: readonly Row[] = [
-  { label: signWords.heartRate, fields: ['heartRate'], unit: 'bpm' },
-  { label: 'Blood pressure', fields: ['systolic', 'diastolic'], unit: 'mmHg' },
-  { label: signWords.perceivedExertion, fields: ['perceivedExertion'], unit: '' },
-  { label: signWords.oxygenSaturation, fields: ['oxygenSaturation'], unit: '%' },
-];
 
 let pads = 0;
 
 /** The fields of a reading and the number pad beside them; a keyboard works as well: digits, Enter for the next field. */
 @Component({
   selector: 'app-reading-pad',
-  imports: [Icon, PadField, StateChip],
+  imports: [FindingChip, Icon, PadField],
   templateUrl: './reading-pad.html',
   styleUrl: './reading-pad.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -56,7 +43,6 @@ export class ReadingPad {
   readonly finished = output();
 
   protected readonly id = `pad-${(pads += 1)}`;
-  protected readonly rows = rows;
   protected readonly phases = vitalPhases;
   protected readonly phaseWords = phaseWords;
   protected readonly symptoms = symptomCodes;
@@ -85,11 +71,6 @@ export class ReadingPad {
       oxygenSaturation: last('oxygenSaturation'),
     };
   });
-
-  protected isActive({ fields }: Row): boolean {
-    const { active } = this.draft();
-    return active !== null && fields.includes(active);
-  }
 
   protected choose(phase: VitalPhase): void {
     this.draft.update((draft) => ({ ...draft, phase }));

@@ -13,7 +13,7 @@ export const signWords: Readonly<Record<VitalSign, string>> = {
   heartRate: 'Heart rate',
   systolic: 'Systolic pressure',
   diastolic: 'Diastolic pressure',
-  perceivedExertion: 'Effort (6–20)',
+  perceivedExertion: 'Effort 6–20',
   oxygenSaturation: 'Oxygen',
 };
 
