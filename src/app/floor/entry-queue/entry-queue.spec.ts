@@ -1,6 +1,6 @@
 import { signal } from '@angular/core';
 import { TestBed } from '@angular/core/testing';
-import type { Reading, Roster, SessionRecord } from '@shared/contracts/floor-contract';
+import type { SessionRecord } from '@shared/contracts/floor-contract';
 import { Problem } from '../../core/problem';
 import { Session } from '../../core/session';
 import { FloorClient } from '../floor-client';
