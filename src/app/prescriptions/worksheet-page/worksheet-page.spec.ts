@@ -314,7 +314,6 @@ describe('WorksheetPage', () => {
         prescription([], { version: 2, signedAt: at, signedBy: person, awaiting: 'physician' }),
       );
     });
-    await settle();
   });
 
   it('reads a signed range as it was signed, with who signed and by which policy', async () => {
