@@ -9,7 +9,6 @@ it('finds the soonest free classes, and what there is to pay', async () => {
   await expectAccessible(page);
   await page.getByRole('link', { name: 'Book a session' }).click();
   await page.getByRole('heading', { name: 'Soonest free' }).waitFor();
-  await expectAccessible(page);
   await page.goto(`${inject('product').url}/my/payments`);
   await page.getByRole('heading', { name: 'To pay' }).waitFor();
   await page.context().close();
