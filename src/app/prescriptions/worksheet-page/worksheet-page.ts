@@ -18,7 +18,6 @@ import type { Prescription } from '@shared/contracts/prescription-record-contrac
 import { firstValueFrom } from 'rxjs';
 import { Notices } from '../../core/notices';
 import { type Problem, toProblem } from '../../core/problem';
-import { failureOf, valueOf } from '../../core/resource-state';
 import { Session } from '../../core/session';
 import { Cautions } from '../../ui/cautions/cautions';
 import { Confirm } from '../../ui/confirm/confirm';
@@ -40,6 +39,7 @@ import { WaysTable } from '../ways-table/ways-table';
 import { WorksheetState } from '../worksheet/worksheet-state';
 import { detailText, withdrawnText } from './head-words';
 import { loadLineFacts } from './load-line-facts';
+import { RangeAtHand } from './range-at-hand';
 import { causesText, signingQuestion } from './signing-words';
 
 /**
@@ -85,51 +85,26 @@ export class WorksheetPage {
   readonly #router = inject(Router);
   readonly #session = inject(Session);
   protected readonly state = inject(WorksheetState);
-
-  readonly #read = this.#client.prescription(this.prescriptionId);
-  readonly #written = signal<Prescription | null>(null);
-  /** What the server has: as it was read, or as this page wrote it last. */
-  protected readonly stored = computed(() => {
-    const [id, written] = [this.prescriptionId(), this.#written()];
-    if (written && (id === undefined || written.id === id)) return written;
-    return id === undefined ? null : (valueOf(this.#read) ?? null);
-  });
-  readonly #of = computed(() => this.patientId() ?? this.stored()?.patientId);
-  readonly #worksheet = this.#client.worksheet(this.#of);
-  readonly #history = this.#client.history(this.#of);
-
-  protected readonly worksheet = computed(() => valueOf(this.#worksheet));
-  protected readonly history = computed(() => valueOf(this.#history) ?? []);
-  protected readonly failure = computed(
-    () => failureOf(this.#read) ?? failureOf(this.#worksheet) ?? failureOf(this.#history),
-  );
-  /** A signed one, or one put aside, stands as it is. */
-  protected readonly fixed = computed(() => {
-    const stored = this.stored();
-    return stored !== null && (stored.signedAt !== null || stored.status !== 'draft')
-      ? stored
-      : null;
-  });
-  protected readonly ready = computed(
-    () => this.worksheet() !== undefined && (!this.prescriptionId() || this.stored() !== null),
-  );
+  protected readonly range = new RangeAtHand(this.#client, this.patientId, this.prescriptionId);
 
   /** What is shown: the stored result, or what the fields come to, or the last that they came to. */
   protected readonly answer = computed(
-    () => this.fixed()?.result ?? this.state.answer() ?? this.state.lastAnswer(),
+    () => this.range.fixed()?.result ?? this.state.answer() ?? this.state.lastAnswer(),
   );
   protected readonly stale = computed(
-    () => !this.fixed() && this.state.answer() === null && this.state.lastAnswer() !== null,
+    () => !this.range.fixed() && this.state.answer() === null && this.state.lastAnswer() !== null,
   );
   protected readonly loadLine = computed(() => {
     const answer = this.answer();
-    const inputs = this.fixed()?.inputs ?? this.state.lastRequest();
+    const inputs = this.range.fixed()?.inputs ?? this.state.lastRequest();
     if (!answer || !inputs) return null;
-    const lastPeak = this.fixed() ? null : (this.worksheet()?.lastPeak?.heartRate ?? null);
+    const lastPeak = this.range.fixed()
+      ? null
+      : (this.range.worksheet()?.lastPeak?.heartRate ?? null);
     return loadLineFacts(answer, inputs.resting.seated, lastPeak);
   });
   protected readonly chosen = computed(() => {
-    const { choice } = this.fixed()?.inputs ?? this.state.lastRequest() ?? {};
+    const { choice } = this.range.fixed()?.inputs ?? this.state.lastRequest() ?? {};
     return choice !== undefined && (choice.method !== null || choice.maximum !== null);
   });
 
@@ -139,59 +114,59 @@ export class WorksheetPage {
     this.#session.roles().some((role) => role === 'exercise-physiologist' || role === 'physician'),
   );
   readonly #asPhysician = computed(
-    () => this.#session.roles().includes('physician') && this.worksheet()?.student === false,
+    () => this.#session.roles().includes('physician') && this.range.worksheet()?.student === false,
   );
   protected readonly maySign = computed(() => {
-    const fixed = this.fixed();
+    const fixed = this.range.fixed();
     if (fixed) return fixed.awaiting === 'physician' && this.#asPhysician();
     return this.#signs();
   });
   protected readonly mayPutAside = computed(
-    () => this.stored()?.status === 'draft' && this.#signs(),
+    () => this.range.stored()?.status === 'draft' && this.#signs(),
   );
   /** Why a physician signs too, as the fields stand. */
   protected readonly causes = computed(() => {
-    const worksheet = this.worksheet();
+    const worksheet = this.range.worksheet();
     const answer = this.answer();
-    const inputs = this.fixed()?.inputs ?? this.state.request();
+    const inputs = this.range.fixed()?.inputs ?? this.state.request();
     if (!worksheet || !answer || !inputs) return [];
     const { first, student, policy } = worksheet;
     return physicianCausesOf({ inputs, result: answer, first, student }, policy);
   });
   protected readonly physicianToo = computed(() =>
-    !this.fixed() && !this.#asPhysician() && this.causes().length > 0
+    !this.range.fixed() && !this.#asPhysician() && this.causes().length > 0
       ? causesText(this.causes())
       : null,
   );
   readonly #tried = computed(() => {
-    const record = this.worksheet()?.record;
-    if (!record || this.fixed()) return 0;
+    const record = this.range.worksheet()?.record;
+    if (!record || this.range.fixed()) return 0;
     return rows.filter((row) => !isSameAt(row, this.state.value(), record.inputs)).length;
   });
 
   protected readonly detail = computed(() => {
-    const worksheet = this.worksheet();
-    const inputs = this.fixed()?.inputs ?? this.state.request();
+    const worksheet = this.range.worksheet();
+    const inputs = this.range.fixed()?.inputs ?? this.state.request();
     return worksheet ? detailText(worksheet, inputs?.risk) : null;
   });
   protected readonly withdrawn = computed(() => {
-    const worksheet = this.worksheet();
+    const worksheet = this.range.worksheet();
     return worksheet ? withdrawnText(worksheet) : null;
   });
   protected readonly standing = computed(() => {
-    const stored = this.stored();
+    const stored = this.range.stored();
     return stored && standingOf(stored);
   });
-  protected readonly zone = computed(() => this.worksheet()?.patient.site.timeZone ?? 'UTC');
+  protected readonly zone = computed(() => this.range.worksheet()?.patient.site.timeZone ?? 'UTC');
   protected readonly signatures = computed(() => {
-    const stored = this.stored();
+    const stored = this.range.stored();
     return stored ? signaturesOf(stored, (at) => this.when(at)) : [];
   });
 
   constructor() {
     effect(() => {
-      const worksheet = this.worksheet();
-      const inputs = this.prescriptionId() ? valueOf(this.#read)?.inputs : worksheet?.record.inputs;
+      const worksheet = this.range.worksheet();
+      const inputs = this.range.inputs();
       if (!worksheet || !inputs) return;
       untracked(() => {
         this.state.start(inputs, worksheet.policy);
@@ -201,7 +176,7 @@ export class WorksheetPage {
 
   /** Whether leaving would lose what was typed. */
   hasUnkept(): boolean {
-    return !this.fixed() && this.ready() && this.state.changed() && !this.busy();
+    return !this.range.fixed() && this.range.ready() && this.state.changed() && !this.busy();
   }
 
   protected when(at: string): string {
@@ -221,7 +196,7 @@ export class WorksheetPage {
   }
 
   protected async sign(): Promise<void> {
-    const worksheet = this.worksheet();
+    const worksheet = this.range.worksheet();
     const answer = this.answer();
     if (!worksheet || !answer || this.stale() || this.busy()) return;
     const question = signingQuestion({
@@ -233,21 +208,21 @@ export class WorksheetPage {
     });
     if (!(await this.#confirm.ask(question))) return;
     await this.#doing(async () => {
-      const seen = this.fixed() ?? (await this.#keep());
+      const seen = this.range.fixed() ?? (await this.#keep());
       const signed = await firstValueFrom(this.#client.sign(seen));
-      this.#written.set(signed);
+      this.range.wrote(signed);
       void this.#notices.say(
         signed.status === 'active'
           ? 'Signed. The range is in force.'
           : 'Signed. A physician signs next; the range is not in force yet.',
       );
-      if (this.prescriptionId()) this.#reload();
+      if (this.prescriptionId()) this.range.reload();
       else await this.#show(signed);
     });
   }
 
   protected async putAside(): Promise<void> {
-    const stored = this.stored();
+    const stored = this.range.stored();
     if (!stored) return;
     const yes = await this.#confirm.ask({
       heading: 'Put this range aside?',
@@ -257,15 +232,15 @@ export class WorksheetPage {
     });
     if (!yes) return;
     await this.#doing(async () => {
-      this.#written.set(await firstValueFrom(this.#client.putAside(stored)));
-      this.#reload();
+      this.range.wrote(await firstValueFrom(this.#client.putAside(stored)));
+      this.range.reload();
     });
   }
 
   /** The draft as it stands here, written where it is not yet. */
   async #keep(): Promise<Prescription> {
-    const stored = this.stored();
-    const policy = this.worksheet()?.policy;
+    const stored = this.range.stored();
+    const policy = this.range.worksheet()?.policy;
     const upToDate =
       stored?.policyVersion === policy?.version && stored?.engineVersion === engineVersion;
     if (stored && upToDate && !this.state.changed()) return stored;
@@ -276,9 +251,9 @@ export class WorksheetPage {
         ? this.#client.change(stored, inputs)
         : this.#client.draft(this.patientId() ?? '', inputs),
     );
-    this.#written.set(draft);
+    this.range.wrote(draft);
     this.state.keep();
-    this.#history.reload();
+    this.range.reloadHistory();
     return draft;
   }
 
@@ -286,11 +261,6 @@ export class WorksheetPage {
   async #show({ id }: Prescription): Promise<void> {
     this.state.keep();
     await this.#router.navigate(['/prescriptions', id], { replaceUrl: true });
-  }
-
-  #reload(): void {
-    this.#history.reload();
-    this.#worksheet.reload();
   }
 
   async #doing(work: () => Promise<void>): Promise<void> {
