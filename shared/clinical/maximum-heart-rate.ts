@@ -1,5 +1,6 @@
 import type { Bpm } from '../units';
 import { bpm } from '../units';
+import type { KnownSex } from './known-sex';
 
 /**
  * Estimates of the maximum heart rate. Ages in years, adults; results in bpm, not rounded.
@@ -30,3 +31,42 @@ export const brawnerMaximum = (age: number): Bpm => bpm(164 - 0.7 * age);
  */
 export const keteyianMaximum = (age: number, seated: Bpm, onCycle: boolean): Bpm =>
   bpm(119 + 0.5 * seated - 0.5 * age - (onCycle ? 5 : 0));
+
+/**
+ * Equations in print that no range of ours is built on; for comparison, and so that a form met elsewhere can be told apart.
+ */
+
+/** 206.9 − 0.67 age: also in print as Gellish's; at 60 years 1.7 bpm above 207 − 0.7 age. */
+export const gellishVariantMaximum = (age: number): Bpm => bpm(206.9 - 0.67 * age);
+
+/** 209 − 0.7 age: the laboratory part of Tanaka et al. J Am Coll Cardiol 2001;37:153–156. */
+export const tanakaLaboratoryMaximum = (age: number): Bpm => bpm(209 - 0.7 * age);
+
+/** Men 220 − 0.95 age, women 210 − 0.79 age; healthy people. Sydó et al. Mayo Clin Proc 2014;89:1664–1672. */
+export const sydoMaximum = (age: number, sexAtBirth: KnownSex): Bpm =>
+  bpm(sexAtBirth === 'male' ? 220 - 0.95 * age : 210 - 0.79 * age);
+
+/**
+ * 109 − 0.5 age + 0.5 resting + 0.2 ejection fraction, less 5 with hemoglobin under 11 g/dL; reduced ejection fraction on
+ * a beta blocker, error 17.5 bpm. MECKI score group, Eur J Prev Cardiol 2023.
+ * @param ejectionFraction percent
+ * @param hemoglobin g/dL
+ */
+export const meckiMaximum = (
+  age: number,
+  seated: Bpm,
+  ejectionFraction: number,
+  hemoglobin: number,
+): Bpm => bpm(109 - 0.5 * age + 0.5 * seated + 0.2 * ejectionFraction - (hemoglobin < 11 ? 5 : 0));
+
+/** 168 − 0.76 age; heart failure of ischemic cause on a beta blocker. J Card Fail 2012;18:831–836. */
+export const ischemicHeartFailureMaximum = (age: number): Bpm => bpm(168 - 0.76 * age);
+
+/** 205.8 − 0.685 age; healthy people. Inbar et al. Med Sci Sports Exerc 1994;26:538–546. */
+export const inbarMaximum = (age: number): Bpm => bpm(205.8 - 0.685 * age);
+
+/** Inbar's less 30 on a beta blocker: a convention of UK teaching, not a measurement. */
+export const inbarBetaBlockerMaximum = (age: number): Bpm => bpm(inbarMaximum(age) - 30);
+
+/** 179 + 0.29 age − 0.011 age²; 18–50 years only. CARDIA study. */
+export const cardiaMaximum = (age: number): Bpm => bpm(179 + 0.29 * age - 0.011 * age ** 2);

@@ -21,6 +21,21 @@ export const walkingGrade = (uptake: Vo2, speed: MetersPerMinute): number =>
 
 export const walkingSpeedInRange = (speed: MetersPerMinute): boolean => isWithin(speed, 50, 100);
 
+/** Running, above 134 m/min, or from 80 m/min when the gait is truly a jog; `grade` as a fraction. */
+export const runningVo2 = (speed: MetersPerMinute, grade: number): Vo2 =>
+  vo2(restingVo2 + 0.2 * speed + 0.9 * speed * grade);
+
+/** Speed of running on the level at an uptake, m/min; at or below rest it is not above zero. */
+export const levelRunningSpeed = (uptake: Vo2): MetersPerMinute =>
+  metersPerMinute((uptake - restingVo2) / 0.2);
+
+/** Grade, as a fraction, at which running at `speed` (above 0) costs the uptake; negative when level costs more. */
+export const runningGrade = (uptake: Vo2, speed: MetersPerMinute): number =>
+  (uptake - restingVo2 - 0.2 * speed) / (0.9 * speed);
+
+/** From 80 m/min: whoever runs was seen to run, so the lower end for a true jog holds. */
+export const runningSpeedInRange = (speed: MetersPerMinute): boolean => speed >= 80;
+
 const unloadedCyclingVo2 = 7;
 
 /** Leg cycling, 50–200 W; 1 W as 6 kgm/min. */

@@ -6,3 +6,4 @@ export * from './oxygen-uptake';
 export * from './power';
 export * from './quantity';
 export * from './rounding';
+export * from './time';

@@ -16,10 +16,10 @@ import {
   watts,
 } from '@shared/units';
 import type { Bpm, Vo2 } from '@shared/units';
+import { capacityComputations } from './computed-capacity';
+import { scoreComputations } from './computed-scores';
 import { input } from './vectors';
-import type { Vector } from './vectors';
-
-type Compute = (vector: Vector) => number;
+import type { Compute, Vector } from './vectors';
 
 /** The publications take a mile an hour as 26.8 m/min, and a watt as 6 kgm/min. */
 const printedSpeed = (vector: Vector) => metersPerMinute(26.8 * input(vector, 'speed'));
@@ -84,6 +84,8 @@ const computations: readonly (readonly [RegExp, Compute])[] = [
   [/^WIL-T-.*-hi$/, wilsonEnd('upper', 1.96)],
   [/^WIL-\d.*-lo$/, wilsonEnd('lower')],
   [/^WIL-\d.*-hi$/, wilsonEnd('upper')],
+  ...capacityComputations,
+  ...scoreComputations,
 ];
 
 export const computationOf = ({ id }: Vector): Compute | undefined =>

@@ -37,6 +37,17 @@ export function input({ id, inputs }: Vector, name: string): number {
   return value;
 }
 
+/** The text given for an input; throws when the vector has no such text. */
+export function text({ id, inputs }: Vector, name: string): string {
+  const given = typeof inputs === 'string' ? undefined : inputs[name];
+  const value = typeof given === 'object' ? given.value : given;
+  if (typeof value !== 'string') throw new Error(`${id} has no text ${name}`);
+  return value;
+}
+
+/** Computes a vector's expected number from its inputs. */
+export type Compute = (vector: Vector) => number;
+
 /** The printed ends of a range such as 84.4-106.8. */
 export function printedRange({ id, expected }: Vector): [number, number] {
   const [lower, upper] = String(expected).split('-').map(Number);
