@@ -12,7 +12,6 @@ const left: readonly {
   readonly count: number;
   readonly is: (vector: Vector) => boolean;
 }[] = [
-  { what: 'risk, monitoring, staffing', count: 10, is: ({ section }) => section === 5 },
   { what: 'holding and stopping a session', count: 31, is: ({ section }) => section === 6 },
   { what: 'coverage and performance measures', count: 17, is: ({ section }) => section === 7 },
   {

@@ -5,10 +5,12 @@ import {
 } from '@shared/clinical/exercise-test/heart-rate-recovery';
 import { treadmillTimeEstimates } from '@shared/clinical/exercise-test/time-estimates';
 import { scorePhq9 } from '@shared/clinical/questionnaires/phq-9';
+import { defaultStaffing, staffNeeded } from '@shared/clinical/risk/staffing';
 import { judgeWalkChange } from '@shared/clinical/six-minute-walk-change';
 import * as equations from '@shared/clinical/metabolic-equations';
 import { bpm, meters, mets, metersPerMinute, minutes, mphOf, vo2, vo2Of } from '@shared/units';
 import { expect } from 'vitest';
+import { riskOfNothingKnown } from './risk-facts';
 import { input } from './vectors';
 import type { Vector } from './vectors';
 
@@ -77,6 +79,16 @@ export const statedRules: Readonly<Record<string, (vector: Vector) => void>> = {
       band: 'mild',
       selfHarm: 'follow-up-today',
     });
+  },
+  'RISK-8': () => {
+    const { riskClass, treatAs, missing, criteria } = riskOfNothingKnown();
+    expect(riskClass).toBe('undetermined');
+    expect(treatAs).toBe('high');
+    expect(missing).toHaveLength(criteria.length);
+  },
+  'STAFF-2': (vector) => {
+    const risks = Array<'low'>(input(vector, 'patients')).fill('low');
+    expect(staffNeeded(risks, defaultStaffing)).toBe(vector.expected);
   },
   'HRREC-1': (vector) => {
     expect(recovery(vector)).toBe(12);

@@ -8,7 +8,9 @@ import {
 import { anxietyBandOf } from '@shared/clinical/questionnaires/gad-7';
 import { phq2BandOf } from '@shared/clinical/questionnaires/phq-2';
 import { depressionBandOf } from '@shared/clinical/questionnaires/phq-9';
-import { seconds } from '@shared/units';
+import { ahaAdvice } from '@shared/clinical/risk/aha-class';
+import { mets, seconds } from '@shared/units';
+import { riskOf } from './risk-facts';
 import { input } from './vectors';
 import type { Vector } from './vectors';
 
@@ -26,6 +28,13 @@ const words: readonly (readonly [RegExp, Name])[] = [
   [/^PHQ9-\d+$/, (vector) => depressionBandOf(score(vector))],
   [/^PHQ2-3$/, (vector) => phq2BandOf(score(vector))],
   [/^GAD7-\d+$/, (vector) => anxietyBandOf(score(vector))],
+  [
+    /^RISK-[1-6]$/,
+    (vector) => riskOf(input(vector, 'lvef'), mets(input(vector, 'mets'))).riskClass,
+  ],
+  [/^AHA-B$/, () => ahaAdvice.B.monitoring],
+  [/^AHA-C$/, () => ahaAdvice.C.monitoring],
+  [/^AHA-D$/, () => ahaAdvice.D.monitoring],
   [
     /^STS-B70$/,
     (vector) =>
