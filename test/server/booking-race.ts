@@ -1,10 +1,10 @@
 import { randomUUID } from 'node:crypto';
-import pg from 'pg';
 import { agentFor, type Agent } from '../builders/agent';
 import { buildSite, buildUser } from '../builders/people';
 import { buildBooker, buildClassDate, type ClassDateOptions } from '../builders/schedule';
 import { startServerProcess, type ServerProcess } from '../builders/server-process';
 import { createTestApp, type TestApp } from '../builders/test-app';
+import { takeAway } from '../builders/take-away';
 import { testClock } from '../builders/test-clock';
 
 /** Two server processes on one database of their own, and whoever calls them over HTTP. */
@@ -28,20 +28,10 @@ export interface Answer {
 /** A week ahead of the real clock, by which the processes go. */
 export const raceDay = new Date(Date.now() + 7 * 86_400_000).toISOString().slice(0, 10);
 
-/** Takes the database's last word away, to show that the races find what it prevents. */
-async function dropGuards(ownerUrl: string): Promise<void> {
-  const owner = new pg.Client({ connectionString: ownerUrl });
-  await owner.connect();
-  await owner.query(`
-    ALTER TABLE class_dates DROP CONSTRAINT class_dates_places;
-    ALTER TABLE class_dates DROP CONSTRAINT class_dates_monitors;
-    ALTER TABLE appointments DROP CONSTRAINT appointments_no_overlap;`);
-  await owner.end();
-}
-
-export async function startRace(guarded: boolean): Promise<Race> {
+/** @param without takes a guard of the database away, to show that the race finds what it prevents */
+export async function startRace(without?: string): Promise<Race> {
   const testApp = await createTestApp({ clock: testClock(new Date().toISOString()) });
-  if (!guarded) await dropGuards(testApp.testDatabase.ownerUrl);
+  if (without) await takeAway(testApp, without);
   const servers = await Promise.all([startServerProcess(testApp), startServerProcess(testApp)]);
   return {
     testApp,
@@ -57,10 +47,14 @@ export async function startRace(guarded: boolean): Promise<Race> {
 export const raceDate = ({ testApp, site }: Race, given: ClassDateOptions = {}) =>
   buildClassDate(testApp.context.database, site, { localDate: raceDay, ...given });
 
-export async function patientCallers({ testApp, site }: Race, count: number): Promise<Caller[]> {
+export async function patientCallers(
+  { testApp, site }: Race,
+  count: number,
+  course: Parameters<typeof buildBooker>[2] = {},
+): Promise<Caller[]> {
   return Promise.all(
     Array.from({ length: count }, async () => {
-      const { user, patient } = await buildBooker(testApp.context.database, site);
+      const { user, patient } = await buildBooker(testApp.context.database, site, course);
       return { patientId: patient.id, agent: await agentFor(testApp, user) };
     }),
   );
@@ -137,10 +131,21 @@ export async function overlapsIn({ testApp }: Race): Promise<number> {
   return rows[0]?.pairs ?? 0;
 }
 
-/** How many deadlocks PostgreSQL has broken in this database. */
-export async function deadlocksIn({ testApp }: Race): Promise<number> {
-  const { rows } = await testApp.context.database.$client.query<{ deadlocks: number }>(
-    `SELECT pg_stat_get_db_deadlocks(oid)::int AS deadlocks FROM pg_database WHERE datname = current_database()`,
-  );
-  return rows[0]?.deadlocks ?? 0;
+/**
+ * How many deadlocks PostgreSQL broke in all of the race. It ends the servers: a connection tells its counts when it
+ * closes, and until then keeps them for up to ten seconds.
+ */
+export async function deadlocksOf({ servers, testApp }: Race): Promise<number> {
+  await Promise.all(servers.map((server) => server.stop()));
+  const pool = testApp.context.database.$client;
+  for (let tries = 0; tries < 100; tries += 1) {
+    const { rows } = await pool.query<{ open: number; deadlocks: number }>(
+      `SELECT pg_stat_get_db_deadlocks(oid)::int AS deadlocks, (SELECT count(*)::int FROM pg_stat_activity a WHERE a.datid = d.oid) AS open
+         FROM pg_database d WHERE datname = current_database()`,
+    );
+    const [found] = rows;
+    if (found && found.open <= pool.totalCount) return found.deadlocks;
+    await new Promise((resolve) => setTimeout(resolve, 50));
+  }
+  throw new Error('The servers’ connections did not close');
 }

@@ -4,7 +4,7 @@ import { counterDifferences } from '../../server/schedule/counters-service';
 import {
   bookOver,
   call,
-  deadlocksIn,
+  deadlocksOf,
   deskCaller,
   heldIn,
   overlapsIn,
@@ -13,42 +13,22 @@ import {
   startRace,
   type Race,
 } from './booking-race';
-
-const BOOKERS = 200;
-const PLACES = 12;
-
-/** All at once on one class. @returns how many answers of each kind, and how many places its rows hold */
-async function stampede(race: Race) {
-  const date = await raceDate(race, { capacity: PLACES });
-  const callers = await patientCallers(race, BOOKERS);
-  const answers = await Promise.all(
-    callers.map(({ agent }, turn) => bookOver(race, turn, agent, date.id)),
-  );
-  const count = (wanted: (status: number, code: string | undefined) => boolean) =>
-    answers.filter(({ status, body }) => wanted(status, body.code)).length;
-  return {
-    booked: count((status) => status === 201),
-    full: count((status, code) => status === 409 && code === 'class-full'),
-    held: await heldIn(race, date.id),
-  };
-}
-
-/** Each patient asks at once for two classes that overlap. @returns the answers, a pair a patient */
-async function twoPlacesAtOnce(race: Race) {
-  const nine = await raceDate(race, { capacity: 60, localStart: '09:00' });
-  const half = await raceDate(race, { capacity: 60, localStart: '09:30' });
-  const callers = await patientCallers(race, 30);
-  return Promise.all(
-    callers.map(({ agent }, turn) =>
-      Promise.all([bookOver(race, turn, agent, nine.id), bookOver(race, turn + 1, agent, half.id)]),
-    ),
-  );
-}
+import {
+  aWholeDayAtOnce,
+  BOOKERS,
+  CHANNELS,
+  oneAgainstOneself,
+  PLACES,
+  seriesThatMeet,
+  stampede,
+  stampedeOnChannels,
+  twoPlacesAtOnce,
+} from './booking-scenes';
 
 describe('through two server processes', () => {
   let race: Race;
   beforeAll(async () => {
-    race = await startRace(true);
+    race = await startRace();
   });
   afterAll(() => race.close());
 
@@ -58,6 +38,23 @@ describe('through two server processes', () => {
       full: BOOKERS - PLACES,
       held: PLACES,
     });
+  });
+
+  it('patients who need a channel take as many places as there are channels', async () => {
+    expect(await stampedeOnChannels(race)).toEqual({
+      booked: CHANNELS,
+      full: 60 - CHANNELS,
+      held: CHANNELS,
+    });
+  });
+
+  it('a patient who asks for a whole day at once gets what the day allows', async () => {
+    expect(new Set(await aWholeDayAtOnce(race))).toEqual(new Set([2]));
+  });
+
+  it('two bookings of one patient that each want what the other took leave one place at a time', async () => {
+    await oneAgainstOneself(race);
+    expect(await overlapsIn(race)).toBe(0);
   });
 
   it('a patient who asks for two overlapping classes at once gets one', async () => {
@@ -81,8 +78,7 @@ describe('through two server processes', () => {
     expect(await heldIn(race, date.id)).toBe(1);
   });
 
-  it('series over the same dates, in any order, book whole or not at all, without a deadlock', async () => {
-    const deadlocks = await deadlocksIn(race);
+  it('series over the same dates, in any order, book whole or not at all', async () => {
     const dates = await Promise.all(
       Array.from({ length: 12 }, (_, hour) =>
         raceDate(race, { capacity: 4, localStart: `${String(7 + hour).padStart(2, '0')}:00` }),
@@ -112,36 +108,14 @@ describe('through two server processes', () => {
       [callers.map(({ patientId }) => patientId)],
     );
     expect(rows.every(({ held }) => held === 1 || held === 2)).toBe(true);
-    expect(await deadlocksIn(race)).toBe(deadlocks);
   });
 
-  it('long series that meet on every date never wait for each other in a ring', async () => {
-    const deadlocks = await deadlocksIn(race);
-    const days = Array.from({ length: 24 }, (_, day) =>
-      new Date(Date.now() + (10 + day) * 86_400_000).toISOString().slice(0, 10),
-    );
-    const ids: string[] = [];
-    for (const localDate of days) ids.push((await raceDate(race, { localDate, capacity: 5 })).id);
-    const desk = await deskCaller(race);
-    const callers = await patientCallers(race, 10);
-    const answers = await Promise.all(
-      callers.map(({ patientId }, turn) => {
-        const classDateIds = [...ids.slice(turn), ...ids.slice(0, turn)];
-        if (turn % 2 === 1) classDateIds.reverse();
-        return call(race, turn, desk, {
-          path: '/api/appointments/series',
-          body: { patientId, classDateIds },
-        });
-      }),
-    );
-    expect(answers.filter(({ status }) => status === 201)).toHaveLength(5);
-    expect(answers.filter(({ body }) => body.code === 'class-full')).toHaveLength(5);
-    for (const id of ids) expect(await heldIn(race, id)).toBe(5);
-    expect(await deadlocksIn(race)).toBe(deadlocks);
+  it('long series that meet on every date fill each of them', async () => {
+    const held = Array.from({ length: 24 }, () => 5);
+    expect(await seriesThatMeet(race)).toEqual({ booked: 5, full: 5, held });
   });
 
-  it('cancelling and booking again at once keeps the counters, without a deadlock', async () => {
-    const deadlocks = await deadlocksIn(race);
+  it('cancelling and booking again at once keeps to the places', async () => {
     const date = await raceDate(race, { capacity: 6, localStart: '17:00' });
     const callers = await patientCallers(race, 12);
     const first = await Promise.all(
@@ -161,28 +135,13 @@ describe('through two server processes', () => {
       }),
     );
     expect(await heldIn(race, date.id)).toBeLessThanOrEqual(6);
-    expect(await deadlocksIn(race)).toBe(deadlocks);
   });
 
   it('leaves every counter as its appointments say', async () => {
     expect(await counterDifferences(race.testApp.context.database)).toEqual([]);
   });
-});
 
-describe('the same races without the database’s last word', () => {
-  let race: Race;
-  beforeAll(async () => {
-    race = await startRace(false);
-  });
-  afterAll(() => race.close());
-
-  it('overbook the class', async () => {
-    const { held } = await stampede(race);
-    expect(held).toBeGreaterThan(PLACES);
-  });
-
-  it('put a patient in two places at once', async () => {
-    await twoPlacesAtOnce(race);
-    expect(await overlapsIn(race)).toBeGreaterThan(0);
+  it('had nobody wait for each other in a ring: not one deadlock', async () => {
+    expect(await deadlocksOf(race)).toBe(0);
   });
 });

@@ -13,7 +13,7 @@ let nurse: Agent;
 let server: ServerProcess;
 
 beforeAll(async () => {
-  race = await startRace(true);
+  race = await startRace();
   const { database } = race.testApp.context;
   const user = await buildUser(database, { roles: ['nurse'], siteIds: [race.site.id] });
   nurse = await agentFor(race.testApp, user);
