@@ -133,6 +133,14 @@ describe('GET /api/prescriptions/tasks', () => {
     expect(await tasksOf(people)).toEqual({ ...nothing, withdrawn: [patientId] });
   });
 
+  it('is of the own sites alone', async () => {
+    const [here, there] = [await buildPrescribers(house), await buildPrescribers(house)];
+    await buildCourse(house, here.site);
+    const { patientId } = await buildCourse(house, here.site);
+    await draftOf(here.physiologist.agent, patientId);
+    expect(await tasksOf(there)).toEqual(nothing);
+  });
+
   it('finds ranges older than the policy’s days of review', async () => {
     const people = await buildPrescribers(house);
     const { patientId } = await buildCourse(house, people.site);
