@@ -22,6 +22,7 @@ import { prescriptionsRoutes } from './prescriptions/prescriptions-routes';
 import { reportsRoutes } from './reports/reports-routes';
 import { scheduleJobs } from './schedule/schedule-jobs';
 import { scheduleRoutes } from './schedule/schedule-routes';
+import { myProgressRoutes } from './patients/my-progress-routes';
 import { patientsRoutes } from './patients/patients-routes';
 import { sitesRoutes } from './settings/sites-routes';
 
@@ -45,6 +46,7 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...scheduleRoutes(appointmentListeners),
     ...floorRoutes,
     ...patientsRoutes,
+    ...myProgressRoutes,
     ...billingRoutes,
     ...calendarRoutes,
     ...messagesRoutes,

@@ -24,6 +24,11 @@ export const speedOfMph = (mph: number): MetersPerMinute =>
   metersPerMinute(mph * metersPerMinutePerMph);
 export const mphOf = (speed: MetersPerMinute): number => speed / metersPerMinutePerMph;
 
+/** The international foot, exact: 0.3048 m. */
+const metersPerFoot = 0.3048;
+
+export const feetOf = (distance: Meters): number => distance / metersPerFoot;
+
 export const formatMeters = (distance: Meters): string => `${distance.toFixed(0)} m`;
 
 /** Miles an hour with one decimal, as treadmills show it. */

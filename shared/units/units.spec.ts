@@ -57,6 +57,7 @@ describe('quantities', () => {
     expect(units.poundsOf(units.kilogramsOfPounds(180))).toBeCloseTo(180, 12);
     expect(units.inchesOf(units.centimetersOfInches(70))).toBeCloseTo(70, 12);
     expect(units.mphOf(units.speedOfMph(2.8))).toBeCloseTo(2.8, 12);
+    expect(units.feetOf(units.meters(0.3048))).toBe(1);
     expect(units.vo2Of(units.mets(2))).toBe(7);
     expect(units.metsOf(units.vo2(7))).toBe(2);
   });

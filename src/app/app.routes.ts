@@ -31,6 +31,10 @@ export const routes: Routes = [
   },
   area('today', async () => (await import('./today/today.routes')).todayRoutes),
   area('my/range', async () => (await import('./my-range/my-range.routes')).myRangeRoutes),
+  area(
+    'my/progress',
+    async () => (await import('./my-progress/my-progress.routes')).myProgressRoutes,
+  ),
   area('schedule', async () => (await import('./schedule/schedule.routes')).scheduleRoutes),
   area(
     'my/sessions',

@@ -3,14 +3,19 @@ import { expectAccessible, useDesk } from './browser';
 
 const desk = useDesk();
 
-it('finds the soonest free classes, and what there is to pay', async () => {
+it('finds the soonest free classes, what there is to pay, and how far the course has come', async () => {
   const page = await desk.signIn('patient', 'phone');
   await page.waitForURL(/\/my\/sessions/);
   await expectAccessible(page);
   await page.getByRole('link', { name: 'Book a session' }).click();
   await page.getByRole('heading', { name: 'Soonest free' }).waitFor();
+  await expectAccessible(page);
   await page.goto(`${inject('product').url}/my/payments`);
   await page.getByRole('heading', { name: 'To pay' }).waitFor();
+  await page.goto(`${inject('product').url}/my/progress`);
+  await page.getByRole('heading', { name: 'Sessions done' }).waitFor();
+  await page.getByText('See the numbers').click();
+  await expectAccessible(page);
   await page.context().close();
 });
 
