@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { agentFor } from '../builders/agent';
+import { throughGate } from '../builders/gate';
 import {
   COMPLETED,
   openPaymentHouse,
@@ -71,7 +72,12 @@ describe('a class that the patient pays', () => {
         .then((rows) => rows.map(({ id }) => id)),
     });
     const agents = [owed.payer, house.frontDesk, await agentFor(twin, desk)];
-    const replies = await Promise.all(
+    const gate = {
+      lock: 'SELECT FROM charges WHERE id = $1 FOR UPDATE',
+      values: [owed.chargeId],
+      until: 10,
+    };
+    const replies = await throughGate(house.testApp, gate, () =>
       Array.from({ length: 50 }, (_, n) => house.checkout(owed, agents[n % agents.length])),
     );
     expect([...new Set(replies.map(({ status }) => status))]).toEqual([200]);

@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { agentFor, type Agent } from '../builders/agent';
+import { throughGate } from '../builders/gate';
 import { buildPatient, buildPatientWithAccount, buildSite, buildUser } from '../builders/people';
 import { createTestApp, type TestApp } from '../builders/test-app';
 
@@ -156,19 +157,15 @@ describe('accounts, as administrators keep them', () => {
     });
     const second = await agentFor(house, other);
     // Both calls are let in, wait for the same moment, and go on together.
-    const gate = await house.context.database.$client.connect();
-    await gate.query('BEGIN');
-    await gate.query('SELECT 1 FROM users WHERE id = ANY ($1) FOR UPDATE', [
-      [other.id, administrator.id],
-    ]);
-    const calls = [
+    const gate = {
+      lock: 'SELECT FROM users WHERE id = ANY ($1) FOR UPDATE',
+      values: [[other.id, administrator.id]],
+      until: 2,
+    };
+    const replies = await throughGate(house, gate, () => [
       agent.patch(`/api/users/${other.id}`).send({ roles: ['nurse'] }),
       second.patch(`/api/users/${administrator.id}`).send({ disabled: true }),
-    ].map((call) => call.then((reply) => reply));
-    await new Promise((resolve) => setTimeout(resolve, 300));
-    await gate.query('COMMIT');
-    gate.release();
-    const replies = await Promise.all(calls);
+    ]);
     const [done, refused] = replies.map((reply) => reply.status).sort();
     expect(done).toBe(200);
     // Whoever comes a moment later is no administrator any more, or signed out, when the call is looked at.
