@@ -13,6 +13,7 @@ import { serviceRoutes } from './http/service-routes';
 import type { JobDefinition } from './jobs/job';
 import { messagesJobs } from './messages/messages-jobs';
 import { messagesRoutes } from './messages/messages-routes';
+import { preferencesRoutes } from './messages/preferences-routes';
 import { remindOfAppointments } from './messages/reminder-listener';
 import type { AppointmentListener } from './schedule/appointment-events';
 import { messageOfAppointments } from './schedule/appointment-messages';
@@ -50,6 +51,7 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...billingRoutes,
     ...calendarRoutes,
     ...messagesRoutes,
+    ...preferencesRoutes,
     ...reportsRoutes,
   ];
   return routes;

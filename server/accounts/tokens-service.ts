@@ -1,8 +1,8 @@
-import { createHash, randomBytes } from 'node:crypto';
 import { v7 as uuidv7 } from 'uuid';
 import { setPasswordPath } from '@shared/contracts/accounts-contract';
 import type { Transaction } from '../database/client';
 import { fail } from '../http/failure';
+import { hashOfToken, newToken } from '../http/secret-token';
 
 export type TokenPurpose = 'password-reset' | 'invitation' | 'first-administrator';
 
@@ -12,8 +12,6 @@ const LIFETIME: Readonly<Record<TokenPurpose, number>> = {
   invitation: 72 * HOUR,
   'first-administrator': 24 * HOUR,
 };
-
-const hashOf = (token: string): Buffer => createHash('sha256').update(token).digest();
 
 /**
  * Makes a secret for one use, of which only the hash is kept: what is returned can be sent, and never read again.
@@ -25,11 +23,18 @@ export async function issueToken(
   userId: string | null,
   now: Date,
 ): Promise<string> {
-  const token = randomBytes(32).toString('base64url');
+  const token = newToken();
   await tx.connection.query(
     `INSERT INTO user_tokens (id, purpose, user_id, token_hash, expires_at, created_at)
      VALUES ($1, $2, $3, $4, $5, $6)`,
-    [uuidv7(), purpose, userId, hashOf(token), new Date(now.getTime() + LIFETIME[purpose]), now],
+    [
+      uuidv7(),
+      purpose,
+      userId,
+      hashOfToken(token),
+      new Date(now.getTime() + LIFETIME[purpose]),
+      now,
+    ],
   );
   return token;
 }
@@ -75,7 +80,7 @@ export async function consumeToken(
     `UPDATE user_tokens SET used_at = $3
       WHERE token_hash = $1 AND purpose::text = ANY ($2) AND used_at IS NULL AND expires_at > $3
       RETURNING purpose, user_id AS "userId"`,
-    [hashOf(token), purposes, now],
+    [hashOfToken(token), purposes, now],
   );
   const [used] = rows;
   if (!used) {

@@ -1,23 +1,21 @@
-import { createHash, randomBytes } from 'node:crypto';
 import ical, { ICalCalendarMethod, ICalEventStatus } from 'ical-generator';
 import type { Transaction } from '../database/client';
-
-const hashOf = (token: string): Buffer => createHash('sha256').update(token).digest();
+import { hashOfToken, newToken } from '../http/secret-token';
 
 /**
  * Makes the patient's calendar address anew, of which only the hash is kept; the former one ends.
- * @returns 256 random bits in base64url
+ * @returns the secret that stands in it
  */
 export async function renewCalendarToken(
   tx: Transaction,
   patientId: string,
   now: Date,
 ): Promise<string> {
-  const token = randomBytes(32).toString('base64url');
+  const token = newToken();
   await tx.connection.query(
     `INSERT INTO calendar_links (patient_id, token_hash, created_at) VALUES ($1, $2, $3)
      ON CONFLICT (patient_id) DO UPDATE SET token_hash = excluded.token_hash, created_at = excluded.created_at`,
-    [patientId, hashOf(token), now],
+    [patientId, hashOfToken(token), now],
   );
   return token;
 }
@@ -29,7 +27,7 @@ export async function patientOfCalendar(
 ): Promise<string | undefined> {
   const { rows } = await tx.connection.query<{ patientId: string }>(
     'SELECT patient_id AS "patientId" FROM calendar_links WHERE token_hash = $1',
-    [hashOf(token)],
+    [hashOfToken(token)],
   );
   return rows[0]?.patientId;
 }

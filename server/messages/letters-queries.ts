@@ -6,6 +6,7 @@ import { appointments, classDates, patients, payments, sites, users } from '../d
 export async function findPatientRecipient(tx: Transaction, patientId: string) {
   const [row] = await tx
     .select({
+      id: patients.id,
       firstName: patients.givenName,
       email: sql<string | null>`coalesce(${patients.email}, ${users.email})`,
       userId: patients.userId,

@@ -8,6 +8,7 @@ import { reminderDueAt } from '@shared/scheduling/reminder-time';
 import type { Transaction } from '../database/client';
 import { findReceived, readBookings, type Booking, type PatientRecipient } from './letters-queries';
 import type { ClaimedMessage } from './outbox-repository';
+import { issueUnsubscribing } from './preferences-service';
 
 /** What a message needs to be written. */
 export interface Writing {
@@ -21,7 +22,11 @@ export interface Writing {
 
 /** A letter is rendered outside the transaction that read what it tells. */
 export type Written =
-  | { readonly outcome: 'letter'; readonly render: () => Promise<RenderedEmail> }
+  | {
+      readonly outcome: 'letter';
+      readonly render: () => Promise<RenderedEmail>;
+      readonly headers?: Readonly<Record<string, string>>;
+    }
   /** There is nothing left to tell: it was cancelled, moved or is past. */
   | { readonly outcome: 'overtaken' }
   /** What it tells of was moved to a later day. */
@@ -97,13 +102,16 @@ const cancellation: PatientLetter = async (writing, recipient) => {
   return { outcome: 'letter', render: () => bookingCancellation.render(props) };
 };
 
+/** Who stops reminders from here gets none any more: `sending-service` asks before it writes. */
 const reminding: PatientLetter = async (writing, recipient) => {
   const booked = among(await bookingsOf(writing), writing.now, ['booked']);
   if (!booked) return OVERTAKEN;
   const dueAt = reminderDueAt(booked[0].startsAt, recipient.timeZone);
   if (dueAt > writing.now) return { outcome: 'later', dueAt };
-  const props = { ...propsOf(writing, recipient, booked), unsubscribeLink: null };
-  return { outcome: 'letter', render: () => reminder.render(props) };
+  const { tx, origin, now } = writing;
+  const { link, headers } = await issueUnsubscribing(tx, { patientId: recipient.id, origin, now });
+  const props = { ...propsOf(writing, recipient, booked), unsubscribeLink: link };
+  return { outcome: 'letter', headers, render: () => reminder.render(props) };
 };
 
 const receiving: PatientLetter = async ({ tx, message, origin, senderName }, recipient) => {

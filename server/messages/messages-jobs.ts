@@ -2,6 +2,7 @@ import * as z from 'zod';
 import { inTransaction } from '../database/transaction';
 import { addJob, job, type JobDefinition } from '../jobs/job';
 import { overdueMessages } from './outbox-repository';
+import { forgetOldLinks } from './preferences-service';
 import { sendMessage } from './sending-service';
 
 const send = job({
@@ -26,4 +27,11 @@ const sendOverdue = job({
   },
 });
 
-export const messagesJobs: readonly JobDefinition[] = [send, sendOverdue];
+const forgetLinks = job({
+  name: 'forget-unsubscribe-links',
+  payload: z.object({}),
+  schedule: '37 3 * * *',
+  run: (_, { database, clock }) => inTransaction(database, (tx) => forgetOldLinks(tx, clock.now())),
+});
+
+export const messagesJobs: readonly JobDefinition[] = [send, sendOverdue, forgetLinks];

@@ -49,11 +49,14 @@ export async function markSent(tx: Transaction, id: string, now: Date): Promise<
   );
 }
 
-/** Leaves a message for good: `cancelled` when there is nothing left to tell, else `failed`. */
+/** Leaves a message for good: `cancelled` when there is nothing left to tell or nobody who wants to hear it, else `failed`. */
 export async function markEnded(
   tx: Transaction,
   id: string,
-  { status, reason }: { status: 'cancelled' | 'failed'; reason: UndeliveredReason | 'overtaken' },
+  {
+    status,
+    reason,
+  }: { status: 'cancelled' | 'failed'; reason: UndeliveredReason | 'overtaken' | 'declined' },
 ): Promise<void> {
   await tx.connection.query(
     'UPDATE outbox SET status = $2, last_error = $3, hold_until = NULL WHERE id = $1',

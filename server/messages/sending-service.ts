@@ -16,6 +16,7 @@ import {
   suppress,
   type ClaimedMessage,
 } from './outbox-repository';
+import { isDeclined } from './preferences-service';
 
 const MINUTE = 60_000;
 const FIRST_WAIT_MS = MINUTE;
@@ -56,6 +57,10 @@ async function refusal(tx: Transaction, to: string | null): Promise<UndeliveredR
 /** Reads again what the message tells of; what cannot or need not be told is put aside. */
 async function prepare(writing: Writing): Promise<Letter | null> {
   const { tx, message } = writing;
+  if (await isDeclined(tx, message)) {
+    await markEnded(tx, message.id, { status: 'cancelled', reason: 'declined' });
+    return null;
+  }
   const addressed = await address(writing);
   const reason = addressed && (await refusal(tx, addressed.to));
   if (!addressed?.to || reason) {
@@ -119,9 +124,9 @@ async function deliver(
   context: AppContext,
   mailer: Mailer,
   message: ClaimedMessage,
-  { to, render }: Letter,
+  { to, render, headers = {} }: Letter,
 ): Promise<void> {
-  const outcome = await mailer.send({ outboxId: message.id, to, ...(await render()) });
+  const outcome = await mailer.send({ outboxId: message.id, to, headers, ...(await render()) });
   if (outcome.outcome !== 'sent') {
     const { outcome: what } = outcome;
     context.log.warn({ outboxId: message.id, kind: message.kind, outcome: what }, 'mail not sent');

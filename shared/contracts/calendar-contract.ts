@@ -1,8 +1,7 @@
 import * as z from 'zod';
-import './zod';
+import { tokenField } from './fields';
 
-/** 256 random bits in base64url. */
-export const calendarParamsSchema = z.object({ token: z.string().regex(/^[\w-]{43}$/) });
+export const calendarParamsSchema = z.object({ token: tokenField });
 
 /** An address that a calendar program reads by itself; a new one makes the former useless. */
 export const calendarLinkSchema = z.object({ url: z.url() });

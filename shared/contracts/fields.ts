@@ -69,3 +69,6 @@ export const timeZoneField = z.string().refine((zone) => {
     return false;
   }
 }, 'Choose a time zone from the list');
+
+/** A secret in an address: 256 bits in base64url. */
+export const tokenField = z.string().regex(/^[\w-]{43}$/);

@@ -1,5 +1,5 @@
 import * as z from 'zod';
-import { cursorField } from './fields';
+import { cursorField, tokenField } from './fields';
 import './zod';
 
 export const messageKinds = [
@@ -49,3 +49,16 @@ export const undeliveredResponseSchema = z.object({
   items: z.array(undeliveredSchema),
   nextCursor: z.string().nullable(),
 });
+
+/** What a patient wants to be sent by e-mail. What they book, cancel and pay is told in any case. */
+export const messagePreferencesSchema = z.object({
+  /** A reminder on the day before a class. */
+  reminders: z.boolean(),
+});
+export type MessagePreferences = z.infer<typeof messagePreferencesSchema>;
+
+/** `PUT /api/my/message-preferences` */
+export const messagePreferencesRequestSchema = z.strictObject({ reminders: z.boolean() });
+
+/** `GET` and `POST /api/unsubscribe/:token`; the token of a reminder decides whose they are. */
+export const unsubscribeParamsSchema = z.object({ token: tokenField });

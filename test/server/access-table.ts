@@ -282,6 +282,10 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
   },
   'POST /api/my/calendar-link': { who: ['patient'], none: 'one’s own calendar alone' },
   'GET /api/calendar/:token.ics': { who: 'anyone', none: 'the token decides' },
+  'GET /api/my/message-preferences': { who: ['patient'], none: 'one’s own wishes alone' },
+  'PUT /api/my/message-preferences': { who: ['patient'], none: 'one’s own wishes alone' },
+  'GET /api/unsubscribe/:token': { who: 'anyone', none: 'leads to a page' },
+  'POST /api/unsubscribe/:token': { who: 'anyone', none: 'the token decides' },
   'POST /api/messages/undelivered': {
     who: takingPayments,
     strangers: 200,

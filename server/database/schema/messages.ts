@@ -1,4 +1,5 @@
 import {
+  boolean,
   customType,
   index,
   integer,
@@ -56,6 +57,28 @@ export const suppressions = pgTable('suppressions', {
   reason: text().notNull(),
   createdAt: madeAt(),
 });
+
+/** What a patient wants to be sent. No row is the default: reminders come. */
+export const messagePreferences = pgTable('message_preferences', {
+  patientId: uuid()
+    .primaryKey()
+    .references(() => patients.id),
+  reminders: boolean().notNull(),
+  changedAt: madeAt(),
+});
+
+/** Where reminders are stopped without signing in: a secret a mail, kept as a hash. */
+export const unsubscribeLinks = pgTable(
+  'unsubscribe_links',
+  {
+    tokenHash: bytes().primaryKey(),
+    patientId: uuid()
+      .notNull()
+      .references(() => patients.id),
+    createdAt: madeAt(),
+  },
+  (t) => [index('unsubscribe_links_age').on(t.createdAt)],
+);
 
 /** Where a patient's own calendar program reads; one address a patient, kept as a hash. */
 export const calendarLinks = pgTable('calendar_links', {
