@@ -48,6 +48,7 @@ async function startPaymentService(surroundings, port) {
       WEBHOOK_URL: `http://127.0.0.1:${surroundings.port}/api/payments/webhook`,
       WEBHOOK_SECRET: webhookSecret,
       API_KEY: STAND_IN_KEY,
+      KNOWN_PAYMENTS: join(surroundings.folder, 'demo-payments.json'),
     },
     surroundings,
   );

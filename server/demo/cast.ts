@@ -107,6 +107,7 @@ export const cast: ReadonlyMap<number, CastMember> = new Map<number, CastMember>
     {
       site: 'quayside',
       situation: 'Stent, beta blocker, treadmill test',
+      enrolled: -84,
       fate: { ...stays, pace: 3, leaves: { after: 14, reason: 'new event' } },
     },
   ],
@@ -116,4 +117,17 @@ export const cast: ReadonlyMap<number, CastMember> = new Map<number, CastMember>
   [52, { fate: { ...stays, gap: { after: 8, days: 50, closed: true } } }],
   [64, { fate: { ...stays, plannedSessions: 18, pace: 2 } }],
   [70, { fate: { startsAfter: null } }],
+  // Discharged before the physician had signed: the first range is put aside.
+  [
+    76,
+    {
+      fate: {
+        ...stays,
+        pace: 3,
+        reliability: 1,
+        leaves: { after: 1, reason: 'medical discharge' },
+        signing: { physiologist: 0, physician: 12 },
+      },
+    },
+  ],
 ]);

@@ -48,6 +48,8 @@ export interface Course {
   readonly closing: Closing | null;
   /** How often its status has changed. */
   readonly changes: number;
+  /** A closing that was not for good: when it was, and the day of the return, once that has come. */
+  readonly pause: { readonly at: Date; readonly back: Day } | null;
 }
 
 const extraWeekday = 6;
@@ -170,20 +172,24 @@ function closingOf(walk: Walk): Closing | null {
 function statusOf(
   walk: Walk,
   closing: Closing | null,
-): Pick<Course, 'status' | 'closing' | 'changes'> {
+): Pick<Course, 'status' | 'closing' | 'changes' | 'pause'> {
   const { plan, clock, seen } = walk;
   const noon = (day: Day) => instantAt(day, 12 * 60, zoneOf(walk));
   const left = seen.away !== null && noon(seen.away.from) <= clock.now;
   const back = seen.away !== null && noon(seen.away.to) <= clock.now;
   const before = (left ? 1 : 0) + (back ? 1 : 0);
-  if (closing) return { status: closing.status, closing, changes: before + 1 };
-  if (!left || back || !seen.away) return { status: 'active', closing: null, changes: before };
-  if (!plan.fate.gap?.closed) return { status: 'on-hold', closing: null, changes: before };
+  const away = plan.fate.gap?.closed && back ? seen.away : null;
+  const pause = away && { at: noon(away.from), back: away.to };
+  if (closing) return { status: closing.status, closing, changes: before + 1, pause };
+  if (!left || back || !seen.away)
+    return { status: 'active', closing: null, changes: before, pause };
+  if (!plan.fate.gap?.closed) return { status: 'on-hold', closing: null, changes: before, pause };
   const { from } = seen.away;
   return {
     status: 'discontinued',
     closing: { on: from, at: noon(from), status: 'discontinued', reason: 'asked to stop' },
     changes: before,
+    pause,
   };
 }
 

@@ -115,7 +115,7 @@ export function fateOf(dice: Dice, { diagnosis, age, payer, luck }: FateOf): Fat
     reliability: dice.near(completes ? 0.91 : 0.84, 0.04),
     leaves: completes ? null : leavesOf(dice, planned),
     gap: gapOf(dice),
-    maintenance: completes && dice.chance(0.6),
+    maintenance: completes && dice.chance(0.85),
     turn: turnOf(dice, diagnosis),
     signing: { physiologist: dice.chance(0.25) ? 1 : 0, physician: dice.whole(1, 3) },
   };

@@ -3,6 +3,7 @@ import type { Clock } from './clock';
 import type { Visit } from './courses';
 import { minutesLater } from './days';
 import { dice, idAt } from './dice';
+import { storyPaymentId } from './story-payments';
 import { priceItemId, selfPayPrice } from './program';
 import type { RowOf } from './row-of';
 import type { PeopleRows } from './rows';
@@ -65,7 +66,7 @@ function settle(rows: PeopleRows, visit: Visit, chargeId: string, payer: string,
     status: 'settled',
     serviceSessionId: `cs_test_demo_${id}`,
     serviceSessionUrl: null,
-    servicePaymentId: `pi_demo_${id}`,
+    servicePaymentId: storyPaymentId(id),
     createdBy: payer,
     createdAt: minutesLater(at, -2),
     settledAt: at,

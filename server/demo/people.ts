@@ -32,14 +32,14 @@ export interface Person {
   readonly fate: Fate;
 }
 
-/** A person or so a week for the first ten months, then nearly one a day: the program grew. */
+/** A person or so a week for the first ten months, then eight a week: the program grew. */
 const earlyPeople = 46;
 const peopleByTheFirstDay = 166;
 
 function arrival(index: number): number {
   return index < earlyPeople
     ? 5 - daysOfHistory + Math.floor(index * 6.5)
-    : Math.floor(-122 + (index - earlyPeople) * 1.01);
+    : Math.floor(-106 + (index - earlyPeople) * 0.88);
 }
 
 /** Its multiples less their whole part lie evenly between 0 and 1. */

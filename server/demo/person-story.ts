@@ -9,8 +9,9 @@ import type { FollowedPerson } from './plans';
 import { isMonitored } from './people';
 import { siteId } from './program';
 import { prescriptionRows, rangeAt } from './ranges';
+import type { RangeOwner } from './ranges';
 import { writeAnginaInClass, writeDiagnosis, writeIntake, writeRestingRates } from './record-rows';
-import { passTime, writeRange } from './reviews';
+import { passTime, reviewAtReturn, writeRange } from './reviews';
 import type { PeopleRows } from './rows';
 import { beginTelling, scribeAt } from './telling';
 import type { Telling } from './telling';
@@ -115,7 +116,8 @@ function noteAngina(telling: Telling, visit: Visit): void {
 
 function attend(telling: Telling, course: Course, visit: Visit, visitor: Visitor): void {
   const angina = anginaDue(telling, course, visit);
-  const range = rangeAt(telling.ranges, visit.startsAt, telling.withdrawal);
+  const ranges = telling.ranges.slice(telling.rangesBefore);
+  const range = rangeAt(ranges, visit.startsAt, telling.withdrawal);
   const anginaAt = angina ? anginaInClass(telling.chart).heartRate : null;
   const readings = writeSession(telling.rows, visit, visitor, telling.chart, range, anginaAt);
   if (visit.state !== 'attended') return;
@@ -145,32 +147,50 @@ function rangesEnd(telling: Telling, course: Course, next: Course | undefined): 
   return undecided ? null : closing.at;
 }
 
+/** Writes down the ranges from one on, which end at a moment; null: the last one stays in force. */
+function endRanges(telling: Telling, from: number, owner: RangeOwner, endsAt: Date | null): void {
+  const issued = telling.ranges.slice(from);
+  telling.rows.prescriptions.push(...prescriptionRows(issued, owner, endsAt, telling.clock.now));
+}
+
+/** A range ends with its course: who comes back to a course that was closed begins with another. */
+function comeBack(telling: Telling, { plan, pause }: Course, from: number, owner: RangeOwner) {
+  if (!pause) return;
+  passTime(telling, plan, pause.at);
+  endRanges(telling, from, owner, pause.at);
+  telling.rangesBefore = telling.ranges.length;
+  telling.withdrawal = null;
+  reviewAtReturn(telling, pause.back);
+}
+
+function tellVisits(telling: Telling, course: Course, visits: readonly Visit[], visitor: Visitor) {
+  for (const visit of visits) {
+    writeAppointment(telling.rows, visit, visitor, telling.clock);
+    if (visit.state !== 'attended' && visit.state !== 'held') continue;
+    passTime(telling, course.plan, atSite(telling.person.site, visit.day + 1, 0));
+    attend(telling, course, visit, visitor);
+  }
+}
+
 function tellCourse(telling: Telling, course: Course, next: Course | undefined): void {
-  const { plan } = course;
-  const { clock, rows, patientId, crew, userId } = telling;
+  const { plan, pause, visits } = course;
+  const { clock, patientId, crew, userId } = telling;
   const at = atSite(telling.person.site, plan.enrolledOn, workday.intake);
   if (at > clock.now) return;
   const enrollmentId = writeEnrollment(telling, course, at);
+  const { physiologist, physician } = crew;
+  const owner = { patientId, enrollmentId, physiologist, physician };
   const firstRange = telling.ranges.length;
   enroll(telling, course, at);
   const monitored = plan.phase === 2 && isMonitored(telling.person);
   const visitor = { patientId, enrollmentId, userId, monitored, crew };
-  for (const visit of course.visits) {
-    writeAppointment(rows, visit, visitor, clock);
-    if (visit.state !== 'attended' && visit.state !== 'held') continue;
-    passTime(telling, plan, atSite(telling.person.site, visit.day + 1, 0));
-    attend(telling, course, visit, visitor);
-  }
+  const before = visits.filter(({ day }) => !pause || day < pause.back);
+  tellVisits(telling, course, before, visitor);
+  comeBack(telling, course, firstRange, owner);
+  tellVisits(telling, course, visits.slice(before.length), visitor);
   passTime(telling, plan, course.closing?.at ?? clock.now);
-  const endsAt = rangesEnd(telling, course, next);
-  const owner = {
-    patientId,
-    enrollmentId,
-    physiologist: crew.physiologist,
-    physician: crew.physician,
-  };
-  const issued = telling.ranges.slice(firstRange);
-  rows.prescriptions.push(...prescriptionRows(issued, owner, endsAt, clock.now));
+  const sinceReturn = pause ? telling.rangesBefore : firstRange;
+  endRanges(telling, sinceReturn, owner, rangesEnd(telling, course, next));
 }
 
 /** Tells one person's story to where the clock stands. */

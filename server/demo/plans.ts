@@ -1,6 +1,8 @@
+import { clockAt } from './clock';
 import type { Clock } from './clock';
 import { followCourse } from './courses';
 import type { Course, CoursePlan } from './courses';
+import type { Day } from './days';
 import { dice } from './dice';
 import { patientAccountIndex } from './cast';
 import { fateOf } from './fates';
@@ -8,7 +10,7 @@ import type { Fate } from './fates';
 import { isMonitored } from './people';
 import type { Person } from './people';
 import { openSlotBook } from './slots';
-import type { Slot, SlotBook } from './slots';
+import type { Slot, SlotBook, Span } from './slots';
 
 /** A person with the courses so far, in their order. */
 export interface FollowedPerson {
@@ -18,7 +20,7 @@ export interface FollowedPerson {
 
 const daysToSecondCourse = 40;
 export const daysToMaintenance = 5;
-const maintenanceSessions = 48;
+const maintenanceSessions = 60;
 
 function firstPlan(person: Person, slot: Slot): CoursePlan {
   return {
@@ -58,7 +60,7 @@ function maintenanceFate(key: string): Fate {
     pace: 2,
     startsAfter: 2,
     reliability: draw.near(0.88, 0.05),
-    leaves: draw.chance(0.3) ? { after: draw.whole(4, 20), reason: 'stopped coming' } : null,
+    leaves: draw.chance(0.3) ? { after: draw.whole(8, 30), reason: 'stopped coming' } : null,
     gap: null,
     maintenance: false,
     turn: null,
@@ -66,31 +68,50 @@ function maintenanceFate(key: string): Fate {
   };
 }
 
-function maintenancePlan(person: Person, last: Course, book: SlotBook): CoursePlan | null {
+function maintenancePlan(
+  person: Person,
+  last: Course,
+  book: SlotBook,
+  end: Clock,
+): CoursePlan | null {
   if (!person.fate.maintenance || last.closing?.status !== 'completed') return null;
   const enrolledOn = last.closing.on + daysToMaintenance;
   const key = `${person.key} maintenance`;
-  const slot = book.keepMaintenance(key, person.site, { from: enrolledOn, to: enrolledOn + 220 });
-  if (!slot) return null;
-  return {
+  const fate = maintenanceFate(key);
+  const planIn = (slot: Slot): CoursePlan => ({
     ...last.plan,
     key,
     phase: 3,
     enrolledOn,
     slot,
-    fate: maintenanceFate(key),
+    fate,
     extraClass: false,
-  };
+  });
+  const slot = book.keepMaintenance(key, person.site, (asked) =>
+    spanOfVisits([followCourse(planIn(asked), end)], enrolledOn),
+  );
+  return slot && planIn(slot);
 }
 
-/** How long the weekly places are kept: the plan at its pace with a third to spare, and what may come between. */
-function keptSlot(person: Person, book: SlotBook): Slot {
-  const { startsAfter, plannedSessions, pace, gap, leaves } = person.fate;
-  const from = person.enrolledOn + (startsAfter ?? 0);
-  const weeks = (plannedSessions / pace) * 1.33 + 2;
-  const between = (gap ? gap.days + 7 : 0) + (leaves?.reason === 'new event' ? 190 : 0);
-  const to = startsAfter === null ? from : from + Math.ceil(weeks * 7) + between;
-  return book.keep(person.key, person.site, pace, isMonitored(person), { from, to });
+/** After every course of whoever is there now, so that all of it has happened. */
+const inTheEnd = (clock: Clock): Clock =>
+  clockAt(clock.anchor, new Date(clock.now.getTime() + 4 * 365 * 86_400_000));
+
+/** From the first place that is ever booked to the last, those that are given back too. */
+function spanOfVisits(courses: readonly Course[], from: Day): Span {
+  const days = courses.flatMap(({ visits }) => visits.map(({ day }) => day));
+  return { from: Math.min(...days, from), to: Math.max(...days, from) };
+}
+
+/** The weekly places of a person, kept for as long as the courses will go on in them. */
+function keptSlot(person: Person, book: SlotBook, end: Clock): Slot {
+  const { key, site, enrolledOn, fate } = person;
+  return book.keep({ key, site, pace: fate.pace, monitored: isMonitored(person) }, (slot) => {
+    const first = followCourse(firstPlan(person, slot), end);
+    const second = secondPlan(person, first);
+    const courses = second ? [first, followCourse(second, end)] : [first];
+    return spanOfVisits(courses, enrolledOn + (fate.startsAfter ?? 0));
+  });
 }
 
 /** Everybody's courses to where the clock stands. Places go in the order of asking, so a later telling moves nobody. */
@@ -98,7 +119,8 @@ export function followPeople(people: readonly Person[], clock: Clock): FollowedP
   const book = openSlotBook();
   const begun = (plan: { enrolledOn: number }, person: Person) =>
     plan.enrolledOn <= clock.today(person.site);
-  const slots = people.map((person) => keptSlot(person, book));
+  const end = inTheEnd(clock);
+  const slots = people.map((person) => keptSlot(person, book, end));
   const phase2 = people.map((person, each) => {
     const slot = slots[each];
     if (!slot || !begun(person, person)) return { person, courses: [] };
@@ -115,7 +137,7 @@ export function followPeople(people: readonly Person[], clock: Clock): FollowedP
   const maintained = new Map<number, Course>();
   for (const { person, courses } of byLastDay) {
     const last = courses.at(-1);
-    const plan = last && maintenancePlan(person, last, book);
+    const plan = last && maintenancePlan(person, last, book, end);
     if (plan && begun(plan, person)) maintained.set(person.index, followCourse(plan, clock));
   }
   return phase2.map(({ person, courses }) => {

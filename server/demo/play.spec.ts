@@ -9,6 +9,7 @@ import { counterDifferences } from '../schedule/counters-service';
 import { patientAccount, staff } from './accounts';
 import { playDemo } from './play';
 import type { PlayOutcome } from './play';
+import { storyPayments } from './story-payments';
 
 const firstStart = new Date('2026-12-01T15:10:00Z');
 const nextMorning = new Date('2026-12-02T15:05:00Z');
@@ -129,6 +130,18 @@ describe('the first load', () => {
     );
     expect(sums?.receivable).toBe(sums?.open);
     expect(Number(sums?.open)).toBeGreaterThan(0);
+  });
+});
+
+describe('the payments of the story', () => {
+  it('are told to the stand-in of the service as they were made, so that they can be given back', async () => {
+    const told = await storyPayments(database);
+    expect(told.length).toBe(await count(`payments WHERE status = 'settled'`));
+    expect(told.length).toBeGreaterThan(100);
+    for (const { id, amount, currency } of told) {
+      expect([amount, currency]).toEqual([1800, 'usd']);
+      expect(id).toMatch(/^pi_demo_[0-9a-f]{32}$/);
+    }
   });
 });
 
@@ -256,7 +269,7 @@ describe('playing on', () => {
     expect(await count('patients WHERE record_number = $1', [next(2)])).toBe(1);
     expect(await playTo(new Date('2027-01-20T20:00:00Z'))).toBe('played on');
     expect(await counterDifferences(database)).toEqual([]);
-  });
+  }, 60_000);
 
   it('leaves rows of another version of the story as they are', async () => {
     await query(`UPDATE demo_plays SET story = '0'`);

@@ -70,12 +70,12 @@ interface ClassPlan {
   readonly selfPay: boolean;
 }
 
-/** Mornings are staffed to monitor nearly everybody; later the few channels go to those who need them. */
+/** Mornings are staffed to monitor everybody; later the few channels go to those who need them. */
 function places(hour: number): Pick<ClassPlan, 'name' | 'capacity' | 'monitoredPlaces'> {
-  if (hour < 9) return { name: 'Early exercise', capacity: 8, monitoredPlaces: 8 };
-  if (hour < 12) return { name: 'Morning exercise', capacity: 12, monitoredPlaces: 10 };
-  if (hour < 17) return { name: 'Afternoon exercise', capacity: 10, monitoredPlaces: 6 };
-  return { name: 'Evening exercise', capacity: 10, monitoredPlaces: 4 };
+  if (hour < 9) return { name: 'Early exercise', capacity: 12, monitoredPlaces: 8 };
+  if (hour < 12) return { name: 'Morning exercise', capacity: 12, monitoredPlaces: 12 };
+  if (hour < 17) return { name: 'Afternoon exercise', capacity: 12, monitoredPlaces: 8 };
+  return { name: 'Evening exercise', capacity: 12, monitoredPlaces: 6 };
 }
 
 function classesOf(site: SiteKey): ClassPlan[] {

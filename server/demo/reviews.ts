@@ -59,8 +59,17 @@ function review(telling: Telling, on: Day, afterChange: boolean): void {
     return;
   }
   const at = atSite(telling.person.site, on, workday.review);
+  restAndWrite(telling, on, at, afterChange ? [2, 1, 0] : [4, 2, 0]);
+}
+
+/** The first range after a course that was closed is opened again. */
+export function reviewAtReturn(telling: Telling, on: Day): void {
+  restAndWrite(telling, on, atSite(telling.person.site, on, workday.range), [2, 1, 0]);
+}
+
+/** Takes the resting rate anew and writes a range on it. @param days before the review on which the rate was taken */
+function restAndWrite(telling: Telling, on: Day, at: Date, days: readonly number[]): void {
   const seated = seatedAfter(telling.chart, telling.attended);
-  const days = afterChange ? [2, 1, 0] : [4, 2, 0];
   writeRestingRates(telling.rows, scribeAt(telling, at), telling.chart, seated, on, days);
   writeRange(telling, on, at);
 }

@@ -1,7 +1,8 @@
 import type { SiteKey } from './accounts';
 import type { Day } from './days';
 import { dice } from './dice';
-import { classAt, classPlans, maintenanceDays, maintenanceHour, openingHour } from './program';
+import type { Dice } from './dice';
+import { classAt, closingHour, maintenanceDays, maintenanceHour, openingHour } from './program';
 
 /** The weekly places that a course keeps. */
 export interface Slot {
@@ -11,9 +12,15 @@ export interface Slot {
   readonly selfPay: boolean;
 }
 
-interface Span {
+/** The first and the last day on which a place is held. */
+export interface Span {
   readonly from: Day;
   readonly to: Day;
+}
+
+interface Candidate {
+  readonly slot: Slot;
+  readonly span: Span;
 }
 
 interface Taken extends Span {
@@ -27,48 +34,59 @@ function mostAtOnce(taken: readonly Taken[], span: Span): number {
   return Math.max(...[span.from, ...arrivals].map(there));
 }
 
-/** Places kept free for people who book themselves. */
-const keptFree = 2;
+const sunday = 7;
 
-/** What the front desk is asked for most: not too early, not too late; 1 where not said. */
-const wanted: Record<SiteKey, Readonly<Record<number, number>>> = {
-  quayside: { 9: 1.6, 10: 6, 11: 1.6 },
-  'mill-street': { 9: 4 },
+/** Kept free beside what is given back, for people who book themselves. */
+const keptFree = 1;
+
+interface Time {
+  /** The class that people of this part of the day are put into first; the hours beside it take who finds no place. */
+  readonly hour: number;
+  /** Of all who ask at the site, the part that wants it. */
+  readonly share: number;
+}
+
+/** Staff are there for full classes, so a site fills a few times of the day before it opens more. */
+const usualTimes: Record<SiteKey, readonly Time[]> = {
+  quayside: [
+    { hour: 10, share: 0.4 },
+    { hour: 14, share: 0.34 },
+    { hour: 17, share: 0.26 },
+  ],
+  'mill-street': [{ hour: 9, share: 1 }],
 };
 
 const weeklyPatterns: Record<2 | 3, readonly (readonly number[])[]> = {
   2: [
-    [1, 4],
-    [2, 5],
-    [3, 6],
-    [4, 7],
+    [1, 3],
+    [2, 4],
     [1, 5],
+    [4, 6],
+    [3, 5],
     [2, 6],
-    [3, 7],
+    [4, 7],
   ],
   3: [
     [1, 3, 5],
     [2, 4, 6],
     [2, 4, 7],
-    [1, 3, 6],
-    [3, 5, 7],
-    [1, 4, 6],
-    [2, 5, 7],
   ],
 };
 
 const maintenancePatterns: readonly (readonly number[])[] = [
   [2, 4],
-  [2, 6],
-  [4, 6],
+  [2, 4, 6],
 ];
+
+/** How long a slot would be held if it were given. */
+export type SpanOf = (slot: Slot) => Span;
 
 /** The book of weekly places: who came first has chosen first. */
 export interface SlotBook {
-  /** A pattern and hour where there is most room for what is wanted. */
-  keep(key: string, site: SiteKey, pace: 2 | 3, monitored: boolean, span: Span): Slot;
+  /** Days with most room at the time that is asked for, or as near to it as there is a place. */
+  keep(who: { key: string; site: SiteKey; pace: 2 | 3; monitored: boolean }, spanOf: SpanOf): Slot;
   /** Null when the class is full. */
-  keepMaintenance(key: string, site: SiteKey, span: Span): Slot | null;
+  keepMaintenance(key: string, site: SiteKey, spanOf: SpanOf): Slot | null;
 }
 
 export function openSlotBook(): SlotBook {
@@ -80,7 +98,7 @@ export function openSlotBook(): SlotBook {
       (other) => other.from <= span.to && span.from <= other.to,
     );
 
-  /** How full a class is for its wish, or Infinity when it has no place or no channel left. */
+  /** How full the classes of a slot are, the fullest counted twice, or Infinity when one has no place or channel left. */
   const crowding = (slot: Slot, monitored: boolean, span: Span) => {
     const { capacity, monitoredPlaces } = classAt(slot.site, slot.hour, slot.selfPay);
     const loads = slot.weekdays.map((weekday) => {
@@ -91,48 +109,67 @@ export function openSlotBook(): SlotBook {
         span,
       );
       const full = there >= capacity - keptFree || (monitored && channels >= monitoredPlaces - 1);
-      return full ? Infinity : (there + 1) / (wanted[slot.site][slot.hour] ?? 1);
+      return full ? Infinity : there;
     });
-    return Math.max(...loads) / 2 + loads.reduce((sum, load) => sum + load, 0) / loads.length;
+    return Math.max(...loads) + loads.reduce((sum, load) => sum + load, 0) / loads.length;
   };
 
-  const choose = (candidates: readonly Slot[], key: string, monitored: boolean, span: Span) => {
-    const draw = dice(key, 'slot');
-    const [best] = candidates
-      .map((slot) => ({ slot, load: crowding(slot, monitored, span) + draw.next() / 5 }))
-      .sort((a, b) => a.load - b.load);
-    if (!best || best.load === Infinity) return null;
-    for (const weekday of best.slot.weekdays) {
-      const name = cell(best.slot.site, weekday, best.slot.hour);
+  const take = ({ site, weekdays, hour }: Slot, monitored: boolean, span: Span) => {
+    for (const weekday of weekdays) {
+      const name = cell(site, weekday, hour);
       taken.set(name, [...(taken.get(name) ?? []), { ...span, monitored }]);
     }
+  };
+
+  /** The one with most room, and takes it. */
+  const choose = (candidates: readonly Candidate[], draw: Dice, monitored: boolean) => {
+    const [best] = candidates
+      .map((each) => ({ ...each, load: crowding(each.slot, monitored, each.span) + draw.next() }))
+      .sort((a, b) => a.load - b.load);
+    if (!best || best.load === Infinity) return null;
+    take(best.slot, monitored, best.span);
     return best.slot;
   };
 
   return {
-    keep(key, site, pace, monitored, span) {
-      const hours = [...new Set(classPlans.map(({ hour }) => hour))];
-      const candidates = weeklyPatterns[pace].flatMap((weekdays) =>
-        hours
-          .filter((hour) => hour >= openingHour && !atNoonWithMaintenance(hour, weekdays))
-          .map((hour) => ({ site, hour, weekdays, selfPay: false })),
-      );
-      const slot = choose(candidates, key, monitored, span);
-      if (!slot) throw new RangeError(`no place left for ${key}`);
-      return slot;
+    keep({ key, site, pace, monitored }, spanOf) {
+      const draw = dice(key, 'slot');
+      const { hour: usual } = draw.weigh(usualTimes[site], ({ share }) => share);
+      // Nothing of a course hangs on the hour, so that its span is asked for once a pattern.
+      const patterns = weeklyPatterns[pace].map((weekdays) => ({
+        weekdays,
+        span: spanOf({ site, hour: usual, weekdays, selfPay: false }),
+      }));
+      for (const hour of nearestFirst(usual)) {
+        const candidates = patterns
+          .filter(({ weekdays }) => isHeld(site, hour, weekdays))
+          .map(({ weekdays, span }) => ({ slot: { site, hour, weekdays, selfPay: false }, span }));
+        const slot = choose(candidates, draw, monitored);
+        if (slot) return slot;
+      }
+      throw new RangeError(`no place left for ${key}`);
     },
-    keepMaintenance(key, site, span) {
-      const candidates = maintenancePatterns.map((weekdays) => ({
+    keepMaintenance(key, site, spanOf) {
+      const slots = maintenancePatterns.map((weekdays) => ({
         site,
         hour: maintenanceHour,
         weekdays,
         selfPay: true,
       }));
-      return choose(candidates, key, false, span);
+      const candidates = slots.map((slot) => ({ slot, span: spanOf(slot) }));
+      return choose(candidates, dice(key, 'slot'), false);
     },
   };
 }
 
-function atNoonWithMaintenance(hour: number, weekdays: readonly number[]): boolean {
-  return hour === maintenanceHour && weekdays.some((day) => maintenanceDays.includes(day));
+/** Every hour that a class begins, those near to one first. */
+function nearestFirst(hour: number): number[] {
+  const hours = Array.from({ length: closingHour - openingHour }, (_, each) => openingHour + each);
+  return hours.sort((a, b) => Math.abs(a - hour) - Math.abs(b - hour));
+}
+
+/** Sundays there is one full class, and at noon on some days the class that people pay themselves. */
+function isHeld(site: SiteKey, hour: number, weekdays: readonly number[]): boolean {
+  if (weekdays.includes(sunday)) return hour === usualTimes[site][0]?.hour;
+  return hour !== maintenanceHour || !weekdays.some((day) => maintenanceDays.includes(day));
 }

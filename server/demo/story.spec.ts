@@ -40,6 +40,8 @@ describe('the story', () => {
     [1, 0],
     [9, 0],
     [20, 0],
+    [34, 0],
+    [60, 0],
   ])('takes nothing back %i days and %i hours later', (days, hours) => {
     const next = tellAt(later(days, hours));
     const ids = (rows: PeopleRows) =>
@@ -56,6 +58,13 @@ describe('the story', () => {
       [sessionRecords, vitalSigns, restingRates, exerciseTests, ledgerEntries].flat();
     const after = new Map(kept(next).map((row) => [row.id, row]));
     for (const row of kept(story)) expect(after.get(row.id)).toEqual(row);
+    const ranges = new Map(next.prescriptions.map((row) => [row.id, row]));
+    for (const { id, status, signedAt, activatedAt } of story.prescriptions) {
+      const range = ranges.get(id);
+      if (signedAt) expect(range?.signedAt).toEqual(signedAt);
+      if (activatedAt) expect(range?.activatedAt).toEqual(activatedAt);
+      if (status === 'completed' || status === 'revoked') expect(range?.status).toBe(status);
+    }
   });
 
   it('moves bookings forward only', () => {
@@ -165,6 +174,24 @@ describe('the courses', () => {
     }
     return places;
   };
+
+  it('fill classes: half of those of a month hold six people or more, self-pay classes too', () => {
+    const from = isoOf(anchor - 28);
+    const to = isoOf(anchor + 2);
+    const selfPay = new Set(
+      classPlans.filter((plan) => plan.selfPay).map((plan) => templateId(plan.key, anchor)),
+    );
+    const recent = [...rosters(story)]
+      .map(([key, { all }]) => ({ template: key.slice(0, 36), day: key.slice(37), all }))
+      .filter(({ day }) => day >= from && day < to);
+    const full = recent.filter(({ all }) => all >= 6);
+    expect(full.length).toBeGreaterThan(70);
+    expect(full.length / recent.length).toBeGreaterThan(0.4);
+    expect(full.filter(({ template }) => selfPay.has(template)).length).toBeGreaterThan(5);
+    for (const day of [anchor, anchor + 1]) {
+      expect(full.filter((each) => each.day === isoOf(day)).length).toBeGreaterThan(3);
+    }
+  });
 
   it.each([
     [0, 0],

@@ -1,5 +1,6 @@
 import { emptyBook, type Book } from './book';
 import { createFaults, type Faults } from './faults';
+import type { KnownPayment } from './known-payments';
 import { apiVersion, makeId, type ServiceEvent } from './objects';
 import type { StateFile } from '../state-file';
 import { createWebhooks, type Webhooks, type WebhookSettings } from './webhooks';
@@ -10,6 +11,8 @@ export interface DeskSettings {
   /** The one secret key taken; null takes every test key. */
   apiKey: string | null;
   webhook: WebhookSettings;
+  /** Payments that were not made here. */
+  knownPayments: readonly KnownPayment[];
 }
 
 /** The call that an event tells of; null for what happens on the pay page or by itself. */

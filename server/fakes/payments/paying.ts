@@ -77,7 +77,7 @@ function intentOf(desk: Desk, session: Session): PaymentIntent {
   return intent;
 }
 
-function chargeCard(
+export function chargeCard(
   desk: Desk,
   intent: PaymentIntent,
   card: Card,

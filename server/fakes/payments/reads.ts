@@ -1,32 +1,27 @@
 import type { Router } from 'express';
 import * as z from 'zod';
 import { formExpand, missing, readParameters } from './api-error';
-import { onShelf, type Book } from './book';
+import { onShelf } from './book';
 import type { Desk } from './desk';
 import { endpoint, type Call } from './endpoint';
+import { paymentIntent } from './known-payments';
 import { listParameters, page } from './lists';
 
 /** What is only read: payments, charges, events and movements of money. */
 export function readRoutes(desk: Desk, router: Router): void {
-  router.get(
-    '/v1/payment_intents/:id',
-    endpoint(
-      desk,
-      one('payment_intent', (book) => book.paymentIntents),
-    ),
-  );
+  router.get('/v1/payment_intents/:id', endpoint(desk, one('payment_intent', paymentIntent)));
   router.get(
     '/v1/charges/:id',
     endpoint(
       desk,
-      one('charge', (book) => book.charges),
+      one('charge', ({ book }, id) => onShelf(book.charges, id)),
     ),
   );
   router.get(
     '/v1/events/:id',
     endpoint(
       desk,
-      one('event', (book) => book.events),
+      one('event', ({ book }, id) => onShelf(book.events, id)),
     ),
   );
   router.get('/v1/events', endpoint(desk, listEvents));
@@ -34,17 +29,17 @@ export function readRoutes(desk: Desk, router: Router): void {
     '/v1/balance_transactions/:id',
     endpoint(
       desk,
-      one('balance_transaction', (book) => book.balanceTransactions),
+      one('balance_transaction', ({ book }, id) => onShelf(book.balanceTransactions, id)),
     ),
   );
   router.get('/v1/balance_transactions', endpoint(desk, listBalance));
 }
 
-function one(kind: string, shelf: (book: Book) => Record<string, object>) {
+function one(kind: string, find: (desk: Desk, id: string) => object | undefined) {
   return (desk: Desk, call: Call): object => {
     readParameters(z.strictObject({ expand: formExpand }), call.input);
     const id = call.path['id'] ?? '';
-    const found = onShelf(shelf(desk.book), id);
+    const found = find(desk, id);
     if (!found) throw missing(kind, id);
     return found;
   };

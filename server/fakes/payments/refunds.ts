@@ -13,6 +13,7 @@ import {
 import { onShelf } from './book';
 import type { Desk } from './desk';
 import { endpoint, type Call } from './endpoint';
+import { paymentIntent } from './known-payments';
 import { listParameters, page } from './lists';
 import { makeId, type Charge, type Refund } from './objects';
 import { enterBalance } from './paying';
@@ -88,7 +89,7 @@ function chargeOf(
     if (!found) throw missing('charge', charge, 'charge');
     return found;
   }
-  const payment = onShelf(desk.book.paymentIntents, intent ?? null);
+  const payment = paymentIntent(desk, intent ?? null);
   if (!payment) throw missing('payment_intent', intent ?? '', 'payment_intent');
   const latest = onShelf(desk.book.charges, payment.latest_charge);
   if (!latest?.paid) {

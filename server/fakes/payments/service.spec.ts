@@ -22,6 +22,13 @@ afterEach(async () => {
   await rm(folder, { recursive: true });
 });
 
+const known = {
+  id: 'pi_demo_1',
+  amount: 1800,
+  currency: 'usd',
+  metadata: { charge_id: 'c1', attempt_id: 'a1' },
+};
+
 async function start(webhookUrl: string | null): Promise<void> {
   service = await startPaymentService({
     port: 0,
@@ -29,6 +36,7 @@ async function start(webhookUrl: string | null): Promise<void> {
     webhookUrl,
     webhookSecret,
     webhookWaits: [10],
+    knownPayments: [known],
   });
   stripe = new Stripe('sk_test_any', {
     host: '127.0.0.1',
@@ -161,6 +169,21 @@ it('survives a restart, with the webhooks that nobody took yet', async () => {
   expect(taken).toBe(4);
   receiver.closeAllConnections();
   receiver.close();
+});
+
+it('gives back once what was paid elsewhere, also after a reset', async () => {
+  await fetch(`${service.url}/_reset`, { method: 'POST' });
+  const asked = { payment_intent: known.id, amount: 1800 };
+  const refund = await stripe.refunds.create(asked, { idempotencyKey: 'r1' });
+  expect(refund).toMatchObject({ status: 'succeeded', amount: 1800 });
+  await expect(stripe.refunds.create(asked, { idempotencyKey: 'r2' })).rejects.toMatchObject({
+    code: 'charge_already_refunded',
+  });
+  const intent = await stripe.paymentIntents.retrieve(known.id);
+  expect(intent.metadata).toEqual(known.metadata);
+  await expect(stripe.paymentIntents.retrieve('pi_demo_2')).rejects.toMatchObject({
+    code: 'resource_missing',
+  });
 });
 
 it('resets, and answers its controls to this machine only', async () => {

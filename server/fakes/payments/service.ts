@@ -6,6 +6,7 @@ import { emptyBook } from './book';
 import { checkoutSessionRoutes, expireDue, payPageAddress } from './checkout-sessions';
 import { controlRoutes } from './controls';
 import { createDesk } from './desk';
+import type { KnownPayment } from './known-payments';
 import { payPageRoutes } from './pay-page';
 import { readRoutes } from './reads';
 import { refundRoutes } from './refunds';
@@ -21,6 +22,8 @@ export interface PaymentServiceOptions {
   publicUrl?: string;
   /** The one key taken; by default every `sk_test_…`. */
   apiKey?: string;
+  /** Payments that were not made here; none by default. */
+  knownPayments?: readonly KnownPayment[];
   /** Milliseconds before each further try of a webhook. */
   webhookWaits?: readonly number[];
 }
@@ -46,6 +49,7 @@ export async function startPaymentService(options: PaymentServiceOptions): Promi
     {
       publicUrl: options.publicUrl ?? url,
       apiKey: options.apiKey ?? null,
+      knownPayments: options.knownPayments ?? [],
       webhook: {
         url: options.webhookUrl,
         secret: options.webhookSecret,
