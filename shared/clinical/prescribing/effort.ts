@@ -25,16 +25,21 @@ function upperEnd(fraction: number): number {
   return fraction <= 0.8 ? 16 : 17;
 }
 
-/** Effort that matches the fractions of reserve left under both ceilings (ACSM bands, Garber 2011). */
+/** Effort that matches fractions of reserve (ACSM bands, Garber 2011). */
+export function exertionOfFractions(lower: number, upper: number): Exertion {
+  const highest = upperEnd(upper);
+  // An upper fraction of exactly 0.60 would put the lower end above the upper: the more restrictive wins.
+  return { scale, lower: Math.min(lowerEnd(lower), highest), upper: highest };
+}
+
+/** Effort that matches the fractions of reserve left under both ceilings. */
 function matching(findings: Findings, workCeiling: Mets | null): Exertion {
   const { lower, upper } = findings.intensity;
   const left = toMillionths(
     underWorkCeiling(underRateCeiling(upper, findings), findings, workCeiling),
   );
   if (left < toMillionths(lower)) return light;
-  const highest = upperEnd(left);
-  // A ceiling at exactly 0.60 would put the lower end above the upper: the more restrictive wins.
-  return { scale, lower: Math.min(lowerEnd(lower), highest), upper: highest };
+  return exertionOfFractions(lower, left);
 }
 
 /** Perceived exertion, Borg 6–20: the first rule that applies. */
