@@ -10,6 +10,7 @@ import {
   webhookHeadersSchema,
   webhookResponseSchema,
 } from '@shared/contracts/billing-contract';
+import { timePosition } from '@shared/contracts/fields';
 import { requirePatientAccess } from '../accounts/access-service';
 import type { Actor } from '../accounts/actor';
 import type { Transaction } from '../database/client';
@@ -112,8 +113,6 @@ const webhook = route({
   },
 });
 
-const position = z.tuple([z.iso.datetime(), z.uuid()]);
-
 const staffList = route({
   method: 'post',
   path: '/api/billing/charges',
@@ -128,7 +127,7 @@ const staffList = route({
   response: { 200: staffChargesResponseSchema },
   handler: async ({ tx, actor, input: { body } }) => {
     const { cursor, ...filter } = body;
-    const after = cursor ? decodeCursor(position, cursor) : undefined;
+    const after = cursor ? decodeCursor(timePosition, cursor) : undefined;
     const found = await staffCharges(tx, actor, { ...filter, after });
     return ok(pageOf(found, body.limit, ({ createdAt, id }) => [createdAt, id]));
   },

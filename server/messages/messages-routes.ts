@@ -1,5 +1,5 @@
-import * as z from 'zod';
 import type { Role } from '@shared/contracts/accounts-contract';
+import { timePosition } from '@shared/contracts/fields';
 import {
   undeliveredRequestSchema,
   undeliveredResponseSchema,
@@ -11,8 +11,6 @@ import { listUndelivered } from './undelivered-queries';
 
 /** Who calls a patient whom no message reaches. */
 const deskRoles: readonly Role[] = ['front-desk', 'director'];
-
-const position = z.tuple([z.iso.datetime(), z.uuid()]);
 
 const undelivered = route({
   method: 'post',
@@ -28,7 +26,7 @@ const undelivered = route({
   response: { 200: undeliveredResponseSchema },
   handler: async ({ tx, actor, input: { body } }) => {
     const { cursor, limit } = body;
-    const after = cursor ? decodeCursor(position, cursor) : undefined;
+    const after = cursor ? decodeCursor(timePosition, cursor) : undefined;
     const found = await listUndelivered(tx, actor, { after, limit });
     return ok(pageOf(found, limit, ({ dueAt, id }) => [dueAt, id]));
   },

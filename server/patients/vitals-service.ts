@@ -1,4 +1,4 @@
-import * as z from 'zod';
+import { timePosition } from '@shared/contracts/fields';
 import type { VitalsHistory } from '@shared/contracts/vitals-history-contract';
 import type { Queryable } from '../database/client';
 import { vitalsHistory } from '../floor/vital-signs-queries';
@@ -10,12 +10,11 @@ interface Page {
 }
 
 /** Where a list of sessions goes on: instant and id of the last, nothing that names anybody. */
-const positionSchema = z.tuple([z.iso.datetime(), z.uuid()]);
 
 function positionOf(cursor: string | undefined) {
   if (cursor === undefined) return null;
   const parts = Buffer.from(cursor, 'base64url').toString().split(' ');
-  const { data } = positionSchema.safeParse(parts);
+  const { data } = timePosition.safeParse(parts);
   if (!data) throw fieldFailure('cursor', 'invalid', 'Start the list again');
   return { startedAt: new Date(data[0]), id: data[1] };
 }

@@ -1,4 +1,5 @@
 import * as z from 'zod';
+import { timePosition } from '@shared/contracts/fields';
 import {
   appointmentSchema,
   appointmentsQuerySchema,
@@ -45,10 +46,8 @@ function patientOf(
   throw fail('invalid-request', { errors: [{ path: 'patientId', code: 'required', message }] });
 }
 
-const position = z.tuple([z.iso.datetime(), z.uuid()]);
-
 function positionOf(cursor: string): AppointmentsPosition {
-  const [startsAt, id] = decodeCursor(position, cursor);
+  const [startsAt, id] = decodeCursor(timePosition, cursor);
   return { startsAt: new Date(startsAt), id };
 }
 

@@ -32,8 +32,20 @@ export const noteField = (maximum: number) =>
     .max(maximum, `Use at most ${maximum} characters`)
     .regex(severalLines, 'Use plain text');
 
-/** A date of the local calendar, YYYY-MM-DD. */
-export const localDateField = z.iso.date('Enter a date');
+/** ISO 8601 knows a year 0 and years to 9999; beyond these the database or its arithmetic does not follow. */
+const isInRange = (text: string): boolean => text >= '1900' && text < '2200';
+const rangeFault = 'Enter a year from 1900 to 2199';
+
+/** A date of the local calendar, YYYY-MM-DD, 1900 to 2199. */
+export const localDateField = z.iso.date('Enter a date').refine(isInRange, rangeFault);
+
+/** An instant with its offset, 1900 to 2199. */
+export const instantField = z.iso
+  .datetime({ offset: true, error: 'Give an instant with its offset' })
+  .refine(isInRange, rangeFault);
+
+/** Where a list that runs by time goes on: the instant and the id of the last row that was shown. */
+export const timePosition = z.tuple([instantField, z.uuid()]);
 
 /** A number within bounds, ends included; `unit` stands in the message. */
 export const numberField = (bounds: { lowest: number; highest: number }, unit: string) => {

@@ -2,13 +2,13 @@ import * as z from 'zod';
 import { placements } from '../clinical/placement';
 import { leads, limitKinds } from '../clinical/prescribing';
 import { vitalPhases, vitalSignBounds } from '../clinical/vital-sign-bounds';
-import { noteField, textField, wholeNumberField } from './fields';
+import { instantField, noteField, textField, wholeNumberField } from './fields';
 import { appointmentStatusSchema } from './schedule-contract';
 
-const instant = z.iso.datetime({ offset: true, error: 'Give an instant with its offset' });
+const instant = z.iso.datetime({ offset: true });
 
 /** An instant as people send it: a clock that was never set is refused. */
-const sentInstant = instant.refine((at) => at >= '2000', 'Check the clock of this device');
+const sentInstant = instantField.refine((at) => at >= '2000', 'Check the clock of this device');
 
 /** Made by the client, so that sending again is the same write. */
 const clientId = z.uuid('Make a UUID for this');

@@ -1,5 +1,5 @@
 import * as z from 'zod';
-import { cursorField } from './fields';
+import { cursorField, localDateField } from './fields';
 
 // Completion of courses, as counts with their rate, and the patients behind each count.
 
@@ -25,8 +25,6 @@ export type CompletionDefinition = (typeof completionDefinitions)[number];
 export const completionParts = ['enrolled', 'completed', 'ongoing', 'left'] as const;
 export type CompletionPart = (typeof completionParts)[number];
 
-const localDate = z.iso.date('Give a date as YYYY-MM-DD');
-
 const filters = {
   siteId: z.uuid().optional(),
   sex: z.enum(['female', 'male', 'unknown']).optional(),
@@ -35,9 +33,7 @@ const filters = {
   diagnosis: z.string().trim().min(1).max(40).optional(),
 };
 
-/** ISO 8601 knows a year 0 that calendars, and the database, do not. */
-const spanDate = localDate.refine((date) => date >= '1900', 'Give a year from 1900 on');
-const span = { from: spanDate, to: spanDate };
+const span = { from: localDateField, to: localDateField };
 
 const inOrder = ({ from, to }: { from: string; to: string }): boolean => from < to;
 const orderFault = {
@@ -108,8 +104,8 @@ export const completionPatientSchema = z.object({
   recordNumber: z.string(),
   site: z.string(),
   diagnosis: z.string(),
-  firstSessionOn: localDate,
-  lastSessionOn: localDate,
+  firstSessionOn: z.iso.date(),
+  lastSessionOn: z.iso.date(),
   attended: count,
   attendedInWindow: count,
   planned: count,
