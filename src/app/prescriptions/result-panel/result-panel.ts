@@ -1,42 +1,17 @@
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import { reasonWords } from '@shared/clinical/prescribing/can-lead';
-import type { PrescriptionAnswer, Workload } from '@shared/clinical/prescribing/answer';
+import type { PrescriptionAnswer } from '@shared/clinical/prescribing/answer';
 import { Fact } from '../../ui/fact/fact';
 import { Quantity } from '../../ui/quantity/quantity';
 import {
   ceilingReason,
   metsFloor,
   metsText,
-  modalityWords,
   percentText,
   rangeText,
-  settingText,
 } from '../../ui/words/prescription-words';
 
-interface MachineRow {
-  readonly machine: string;
-  readonly start: string | null;
-  readonly limit: string | null;
-  readonly why: string | null;
-}
-
 const sentence = (words: string): string => `${words.charAt(0).toUpperCase()}${words.slice(1)}.`;
-
-/** A row a machine, with what it is set to at the low and at the high end. */
-function machinesOf(workloads: readonly Workload[]): MachineRow[] {
-  const modalities = [...new Set(workloads.map(({ modality }) => modality))];
-  return modalities.map((modality) => {
-    const at = (point: Workload['point']) =>
-      workloads.find((one) => one.modality === modality && one.point === point);
-    const [start, limit] = [at('start'), at('limit')];
-    return {
-      machine: modalityWords[modality],
-      start: start ? settingText(start) : null,
-      limit: limit ? settingText(limit) : null,
-      why: start?.why ?? limit?.why ?? null,
-    };
-  });
-}
 
 /** What a range comes to: what leads, the ceiling with its reason, effort, work, and what the patient is told. */
 @Component({
@@ -56,13 +31,6 @@ export class ResultPanel {
     this.answer().reasons.map((reason) => sentence(reasonWords[reason])),
   );
   protected readonly ceilingReason = computed(() => ceilingReason(this.answer()));
-  protected readonly machines = computed(() => machinesOf(this.answer().workloads));
-  protected readonly arms = computed(
-    () =>
-      this.answer()
-        .workloads.map((one) => (one.modality === 'arm' ? one.target : null))
-        .find((target) => target !== null) ?? null,
-  );
 
   /** Where the ceiling cuts: "It binds before 80 % of reserve (119) and allows 64 %." */
   protected readonly binding = computed(() => {

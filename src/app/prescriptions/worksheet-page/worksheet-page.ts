@@ -36,6 +36,7 @@ import { RestsOn } from '../rests-on/rests-on';
 import { isSameAt, rows } from '../rests-on/rows';
 import { ResultPanel } from '../result-panel/result-panel';
 import { WaysTable } from '../ways-table/ways-table';
+import { WorkloadsTable } from '../workloads-table/workloads-table';
 import { WorksheetState } from '../worksheet/worksheet-state';
 import { detailText, withdrawnText } from './head-words';
 import { loadLineFacts } from './load-line-facts';
@@ -63,6 +64,7 @@ import { causesText, signingQuestion } from './signing-words';
     Skeleton,
     StateChip,
     WaysTable,
+    WorkloadsTable,
   ],
   templateUrl: './worksheet-page.html',
   styleUrl: './worksheet-page.scss',
