@@ -37,6 +37,12 @@ import {
 } from '../completion-query';
 import { ReportsClient } from '../reports-client';
 
+/** A report, and the choices that it answers. */
+interface Counted {
+  readonly report: CompletionReport;
+  readonly by: CompletionChoices;
+}
+
 const localToday = (): string => new Date().toLocaleDateString('sv-SE');
 
 /** How many who started completed, by group, with the people behind every count one step away. */
@@ -78,20 +84,19 @@ export class CompletionPage {
   protected readonly report = this.#client.completion(this.#call);
   readonly #sites = this.#client.sites();
   protected readonly sites = computed(() => (this.#sites.hasValue() ? this.#sites.value() : []));
-  /** The last report stays on the page while the next one is counted. */
-  protected readonly shown = linkedSignal<
-    CompletionReport | undefined,
-    CompletionReport | undefined
-  >({
-    source: () => (this.report.hasValue() ? this.report.value() : undefined),
-    computation: (report, previous) => report ?? previous?.value,
+  /** The last report stays on the page, with the choices it was counted by, while the next one is counted. */
+  readonly #counted = linkedSignal<Counted | undefined, Counted | undefined>({
+    source: () =>
+      this.report.hasValue() ? { report: this.report.value(), by: this.choices() } : undefined,
+    computation: (counted, previous) => counted ?? previous?.value,
   });
+  protected readonly shown = computed(() => this.#counted()?.report);
   protected readonly problem = computed(() => {
     const error = this.report.error();
     return error === undefined ? null : toProblem(error.cause ?? error);
   });
   protected readonly groupWord = computed(
-    () => groupingChoices.find(({ value }) => value === this.choices().groupBy)?.label ?? '',
+    () => groupingChoices.find(({ value }) => value === this.#counted()?.by.groupBy)?.label ?? '',
   );
   protected readonly csv = computed(
     () => `/api/reports/completion.csv?${new URLSearchParams(this.#call()).toString()}`,
@@ -109,7 +114,8 @@ export class CompletionPage {
 
   /** Where the people behind a count are listed. */
   protected listOf(part: CompletionPart, row: CompletionRow | null): Params {
-    return { ...paramsOf(this.choices()), part, group: row?.group ?? null };
+    const by = this.#counted()?.by ?? this.choices();
+    return { ...paramsOf(by), part, group: row?.group ?? null };
   }
 
   protected define(definition: CompletionDefinition): void {
