@@ -1,3 +1,6 @@
+import { mkdtempSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
 import pg from 'pg';
 import { afterEach, beforeAll, afterAll, describe, expect, it } from 'vitest';
 import { buildUser } from '../builders/people';
@@ -33,12 +36,18 @@ describe('the server’s own process', () => {
     });
 
   it('prints, in an empty program, the link that makes the first administrator, and JSON otherwise', async () => {
-    running = await startServerProcess(house, 'UTC', { PLIMSOLL_DEMO: 'off', LOG_LEVEL: 'info' });
+    const data = mkdtempSync(join(tmpdir(), 'plimsoll-main-'));
+    running = await startServerProcess(house, 'UTC', {
+      PLIMSOLL_DEMO: 'off',
+      PLIMSOLL_DATA: data,
+      LOG_LEVEL: 'info',
+    });
     const { origin } = running;
-    const lines = running.output().trim().split('\n');
-    const link = lines.find((line) => !line.startsWith('{')) ?? '';
-    expect(link).toContain(`${origin}/first-administrator#token=`);
-    for (const line of lines.filter((each) => each !== link)) JSON.parse(line);
+    const said = () => running?.output().trim().split('\n') ?? [];
+    const spoken = () => said().find((line) => !line.startsWith('{')) ?? '';
+    await expect.poll(spoken).toContain(`${origin}/first-administrator#token=`);
+    const link = spoken();
+    for (const line of said().filter((each) => each !== link)) JSON.parse(line);
     const body = {
       token: link.split('#token=')[1],
       email: 'first@clinic.example',
