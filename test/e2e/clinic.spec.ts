@@ -3,20 +3,13 @@ import { expectAccessible, useDesk } from './browser';
 
 const desk = useDesk();
 
-it('shows a physician what waits for a signature', async () => {
-  const page = await desk.signIn('physician');
-  await page.getByRole('heading', { name: 'Ranges for your signature' }).waitFor();
-  await page.getByRole('button', { name: /^Sign/ }).first().waitFor();
-  await page.context().close();
-});
-
-it('lets a nurse check a patient in by two identifiers, and log a reading', async () => {
+it('lets a nurse check a patient in by two identifiers, log readings, and sign the record', async () => {
   const page = await desk.signIn('nurse', 'tablet');
   await page.waitForURL(/\/floor/);
   await page.getByLabel('Site').selectOption('Quayside');
   const tile = page
     .getByRole('region', { name: 'Patients of this class' })
-    .getByRole('button', { name: /not here yet/ })
+    .getByRole('button', { name: /not here yet Target/ })
     .first();
   await tile.waitFor();
   await expectAccessible(page);
@@ -27,7 +20,25 @@ it('lets a nurse check a patient in by two identifiers, and log a reading', asyn
   await visit.getByLabel('Heart rate').fill('72');
   await expectAccessible(page);
   await visit.getByRole('button', { name: /^Save/ }).click();
-  await visit.getByText(/saved/i).first().waitFor();
+  const readings = visit.getByRole('region', { name: 'Readings of this visit' });
+  await readings.getByText('72').first().waitFor();
+
+  await visit.getByText('Exercise', { exact: true }).click();
+  await visit.getByLabel('Heart rate').fill('190');
+  await visit
+    .getByText(/^(past|over) /)
+    .first()
+    .waitFor();
+  await expectAccessible(page);
+  await visit.getByRole('button', { name: /^Save/ }).click();
+  await readings.getByText('190').first().waitFor();
+
+  await visit.getByRole('button', { name: 'Review and sign' }).click();
+  await visit.getByRole('heading', { name: 'Readings to sign' }).waitFor();
+  await expectAccessible(page);
+  await visit.getByRole('button', { name: /^Sign/ }).click();
+  await visit.getByText(/Signed \d/).waitFor();
+  await expectAccessible(page);
   await page.context().close();
 });
 

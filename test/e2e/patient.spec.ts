@@ -1,5 +1,6 @@
 import { expect, inject, it } from 'vitest';
 import { expectAccessible, useDesk } from './browser';
+import { mailsFromNow } from './mail';
 
 const desk = useDesk();
 
@@ -27,5 +28,36 @@ it('cancels a session and is told that it is cancelled', async () => {
   await sessions.last().click();
   await expect.poll(() => sessions.count(), { timeout: 20_000 }).toBe(before - 1);
   await expectAccessible(page);
+  await page.context().close();
+});
+
+it('books a class, pays for it, and has confirmation and receipt by e-mail', async () => {
+  const page = await desk.signIn('patient', 'phone');
+  const newMails = await mailsFromNow('patient@harborlane.example');
+  await page.goto(`${inject('product').url}/my/sessions/book`);
+  await page.getByRole('heading', { name: 'Soonest free' }).waitFor();
+  await expectAccessible(page);
+  await page
+    .getByRole('button', { name: /^Book .*you pay \$18\.00/ })
+    .first()
+    .click();
+  await page.getByText(/^You are booked: /).waitFor();
+  await expect.poll(newMails, { timeout: 30_000 }).toContain('TBD');
+
+  await page.getByRole('link', { name: 'Payments' }).click();
+  const owed = page.getByRole('region', { name: 'To pay' });
+  const pay = owed.getByRole('button', { name: /^Pay \$18\.00/ });
+  await pay.first().waitFor();
+  await expectAccessible(page);
+  const before = await pay.count();
+  await pay.first().click();
+  await page.getByRole('button', { name: 'Pay $18.00', exact: true }).click();
+  await page.getByRole('heading', { name: 'Payment received' }).waitFor();
+  await expectAccessible(page);
+  await expect.poll(newMails, { timeout: 30_000 }).toContain('Your receipt');
+
+  await page.getByRole('link', { name: 'Payments' }).last().click();
+  await page.getByRole('heading', { name: 'Paid', exact: true }).waitFor();
+  expect(await pay.count()).toBe(before - 1);
   await page.context().close();
 });
