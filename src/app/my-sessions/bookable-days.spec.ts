@@ -41,7 +41,7 @@ const held = (given: Partial<AppointmentItem> = {}): AppointmentItem => ({
   ...given,
 });
 
-const nobody = { appointments: [], monitored: true };
+const nobody = { appointments: [], dailyLimit: 2, monitored: true };
 
 describe('what a patient can book', () => {
   it('counts monitors for who needs one, in exercise alone', () => {
@@ -51,6 +51,18 @@ describe('what a patient can book', () => {
     expect(placesLeft({ ...full, kind: 'education' }, { monitored: true })).toBe(9);
   });
 
+  it('is nothing more on a day that holds as many as the course allows', () => {
+    const morning = { startsAt: '2026-12-07T12:00:00Z', endsAt: '2026-12-07T13:00:00Z' };
+    const one = held({ classDateId: id(9), ...morning });
+    const another = held({ classDateId: id(8), ...morning, status: 'noshow' });
+    const bookable = (appointments: AppointmentItem[], dailyLimit = 2) =>
+      isBookable(classDate(), { ...nobody, dailyLimit, appointments }, zone, now);
+    expect(bookable([one])).toBe(true);
+    expect(bookable([one], 1)).toBe(false);
+    expect(bookable([one, another])).toBe(false);
+    expect(bookable([one, { ...another, status: 'cancelled' }])).toBe(true);
+  });
+
   it('is what is open, has room and does not overlap', () => {
     const bookable = (date: ClassDate, own = nobody) => isBookable(date, own, zone, now);
     expect(bookable(classDate())).toBe(true);
@@ -58,9 +70,9 @@ describe('what a patient can book', () => {
     expect(bookable(classDate({ status: 'closed' }))).toBe(false);
     expect(bookable(classDate({ startsAt: '2026-12-01T14:59:00Z' }))).toBe(false);
     expect(bookable(classDate({ localDate: '2027-03-04' }))).toBe(false);
-    const busy = { monitored: true, appointments: [held({ classDateId: id(9) })] };
+    const busy = { ...nobody, appointments: [held({ classDateId: id(9) })] };
     expect(isBookable(classDate(), busy, zone, now)).toBe(false);
-    const gone = { monitored: true, appointments: [held({ status: 'cancelled' })] };
+    const gone = { ...nobody, appointments: [held({ status: 'cancelled' })] };
     expect(isBookable(classDate(), gone, zone, now)).toBe(true);
   });
 
@@ -75,7 +87,7 @@ describe('what a patient can book', () => {
       }),
       classDate({ id: id(6), localDate: '2026-12-08', booked: 12 }),
     ];
-    expect(dayStates(dates, { monitored: true, appointments: [held()] }, zone, now)).toEqual([
+    expect(dayStates(dates, { ...nobody, appointments: [held()] }, zone, now)).toEqual([
       { localDate: '2026-12-07', free: 0, booked: true },
       { localDate: '2026-12-08', free: 1, booked: false },
     ]);

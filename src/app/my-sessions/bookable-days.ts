@@ -7,9 +7,10 @@ import {
 } from '@shared/scheduling/booking-window';
 import { type Interval, overlaps } from '@shared/scheduling/intervals';
 
-/** Whose day it is: what the patient holds, and whether they exercise on a monitored place. */
+/** Whose day it is: what the patient holds, how many a day they may, and whether on a monitored place. */
 export interface Own {
   readonly appointments: readonly AppointmentItem[];
+  readonly dailyLimit: number;
   readonly monitored: boolean;
 }
 
@@ -47,6 +48,16 @@ export function ownIn(date: ClassDate, { appointments }: Own): AppointmentItem |
   );
 }
 
+/** What of a day the day's limit counts: all but what was cancelled or entered in error. */
+function fillsDay({ status }: AppointmentItem): boolean {
+  return ['booked', 'arrived', 'checked-in', 'fulfilled', 'noshow'].includes(status);
+}
+
+function isDayFull(localDate: string, { appointments, dailyLimit }: Own): boolean {
+  const held = appointments.filter((one) => one.localDate === localDate && fillsDay(one));
+  return held.length >= dailyLimit;
+}
+
 /** Whether this patient can take a place in this class now, as far as this page can tell. */
 export function isBookable(date: ClassDate, own: Own, timeZone: string, now: Date): boolean {
   const span = spanOf(date);
@@ -58,7 +69,8 @@ export function isBookable(date: ClassDate, own: Own, timeZone: string, now: Dat
     DEFAULT_BOOKING_WINDOW,
   );
   const busy = own.appointments.some((held) => isAhead(held, now) && overlaps(spanOf(held), span));
-  return date.status === 'scheduled' && open && !busy && placesLeft(date, own) > 0;
+  const room = placesLeft(date, own) > 0 && !isDayFull(date.localDate, own);
+  return date.status === 'scheduled' && open && !busy && room;
 }
 
 /** What a day of the month shows. */

@@ -83,6 +83,7 @@ export class BookPage {
   );
   protected readonly own = computed<Own>(() => ({
     appointments: this.#appointments.hasValue() ? this.#appointments.value() : [],
+    dailyLimit: this.#course()?.dailyLimit ?? 1,
     monitored: this.#course()?.monitored ?? true,
   }));
   /** Sessions that may still be booked; null without a course, undefined while that is not known. */
