@@ -85,7 +85,12 @@ describe('search', () => {
   it.each([['rne'], ['verne x'], ['verne 1962'], ['###'], ["' or 1=1 --"], ['(a+)+$'], ['%']])(
     '%s does not',
     async (q) => {
-      await patient({ familyName: 'Verne', givenName: 'Odalys', birthDate: '1961-05-14' });
+      await patient({
+        familyName: 'Verne',
+        givenName: 'Odalys',
+        birthDate: '1961-05-14',
+        recordNumber: `Z${randomUUID().replaceAll('-', '')}`,
+      });
       expect((await pageOf(nurse, { q })).items).toEqual([]);
     },
   );
@@ -291,7 +296,7 @@ describe('who sees what', () => {
     expect(listed?.range !== null).toBe(readsChart);
     await agent.get(`/api/patients/${id}/record`).expect(readsChart ? 200 : 403);
     await agent.get(`/api/patients/${id}/vital-signs`).expect(readsChart ? 200 : 403);
-    if (!readsChart) expect(JSON.stringify(head.body)).not.toMatch(/heart-attack|108|moderate/);
+    if (!readsChart) expect(JSON.stringify(head.body)).not.toMatch(/heart-attack|:108\b|moderate/);
   });
 });
 

@@ -6,16 +6,16 @@ import type {
 } from '@shared/contracts/patients-contract';
 import { localDateAt } from '@shared/scheduling/wall-time';
 import type * as z from 'zod';
-import { openRecords } from '../accounts/access-policy';
 import type { Actor } from '../accounts/actor';
-import type { Queryable, Transaction } from '../database/client';
+import type { Transaction } from '../database/client';
 import { constraintOf } from '../database/transaction';
 import { fail } from '../http/failure';
 import { rangesOf } from '../prescriptions/range-in-force-queries';
 import { fieldFailure } from './field-failure';
 import { cursorOfName, positionOfCursor, type NamePosition } from './patient-cursor';
 import { isRegistrar, mayRead, ownFields } from './patients-policy';
-import { coursesOf, latestRisk, patientById, searchPatients } from './patients-queries';
+import { searchPatients } from './patient-search-queries';
+import { coursesOf, latestRisk, patientById } from './patients-queries';
 import { insertPatient, updatePatient } from './patients-repository';
 import { presentListItem, presentPatient } from './present-patient';
 
@@ -32,47 +32,54 @@ function positionOf(cursor: string | null | undefined): NamePosition | null {
   return position;
 }
 
+/** The local date in a zone, worked out once a zone. */
+function datesIn(now: Date): (zone: string) => string {
+  const known = new Map<string, string>();
+  return (zone) => {
+    const date = known.get(zone) ?? localDateAt(now, zone);
+    known.set(zone, date);
+    return date;
+  };
+}
+
 /** A page of the patients that the caller may open; two statements whatever its length, three with ranges. */
 export async function search(
-  db: Queryable,
+  tx: Transaction,
   actor: Actor,
   { q, cursor, limit }: Search,
   now: Date,
 ): Promise<PatientSearchResponse> {
-  const found = await searchPatients(db, openRecords(actor), {
-    q,
-    after: positionOf(cursor),
-    limit,
-  });
+  const found = await searchPatients(tx, actor, { q, after: positionOf(cursor), limit });
   const page = found.slice(0, limit);
   const last = page.at(-1);
+  const todayIn = datesIn(now);
   const readsChart = mayRead(actor, 'chart');
   const rangeOf = readsChart
     ? await rangesOf(
-        db,
+        tx,
         page.map(({ id }) => id),
         now,
       )
     : () => null;
   return {
-    items: page.map((item) => presentListItem(item, rangeOf(item.id), now)),
+    items: page.map((item) => presentListItem(item, rangeOf(item.id), todayIn(item.site.timeZone))),
     nextCursor: found.length > limit && last ? cursorOfName(last) : null,
   };
 }
 
 /** The head of a patient's page, as much of it as the caller may read. @throws Failure `not-found` */
 export async function readPatient(
-  db: Queryable,
+  tx: Transaction,
   actor: Actor,
   patientId: string,
   now: Date,
 ): Promise<Patient> {
-  const patient = await patientById(db, patientId);
+  const patient = await patientById(tx, patientId);
   if (!patient) throw fail('not-found');
-  const courses = await coursesOf(db, patientId);
+  const courses = await coursesOf(tx, patientId);
   if (!mayRead(actor, 'chart')) return presentPatient(patient, courses, null, now);
-  const rangeOf = await rangesOf(db, [patientId], now);
-  const risk = (await latestRisk(db, patientId)) ?? null;
+  const rangeOf = await rangesOf(tx, [patientId], now);
+  const risk = (await latestRisk(tx, patientId)) ?? null;
   return presentPatient(patient, courses, { risk, range: rangeOf(patientId) }, now);
 }
 

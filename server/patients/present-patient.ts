@@ -7,7 +7,8 @@ import type {
 import { localDateAt } from '@shared/scheduling/wall-time';
 import type { RangeState } from '../prescriptions/range-in-force-queries';
 import { ageOn } from '@shared/scheduling/age';
-import type { CourseWithSite, FoundPatient, PatientWithSite } from './patients-queries';
+import type { FoundPatient } from './patient-search-queries';
+import type { CourseWithSite, PatientWithSite } from './patients-queries';
 
 interface Course {
   readonly status: Enrollment['status'];
@@ -32,17 +33,20 @@ export function flagsOf(course: Course | null, range: RangeState | null): Patien
   return flags.flatMap(([flag, stands]) => (stands ? [flag] : []));
 }
 
-/** @param range null for callers who don't read the chart */
+/**
+ * @param range null for callers who don't read the chart
+ * @param today the local date at the patient's site
+ */
 export function presentListItem(
   found: FoundPatient,
   range: RangeState | null,
-  now: Date,
+  today: string,
 ): PatientListItem {
   const { course, ...patient } = found;
   return {
     ...patient,
     displayName: nameOf(found),
-    ageYears: ageOn(found.birthDate, localDateAt(now, found.site.timeZone)),
+    ageYears: ageOn(found.birthDate, today),
     course,
     range: range?.range ?? null,
     flags: flagsOf(course, range),

@@ -2,8 +2,9 @@ import { sql } from 'drizzle-orm';
 import type { PrescriptionAnswer } from '@shared/clinical/prescribing';
 import type { Bpm } from '@shared/units';
 import type { WithdrawalReason } from '@shared/clinical/withdrawal';
-import type { Queryable } from '../database/client';
-import { withdrawalOf } from '../patients/record-changes-queries';
+import type { Transaction } from '../database/client';
+import { statement } from '../database/statement';
+import { withdrawalOfPrescription } from './range-in-force-queries';
 
 /** What the floor needs of a result; the rest (candidates, workloads …) is most of its bulk. */
 type FloorAnswer = Pick<
@@ -19,7 +20,7 @@ type FloorAnswer = Pick<
 >;
 
 /** A range that is in force, or that a visit was begun with. */
-export interface FloorRange extends Record<string, unknown> {
+export interface FloorRange {
   readonly id: string;
   readonly patientId: string;
   readonly active: boolean;
@@ -39,35 +40,41 @@ const COLUMNS = sql`
     'pressureCeiling', p.result -> 'pressureCeiling', 'oxygenFloor', p.result -> 'oxygenFloor') AS answer,
   (p.inputs #>> '{resting,seated}')::float AS "restingHeartRate", p.inputs ->> 'rhythm' AS rhythm,
   CASE WHEN p.status = 'active'
-    THEN ${withdrawalOf({ patientId: sql`p.patient_id`, madeAt: sql`p.created_at`, inputs: sql`p.inputs` })}
+    THEN ${withdrawalOfPrescription}
     ELSE '{}' END AS withdrawn`;
 
+const readRanges = statement<FloorRange>(
+  'floor-ranges',
+  sql`
+    SELECT ${COLUMNS} FROM prescriptions p
+     WHERE (p.status = 'active' AND p.patient_id = ANY(${sql.placeholder('patientIds')}::uuid[]))
+        OR p.id = ANY(${sql.placeholder('rangeIds')}::uuid[])`,
+);
+
 /** The ranges in force of these patients, and these ranges whether or not they still are; in one statement. */
-export async function floorRanges(
-  db: Queryable,
+export function floorRanges(
+  tx: Transaction,
   wanted: { readonly patientIds: readonly string[]; readonly rangeIds: readonly string[] },
 ): Promise<FloorRange[]> {
-  const { rows } = await db.execute<FloorRange>(sql`
-    SELECT ${COLUMNS} FROM prescriptions p
-     WHERE (p.status = 'active' AND p.patient_id = ANY(${sql.param([...wanted.patientIds])}::uuid[]))
-        OR p.id = ANY(${sql.param([...wanted.rangeIds])}::uuid[])`);
-  return rows;
+  return readRanges(tx, wanted);
 }
+
+const at = sql`${sql.placeholder('at')}::timestamptz`;
+const readRangeAt = statement<FloorRange>(
+  'floor-range-at',
+  sql`
+    SELECT ${COLUMNS} FROM prescriptions p
+     WHERE p.patient_id = ${sql.placeholder('patientId')}
+       AND (p.status = 'active' OR (p.activated_at <= ${at} AND p.ended_at > ${at} AND p.status = 'completed'))
+     ORDER BY p.activated_at <= ${at} DESC, p.activated_at
+     LIMIT 1`,
+);
 
 /** The range that was in force at an instant, else the one that is now; undefined without either. */
 export async function floorRangeAt(
-  db: Queryable,
+  tx: Transaction,
   patientId: string,
-  at: Date,
+  instant: Date,
 ): Promise<FloorRange | undefined> {
-  const instant = at.toISOString();
-  const { rows } = await db.execute<FloorRange>(sql`
-    SELECT ${COLUMNS} FROM prescriptions p
-     WHERE p.patient_id = ${patientId}
-       AND (p.status = 'active'
-            OR (p.activated_at <= ${instant}::timestamptz AND p.ended_at > ${instant}::timestamptz
-                AND p.status = 'completed'))
-     ORDER BY p.activated_at <= ${instant}::timestamptz DESC, p.activated_at
-     LIMIT 1`);
-  return rows[0];
+  return (await readRangeAt(tx, { patientId, at: instant }))[0];
 }

@@ -1,6 +1,6 @@
 import { sql } from 'drizzle-orm';
 import type { MyRange } from '@shared/contracts/my-range-contract';
-import type { Queryable } from '../database/client';
+import type { Transaction } from '../database/client';
 import { fail } from '../http/failure';
 import type { RangeInForce } from './range-in-force';
 import { rangeInForce } from './range-in-force-queries';
@@ -26,14 +26,14 @@ function told(range: RangeInForce, setBy: string): MyRange['range'] {
 }
 
 /** What a patient is told of the own range, and whom to call. @throws Failure `not-found` */
-export async function myRange(db: Queryable, patientId: string, now: Date): Promise<MyRange> {
-  const { rows } = await db.execute<PlaceRow>(sql`
+export async function myRange(tx: Transaction, patientId: string, now: Date): Promise<MyRange> {
+  const { rows } = await tx.execute<PlaceRow>(sql`
     SELECT json_build_object('name', s.name, 'phone', s.phone, 'timeZone', s.time_zone) AS site,
            (SELECT u.display_name FROM prescriptions p JOIN users u ON u.id = p.signed_by
              WHERE p.patient_id = pt.id AND p.status = 'active') AS "setBy"
       FROM patients pt JOIN sites s ON s.id = pt.site_id WHERE pt.id = ${patientId}`);
   const [place] = rows;
   if (!place) throw fail('not-found');
-  const range = await rangeInForce(db, patientId, now);
+  const range = await rangeInForce(tx, patientId, now);
   return { site: place.site, range: range ? told(range, place.setBy ?? '') : null };
 }

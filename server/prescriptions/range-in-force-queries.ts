@@ -1,18 +1,20 @@
 import { sql, type SQL } from 'drizzle-orm';
 import type { RangeInForce as RangeInShort } from '@shared/contracts/patients-contract';
-import type { PrescriptionAnswer, PrescriptionRequest } from '@shared/clinical/prescribing';
+import type { PrescriptionRequest } from '@shared/clinical/prescribing';
 import type { WithdrawalReason } from '@shared/clinical/withdrawal';
-import type { Queryable } from '../database/client';
+import type { Transaction } from '../database/client';
+import { statement } from '../database/statement';
 import { withdrawalOf } from '../patients/record-changes-queries';
-import { standingOf, type RangeInForce } from './range-in-force';
+import { standingOf, type RangeInForce, type Standing } from './range-in-force';
 
-interface RangeRow extends Record<string, unknown> {
+interface RangeRow {
   readonly patientId: string;
   readonly id: string;
   readonly status: 'active' | 'draft';
-  readonly inputs: PrescriptionRequest;
-  readonly result: PrescriptionAnswer;
-  readonly activatedAt: Date | string | null;
+  readonly signed: Standing;
+  readonly restingSeated: number;
+  readonly icd: PrescriptionRequest['devices']['icd'];
+  readonly activatedAt: Date | null;
   readonly withdrawn: WithdrawalReason[];
   readonly reviewDue: boolean | null;
 }
@@ -24,56 +26,57 @@ export const withdrawalOfPrescription = withdrawalOf({
   inputs: sql`p.inputs`,
 });
 
-async function rangeRows(
-  db: Queryable,
-  patientIds: readonly string[],
-  now: Date,
-  which: SQL,
-): Promise<RangeRow[]> {
-  if (patientIds.length === 0) return [];
-  const { rows } = await db.execute<RangeRow>(sql`
-    SELECT p.patient_id AS "patientId", p.id, p.status, p.inputs, p.result, p.activated_at AS "activatedAt",
-           ${withdrawalOfPrescription} AS withdrawn,
-           p.activated_at + make_interval(days => (
-             SELECT (content ->> 'reviewDueDays')::int FROM policies ORDER BY version DESC LIMIT 1
-           )) < ${now.toISOString()}::timestamptz AS "reviewDue"
-      FROM prescriptions p
-     WHERE p.patient_id = ANY(${sql.param([...patientIds])}::uuid[]) AND ${which}`);
-  return rows;
-}
+/** What stands of a result; the rest (candidates, workloads …) is most of its bulk. */
+const signed = sql`jsonb_build_object(
+  'leadBy', p.result -> 'leadBy', 'target', p.result -> 'target', 'guide', p.result -> 'guide',
+  'ceiling', p.result -> 'ceiling', 'askLine', p.result -> 'askLine', 'perceivedExertion', p.result -> 'perceivedExertion',
+  'patientTarget', p.result -> 'patientTarget', 'tenSecondCount', p.result -> 'tenSecondCount')`;
 
-function rangeOf({ patientId, id, inputs, result, activatedAt, withdrawn, reviewDue }: RangeRow) {
+const ofPatients = (which: SQL): SQL => sql`
+  SELECT p.patient_id AS "patientId", p.id, p.status, ${signed} AS signed, p.activated_at AS "activatedAt",
+         (p.inputs #>> '{resting,seated}')::float AS "restingSeated", p.inputs #> '{devices,icd}' AS icd,
+         ${withdrawalOfPrescription} AS withdrawn,
+         p.activated_at + make_interval(days => (
+           SELECT (content ->> 'reviewDueDays')::int FROM policies ORDER BY version DESC LIMIT 1
+         )) < ${sql.placeholder('now')}::timestamptz AS "reviewDue"
+    FROM prescriptions p
+   WHERE p.patient_id = ANY(${sql.placeholder('patientIds')}::uuid[]) AND ${which}`;
+
+const readActive = statement<RangeRow>('ranges-in-force', ofPatients(sql`p.status = 'active'`));
+const readStates = statement<RangeRow>(
+  'range-states',
+  ofPatients(sql`(p.status = 'active' OR p.awaiting IS NOT NULL)`),
+);
+
+function rangeOf(row: RangeRow): RangeInForce {
+  const { id: prescriptionId, status: _, signed: standing, activatedAt, reviewDue, ...facts } = row;
   return {
-    ...standingOf(result, withdrawn.length > 0),
-    patientId,
-    prescriptionId: id,
-    activatedAt: new Date(activatedAt ?? NaN),
-    withdrawn,
+    ...facts,
+    ...standingOf(standing, row.withdrawn.length > 0),
+    prescriptionId,
+    activatedAt: activatedAt ?? new Date(NaN),
     reviewDue: reviewDue === true,
-    restingSeated: inputs.resting.seated,
-    icd: inputs.devices.icd,
-    inputs,
-    result,
-  } satisfies RangeInForce;
+  };
 }
 
 /** The ranges in force of any number of patients, by patient, in one statement. */
 export async function rangesInForce(
-  db: Queryable,
+  tx: Transaction,
   patientIds: readonly string[],
   now: Date,
 ): Promise<ReadonlyMap<string, RangeInForce>> {
-  const rows = await rangeRows(db, patientIds, now, sql`p.status = 'active'`);
+  if (patientIds.length === 0) return new Map();
+  const rows = await readActive(tx, { patientIds, now });
   return new Map(rows.map((row) => [row.patientId, rangeOf(row)]));
 }
 
 /** @returns undefined while no range is in force */
 export async function rangeInForce(
-  db: Queryable,
+  tx: Transaction,
   patientId: string,
   now: Date,
 ): Promise<RangeInForce | undefined> {
-  return (await rangesInForce(db, [patientId], now)).get(patientId);
+  return (await rangesInForce(tx, [patientId], now)).get(patientId);
 }
 
 /** Where a patient's range stands, with what a list and a header say of it. */
@@ -107,13 +110,13 @@ function inShort(row: RangeRow): Omit<RangeState, 'awaitsPhysician'> {
 
 /** The state of each patient's range, by patient, in one statement. */
 export async function rangesOf(
-  db: Queryable,
+  tx: Transaction,
   patientIds: readonly string[],
   now: Date,
 ): Promise<(patientId: string) => RangeState> {
-  const which = sql`(p.status = 'active' OR p.awaiting IS NOT NULL)`;
   const states = new Map<string, RangeState>();
-  for (const row of await rangeRows(db, patientIds, now, which)) {
+  const rows = patientIds.length === 0 ? [] : await readStates(tx, { patientIds, now });
+  for (const row of rows) {
     const state = states.get(row.patientId) ?? none;
     const more = row.status === 'active' ? inShort(row) : { awaitsPhysician: true };
     states.set(row.patientId, { ...state, ...more });

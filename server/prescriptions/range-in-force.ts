@@ -25,30 +25,15 @@ export interface RangeInForce extends Standing {
   readonly reviewDue: boolean;
   readonly restingSeated: number;
   readonly icd: PrescriptionRequest['devices']['icd'];
-  /** As signed, whatever came since. */
-  readonly inputs: PrescriptionRequest;
-  readonly result: PrescriptionAnswer;
 }
 
 /** The effort that leads where nothing else is known: rule 8, all else. */
 const usualEffort = { lower: 11, upper: 13 };
 
 /** What is left of a range: while it is withdrawn effort leads, no higher than usual, and the ceiling stays. */
-export function standingOf(result: PrescriptionAnswer, isWithdrawn: boolean): Standing {
-  const { leadBy, target, guide, ceiling, askLine, perceivedExertion } = result;
-  const { patientTarget, tenSecondCount } = result;
-  if (!isWithdrawn) {
-    return {
-      leadBy,
-      target,
-      guide,
-      ceiling,
-      askLine,
-      perceivedExertion,
-      patientTarget,
-      tenSecondCount,
-    };
-  }
+export function standingOf(signed: Standing, isWithdrawn: boolean): Standing {
+  if (!isWithdrawn) return signed;
+  const { ceiling, perceivedExertion } = signed;
   return {
     leadBy: 'perceived-exertion',
     target: null,

@@ -134,10 +134,12 @@ describe('writes of the floor', () => {
       'UPDATE session_records SET signed_at = now(), signed_by = recorded_by WHERE id = $1',
       [recordId],
     );
-    const beside = world.sql(insert, [uuidv7(), recordId, patient.id]);
+    const refused = expect(
+      world.sql(insert, [uuidv7(), recordId, patient.id]),
+    ).rejects.toMatchObject({ constraint: 'vital_signs_record_open' });
     await new Promise((resolve) => setTimeout(resolve, 100));
     await client.query('COMMIT');
     client.release();
-    await expect(beside).rejects.toMatchObject({ constraint: 'vital_signs_record_open' });
+    await refused;
   });
 });
