@@ -8,6 +8,7 @@ import {
   kilograms,
   meters,
   metersPerMinute,
+  mets,
   milliseconds,
   minutes,
   minutesOf,
@@ -25,6 +26,8 @@ import { cardiaMaximum, meckiMaximum, sydoMaximum } from './maximum-heart-rate';
 import { judgeWalkChange } from './six-minute-walk-change';
 import type { WalkCondition } from './six-minute-walk-change';
 import { lowerLimitOfWalk, predictedWalk, predictedWalkByIndex } from './six-minute-walk-predicted';
+import { runWorkloads } from './run-workloads';
+import { defaultPolicy } from './prescribing';
 import { edwardsZone, sessionLoad } from './training-load';
 
 describe('the cycle length of a device', () => {
@@ -136,6 +139,21 @@ describe('the treadmill’s gait', () => {
       }
     }
     expect(treadmillSpeedInRange('walk', speedOfMph(4.2))).toBe(false);
+  });
+});
+
+describe('a run', () => {
+  it('is level at the speed of the work, set down to the treadmill’s step', () => {
+    const [start, limit] = runWorkloads(
+      { lower: mets(5), upper: mets(8) },
+      defaultPolicy.equipment,
+    );
+    expect(start).toMatchObject({ speedMph: null, mets: null, withinEquationRange: false });
+    expect(start?.why).toContain('walk instead');
+    // 122.5 m/min is 4.567 mph.
+    expect(limit).toMatchObject({ speedMph: 4.5, gradePercent: 0, why: null });
+    expect(limit?.mets ?? Infinity).toBeLessThanOrEqual(8);
+    expect(runWorkloads(null, defaultPolicy.equipment)).toEqual([]);
   });
 });
 
