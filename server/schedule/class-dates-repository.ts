@@ -109,7 +109,10 @@ export async function lockFutureDates(
   return rows;
 }
 
-/** Moves class dates and the appointments in them to their newly computed instants. */
+/**
+ * Moves class dates and the appointments in them to their newly computed instants.
+ * @throws on constraint `appointments_no_overlap` when a patient would be in two classes at once
+ */
 export async function moveClassDates(
   tx: Transaction,
   moved: readonly (Occurrence & { readonly id: string })[],
@@ -125,6 +128,12 @@ export async function moveClassDates(
     `UPDATE class_dates d SET starts_at = moved.starts_at, ends_at = moved.ends_at, version = version + 1
        FROM ${times} WHERE d.id = moved.id`,
     values,
+  );
+  // Out of the way first: an hour on, a patient's nine o'clock would meet their ten o'clock, which moves too.
+  await tx.connection.query(
+    `UPDATE appointments SET starts_at = starts_at + interval '73048 days', ends_at = ends_at + interval '73048 days'
+      WHERE class_date_id = ANY ($1::uuid[])`,
+    [values[0]],
   );
   await tx.connection.query(
     `UPDATE appointments a SET starts_at = moved.starts_at, ends_at = moved.ends_at

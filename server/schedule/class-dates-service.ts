@@ -43,27 +43,36 @@ export async function makeClassDates(
   );
 }
 
-/** Moves scheduled dates to come whose instant is no longer that of their wall time. @returns how many */
-async function moveToWallTime(tx: Transaction, template: TemplateRow, now: Date): Promise<number> {
+/** Scheduled dates to come whose instant is no longer that of their wall time, with the one that is. */
+async function displacedDates(tx: Transaction, template: TemplateRow, now: Date) {
   const dates = await lockFutureDates(tx, template.id, now);
-  const moved = dates
+  return dates
     .filter(({ status }) => status === 'scheduled')
     .map((date) => ({ date, due: occurrenceOn(date.localDate, template, template.timeZone) }))
     .filter(({ date, due }) => +date.startsAt !== +due.startsAt || +date.endsAt !== +due.endsAt)
     .map(({ date, due }) => ({ ...due, id: date.id }));
-  if (moved.length > 0) await moveClassDates(tx, moved);
-  return moved.length;
 }
 
-async function planSite(tx: Transaction, siteId: string, now: Date): Promise<PlanningOutcome> {
+/**
+ * Makes the class dates of a site that are missing, and moves those to come to their wall time in the site's zone.
+ * @throws on constraint `appointments_no_overlap` when a patient would be in two classes at once
+ */
+export async function planSite(
+  tx: Transaction,
+  siteId: string,
+  now: Date,
+): Promise<PlanningOutcome> {
   await lockSitePlan(tx, siteId);
   const closed = await readClosedDates(tx, siteId, addDays(now.toISOString().slice(0, 10), -1));
-  let [made, moved] = [0, 0];
-  for (const template of await readTemplates(tx, siteId)) {
-    moved += await moveToWallTime(tx, template, now);
+  const templates = await readTemplates(tx, siteId);
+  const moved: Awaited<ReturnType<typeof displacedDates>> = [];
+  for (const template of templates) moved.push(...(await displacedDates(tx, template, now)));
+  if (moved.length > 0) await moveClassDates(tx, moved);
+  let made = 0;
+  for (const template of templates) {
     made += await makeClassDates(tx, template, closed, planningWindow(now, template.timeZone));
   }
-  return { made, moved };
+  return { made, moved: moved.length };
 }
 
 /**

@@ -1,22 +1,47 @@
-import { asc } from 'drizzle-orm';
-import type { NewSite, Site, SiteDetails } from '@shared/contracts/sites-contract';
+import { asc, eq } from 'drizzle-orm';
+import type { NewSite, Site, SiteChange, SiteDetails } from '@shared/contracts/sites-contract';
 import type { Queryable, Transaction } from '../database/client';
 import { sites } from '../database/schema';
 
 const site = { id: sites.id, name: sites.name, timeZone: sites.timeZone };
 
+const details = {
+  ...site,
+  address: sites.address,
+  phone: sites.phone,
+  version: sites.version,
+};
+
 export const listSites = (db: Queryable): Promise<Site[]> =>
   db.select(site).from(sites).orderBy(asc(sites.name));
 
 export const listSiteDetails = (db: Queryable): Promise<SiteDetails[]> =>
-  db
-    .select({ ...site, address: sites.address, phone: sites.phone })
-    .from(sites)
-    .orderBy(asc(sites.name));
+  db.select(details).from(sites).orderBy(asc(sites.name));
 
 /** @throws on constraint `sites_name_unique` */
 export async function insertSite(tx: Transaction, given: NewSite): Promise<Site> {
   const [made] = await tx.insert(sites).values(given).returning(site);
   if (!made) throw new Error('A site was not made');
   return made;
+}
+
+/** The site, locked as every planner of its classes locks it; undefined when there is none. */
+export async function lockSite(tx: Transaction, id: string): Promise<SiteDetails | undefined> {
+  const [row] = await tx.select(details).from(sites).where(eq(sites.id, id)).for('no key update');
+  return row;
+}
+
+/** @throws on constraint `sites_name_unique` */
+export async function updateSite(
+  tx: Transaction,
+  id: string,
+  { version, ...change }: SiteChange,
+): Promise<SiteDetails> {
+  const [row] = await tx
+    .update(sites)
+    .set({ ...change, version: version + 1 })
+    .where(eq(sites.id, id))
+    .returning(details);
+  if (!row) throw new Error('A site that was locked is gone');
+  return row;
 }

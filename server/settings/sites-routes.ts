@@ -1,11 +1,16 @@
+import * as z from 'zod';
 import {
+  changedSiteSchema,
   newSiteSchema,
+  siteChangeSchema,
   siteSchema,
   sitesDetailsResponseSchema,
   sitesResponseSchema,
 } from '@shared/contracts/sites-contract';
 import { created, ok } from '../http/answers';
+import { Failure } from '../http/failure';
 import { route } from '../http/route';
+import { changeSite } from './sites-service';
 import { insertSite, listSiteDetails, listSites } from './sites-repository';
 
 export const sitesRoutes = [
@@ -45,5 +50,27 @@ export const sitesRoutes = [
     response: { 201: siteSchema },
     constraints: { sites_name_unique: 'already-recorded' },
     handler: async ({ tx, input }) => created(await insertSite(tx, input.body)),
+  }),
+  route({
+    method: 'put',
+    path: '/api/sites/:id',
+    summary: 'Changes a site; in another time zone its classes to come keep their time on the wall',
+    access: { roles: ['administrator'] },
+    audit: 'handler',
+    request: { params: z.object({ id: z.uuid() }), body: siteChangeSchema },
+    response: { 200: changedSiteSchema },
+    constraints: {
+      sites_name_unique: 'already-recorded',
+      appointments_no_overlap: 'overlapping-appointment',
+    },
+    handler: async ({ tx, context, input, audit }) => {
+      const { id } = input.params;
+      const changed = await changeSite(tx, id, input.body, context.clock.now());
+      if (changed instanceof Failure) return changed;
+      const { fields, ...answer } = changed;
+      const details = { fields, movedClassDates: answer.movedClassDates };
+      audit({ action: 'site.changed', objectType: 'site', objectId: id, details });
+      return ok(answer);
+    },
   }),
 ];

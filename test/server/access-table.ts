@@ -132,6 +132,7 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
     none: 'the policy is the whole program’s',
   },
   'POST /api/sites': { who: administrator, none: 'names of sites alone' },
+  'PUT /api/sites/:id': { who: administrator, none: 'names of sites alone' },
 
   'POST /api/prescriptions/evaluate': { who: prescribing, none: 'stores and reads nothing' },
   'GET /api/patients/:id/prescriptions': {

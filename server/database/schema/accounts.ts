@@ -140,6 +140,7 @@ export const auditEvents = pgTable(
   (t) => [
     uniqueIndex('audit_events_sequence').on(t.sequence),
     index('audit_events_patient').on(t.patientId, t.at),
+    index('audit_events_at').on(t.at),
     index('audit_events_actor').on(t.actorId, t.at),
   ],
 );

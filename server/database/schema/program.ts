@@ -23,6 +23,7 @@ export const sites = pgTable('sites', {
   timeZone: text().notNull(),
   address: text().notNull(),
   phone: text().notNull(),
+  version: integer().notNull().default(1),
   createdAt: madeAt(),
 });
 

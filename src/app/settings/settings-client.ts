@@ -19,9 +19,12 @@ import {
   policyInForceSchema,
 } from '@shared/contracts/policy-in-force-contract';
 import {
+  type ChangedSite,
   type NewSite,
   type Site,
+  type SiteChange,
   type SiteDetails,
+  changedSiteSchema,
   siteSchema,
   sitesDetailsResponseSchema,
   sitesResponseSchema,
@@ -79,6 +82,12 @@ export class SettingsClient {
 
   addSite(site: NewSite): Observable<Site> {
     return this.#http.post('/api/sites', site).pipe(map((answer) => siteSchema.parse(answer)));
+  }
+
+  changeSite(id: string, change: SiteChange): Observable<ChangedSite> {
+    return this.#http
+      .put(`/api/sites/${id}`, change)
+      .pipe(map((answer) => changedSiteSchema.parse(answer)));
   }
 
   policy(): HttpResourceRef<PolicyInForce | undefined> {

@@ -30,6 +30,11 @@ const kept: Routes = [
     loadComponent: async () => (await import('./add-site-page/add-site-page')).AddSitePage,
   },
   {
+    path: 'sites/:id',
+    title: 'Site',
+    loadComponent: async () => (await import('./edit-site-page/edit-site-page')).EditSitePage,
+  },
+  {
     path: 'audit',
     title: 'Audit',
     loadComponent: async () => (await import('./audit-page/audit-page')).AuditPage,

@@ -1,46 +1,22 @@
-import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
-import { toSignal } from '@angular/core/rxjs-interop';
-import { NonNullableFormBuilder, ReactiveFormsModule } from '@angular/forms';
-import { MatAutocomplete, MatAutocompleteTrigger, MatOption } from '@angular/material/autocomplete';
+import { ChangeDetectionStrategy, Component, inject, signal } from '@angular/core';
+import { ReactiveFormsModule } from '@angular/forms';
 import { MatButton } from '@angular/material/button';
-import { MatError, MatFormField, MatHint, MatLabel } from '@angular/material/form-field';
-import { MatInput } from '@angular/material/input';
 import { Router, RouterLink } from '@angular/router';
-import { newSiteSchema } from '@shared/contracts/sites-contract';
 import { firstValueFrom } from 'rxjs';
 import { Notices } from '../../core/notices';
 import { type Problem, toProblem } from '../../core/problem';
-import { FieldError } from '../../ui/field-error/field-error';
-import { showFieldErrors, zodValidator } from '../../ui/field-error/zod-validator';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { SettingsClient } from '../settings-client';
-import { matchingZones, timeIn } from '../time-zones';
+import { showSiteProblem, siteControls } from '../site-form/site-controls';
+import { SiteForm } from '../site-form/site-form';
 
-const rules = newSiteSchema.shape;
-const zones = Intl.supportedValuesOf('timeZone');
-
-/** Adds a site; its zone decides when its classes are. */
+/** Adds a site. */
 @Component({
   selector: 'app-add-site-page',
-  imports: [
-    FieldError,
-    MatAutocomplete,
-    MatAutocompleteTrigger,
-    MatButton,
-    MatError,
-    MatFormField,
-    MatHint,
-    MatInput,
-    MatLabel,
-    MatOption,
-    PageHeader,
-    ProblemMessage,
-    ReactiveFormsModule,
-    RouterLink,
-  ],
+  imports: [MatButton, PageHeader, ProblemMessage, ReactiveFormsModule, RouterLink, SiteForm],
   templateUrl: './add-site-page.html',
-  styleUrls: ['../settings-page.scss', './add-site-page.scss'],
+  styleUrl: '../settings-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class AddSitePage {
@@ -48,21 +24,12 @@ export class AddSitePage {
   readonly #router = inject(Router);
   readonly #notices = inject(Notices);
 
-  protected readonly form = inject(NonNullableFormBuilder).group({
-    name: ['', zodValidator(rules.name)],
-    timeZone: [Intl.DateTimeFormat().resolvedOptions().timeZone, zodValidator(rules.timeZone)],
-    address: ['', zodValidator(rules.address)],
-    phone: ['', zodValidator(rules.phone)],
+  protected readonly form = siteControls({
+    name: '',
+    timeZone: Intl.DateTimeFormat().resolvedOptions().timeZone,
+    address: '',
+    phone: '',
   });
-  readonly #zone = toSignal(this.form.controls.timeZone.valueChanges, {
-    initialValue: this.form.controls.timeZone.value,
-  });
-  /** All of them again once one is chosen. */
-  protected readonly zones = computed(() => {
-    const typed = this.#zone();
-    return matchingZones(zones, zones.includes(typed) ? '' : typed, zones.length);
-  });
-  protected readonly timeThere = computed(() => timeIn(this.#zone(), new Date()));
   protected readonly sending = signal(false);
   protected readonly problem = signal<Problem | null>(null);
 
@@ -76,18 +43,9 @@ export class AddSitePage {
       void this.#notices.say(`${site.name} is added. Choose who works there under People.`);
       await this.#router.navigateByUrl('/settings/sites');
     } catch (error) {
-      this.#show(toProblem(error));
+      this.problem.set(showSiteProblem(this.form, toProblem(error)));
     } finally {
       this.sending.set(false);
     }
-  }
-
-  #show(problem: Problem): void {
-    if (problem.code === 'already-recorded') {
-      this.form.controls.name.setErrors({ server: 'Another site has this name' });
-      return;
-    }
-    const elsewhere = showFieldErrors(this.form, problem.errors);
-    if (problem.errors.length === 0 || elsewhere.length > 0) this.problem.set(problem);
   }
 }
