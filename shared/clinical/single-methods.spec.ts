@@ -19,7 +19,12 @@ import {
 import { chronotropicIndex, isIndexLow } from './chronotropic-index';
 import { cycleLengthOfRate, rateOfCycleLength } from './cycle-length';
 import { netVo2, relativeVo2 } from './energy-expenditure';
-import { averageStandTime, chairStandPoints, isWorseThanAverage } from './five-times-sit-to-stand';
+import {
+  averageStandTime,
+  chairStandPoints,
+  isWorseThanAverage,
+  standMarks,
+} from './five-times-sit-to-stand';
 import { metabolicEquations, treadmillSpeedInRange } from './gait';
 import { metsOfHeartRateIndex } from './heart-rate-index';
 import { cardiaMaximum, meckiMaximum, sydoMaximum } from './maximum-heart-rate';
@@ -84,6 +89,10 @@ describe('five stands', () => {
     [90, null],
   ])('at %d years the average is %s', (age, time) => {
     expect(averageStandTime(age)).toBe(time);
+  });
+
+  it('have marks of their own for falls and disability', () => {
+    expect(standMarks.disability).toBeLessThan(standMarks.recurrentFalls);
   });
 
   it('are judged only where an average is', () => {

@@ -12,7 +12,11 @@ const left: readonly {
   readonly count: number;
   readonly is: (vector: Vector) => boolean;
 }[] = [
-  { what: 'holding and stopping a session', count: 31, is: ({ section }) => section === 6 },
+  {
+    what: 'holding and stopping a session',
+    count: 29,
+    is: ({ section, id }) => section === 6 && !id.startsWith('WALK-'),
+  },
   { what: 'coverage and performance measures', count: 17, is: ({ section }) => section === 7 },
   {
     what: 'survival, control limits, funnels',

@@ -7,8 +7,20 @@ import { treadmillTimeEstimates } from '@shared/clinical/exercise-test/time-esti
 import { scorePhq9 } from '@shared/clinical/questionnaires/phq-9';
 import { defaultStaffing, staffNeeded } from '@shared/clinical/risk/staffing';
 import { judgeWalkChange } from '@shared/clinical/six-minute-walk-change';
+import type { BeforeWalk, WalkStandard } from '@shared/clinical/walk-test-screening';
+import { screenWalk } from '@shared/clinical/walk-test-screening';
 import * as equations from '@shared/clinical/metabolic-equations';
-import { bpm, meters, mets, metersPerMinute, minutes, mphOf, vo2, vo2Of } from '@shared/units';
+import {
+  bpm,
+  mmHg,
+  meters,
+  mets,
+  metersPerMinute,
+  minutes,
+  mphOf,
+  vo2,
+  vo2Of,
+} from '@shared/units';
 import { expect } from 'vitest';
 import { riskOfNothingKnown } from './risk-facts';
 import { input } from './vectors';
@@ -46,6 +58,13 @@ const recovery = (vector: Vector) =>
 
 const gain = (vector: Vector, condition: 'coronary-disease' | 'heart-failure') =>
   judgeWalkChange(meters(400), meters(400 + input(vector, 'change')), condition).important;
+
+const readyToWalk: BeforeWalk = {
+  heartRate: bpm(70),
+  pressure: { systolic: mmHg(130), diastolic: mmHg(80) },
+  oxygenSaturation: 97,
+  recentEvent: false,
+};
 
 /** Vectors that state what a test, walk or questionnaire must come to, and examples that do not reproduce as printed. */
 export const statedRules: Readonly<Record<string, (vector: Vector) => void>> = {
@@ -89,6 +108,19 @@ export const statedRules: Readonly<Record<string, (vector: Vector) => void>> = {
   'STAFF-2': (vector) => {
     const risks = Array<'low'>(input(vector, 'patients')).fill('low');
     expect(staffNeeded(risks, defaultStaffing)).toBe(vector.expected);
+  },
+  'WALK-SPO2': (vector) => {
+    const before = { ...readyToWalk, oxygenSaturation: input(vector, 'spo2') };
+    expect(screenWalk(before, 'ers-ats-2014').verdict).toBe(vector.expected);
+  },
+  'WALK-BP': (vector) => {
+    const pressure = {
+      systolic: mmHg(input(vector, 'sbp')),
+      diastolic: mmHg(input(vector, 'dbp')),
+    };
+    const verdictBy = (standard: WalkStandard) =>
+      screenWalk({ ...readyToWalk, pressure }, standard).verdict;
+    expect([verdictBy('ers-ats-2014'), verdictBy('ats-2002')]).toEqual(['proceed', 'relative']);
   },
   'HRREC-1': (vector) => {
     expect(recovery(vector)).toBe(12);

@@ -4,9 +4,16 @@ import { bpm, centimeters, kilograms, minutes, vo2, watts } from '../../units';
 import { recoveryCriterionFor } from './heart-rate-recovery';
 import type { RecoveryFacts } from './heart-rate-recovery';
 import { friend2017Vo2, friend2018Vo2, percentOfPredicted } from './predicted-capacity';
-import { lastFinishedStage, naughtonStages, stagesOf } from './protocols';
+import {
+  lastFinishedStage,
+  naughtonStages,
+  protocolNames,
+  protocolSources,
+  stagesOf,
+  testProtocols,
+} from './protocols';
 import type { TabledProtocol } from './protocols';
-import { cycleRamp, treadmillRamp } from './ramps';
+import { cycleRamp, rampMinutes, treadmillRamp } from './ramps';
 import { cycleStageWork, fosterPeakVo2, treadmillStageWork } from './stage-uptake';
 import { treadmillTimeEstimates } from './time-estimates';
 import type { TimedTest } from './time-estimates';
@@ -47,6 +54,12 @@ describe('the stages of a protocol', () => {
       }
     },
   );
+
+  it('have a name, and where they are printed, a source', () => {
+    for (const protocol of testProtocols) expect(protocolNames[protocol]).not.toBe('');
+    expect(Object.keys(protocolSources)).toHaveLength(testProtocols.length - 3);
+    expect(rampMinutes.lowest).toBeLessThan(rampMinutes.highest);
+  });
 
   it('of Naughton are as long as the laboratory has them, with or without a warm-up', () => {
     const stages = naughtonStages({ minutesPerStage: 2, warmUp: true });

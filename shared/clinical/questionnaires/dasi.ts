@@ -14,6 +14,7 @@ const weights = [2.75, 1.75, 2.75, 5.5, 8, 2.7, 3.5, 8, 4.5, 5.25, 6, 7.5] as co
 
 export interface DasiScore {
   readonly state: 'complete';
+  readonly version: DasiVersion;
   /** 0–58.2. */
   readonly total: number;
   /** 9.6–34.6 mL/kg/min: no answer can give less, or more. */
@@ -29,7 +30,10 @@ export const peakVo2OfDasi = (total: number): Vo2 => vo2(0.43 * total + 9.6);
  * @throws RangeError for other than twelve answers
  * @see dasiSource
  */
-export function scoreDasi(answers: Answers<boolean>): DasiScore | Incomplete {
+export function scoreDasi(
+  answers: Answers<boolean>,
+  version: DasiVersion = 'original',
+): DasiScore | Incomplete {
   if (answers.length !== weights.length) throw new RangeError('DASI: 12 answers are expected');
   const missing = answers.flatMap((answer, index) => (answer === null ? [index + 1] : []));
   if (missing.length > 0) return { state: 'incomplete', missing };
@@ -37,5 +41,5 @@ export function scoreDasi(answers: Answers<boolean>): DasiScore | Incomplete {
     weights.reduce((sum, weight, index) => sum + (answers[index] === true ? weight : 0), 0),
   );
   const peakVo2 = peakVo2OfDasi(total);
-  return { state: 'complete', total, peakVo2, peakMets: metsOf(peakVo2) };
+  return { state: 'complete', version, total, peakVo2, peakMets: metsOf(peakVo2) };
 }

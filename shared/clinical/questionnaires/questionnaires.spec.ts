@@ -3,6 +3,8 @@ import { describe, expect, it } from 'vitest';
 import type { FrequencyAnswer } from './answers';
 import { scoreDasi } from './dasi';
 import { scoreGad7 } from './gad-7';
+import type { Questionnaire } from './questionnaires';
+import { questionnaires } from './questionnaires';
 import { scorePhq2 } from './phq-2';
 import { isPhq9Positive, scorePhq9 } from './phq-9';
 import { judgeScoreChange } from './score-change';
@@ -87,6 +89,23 @@ describe('PHQ-2, GAD-7 and DASI', () => {
         expect(score.peakVo2).toBeLessThanOrEqual(34.63);
       }),
     );
+  });
+});
+
+describe('the forms', () => {
+  it('have as many items as the scores expect, and reach their highest total', () => {
+    const all = <A>(key: keyof typeof questionnaires, answer: A) =>
+      Array<A>(questionnaires[key].items.length).fill(answer);
+    expect(scorePhq2(all<FrequencyAnswer>('phq-2', 3))).toMatchObject({ total: 6 });
+    expect(scorePhq9(all<FrequencyAnswer>('phq-9', 3))).toMatchObject({ total: 27 });
+    expect(scoreGad7(all<FrequencyAnswer>('gad-7', 3))).toMatchObject({ total: 21 });
+    expect(scoreDasi(all('dasi', true), 'united-kingdom')).toMatchObject({
+      total: 58.2,
+      version: 'united-kingdom',
+    });
+    expect(Object.values(questionnaires).map(({ highest }) => highest)).toEqual([6, 27, 21, 58.2]);
+    const forms: readonly Questionnaire[] = Object.values(questionnaires);
+    for (const { items, source } of forms) expect([...items, source]).not.toContain('');
   });
 });
 

@@ -6,7 +6,7 @@ import type { PolicyNumbers } from '../policy-numbers';
 import { policyFaults, policyKeysOf } from '../policy-numbers';
 import type { RiskLevel } from '../prescribing';
 import type { AhaFacts } from './aha-class';
-import { ahaClassOf } from './aha-class';
+import { ahaClassOf, ahaSource } from './aha-class';
 import type { RiskFacts, RiskFinding } from './criteria';
 import { riskClasses, riskFindings, riskNumbers, riskSource } from './criteria';
 import { monitoringAdvice, monitoringSource } from './monitoring';
@@ -119,6 +119,7 @@ describe('risk', () => {
     expect(riskNumbers.ejectionFraction.unit).toBe('%');
     expect(riskSource).toContain('AACVPR');
     expect(monitoringSource).toContain('memory');
+    expect(ahaSource).toContain('Fletcher');
     expect(riskClasses.map((each) => monitoringAdvice[each].sessions.upper)).toEqual([18, 24, 36]);
   });
 });
