@@ -1,13 +1,38 @@
-import { calendarLinkSchema, calendarParamsSchema } from '@shared/contracts/calendar-contract';
+import {
+  calendarLinkSchema,
+  calendarParamsSchema,
+  calendarStateSchema,
+} from '@shared/contracts/calendar-contract';
 import { ok } from '../http/answers';
 import { fail } from '../http/failure';
 import { route, textAnswer, type RouteDefinition } from '../http/route';
 import {
   calendarEntries,
+  calendarMadeAt,
   calendarOf,
   patientOfCalendar,
   renewCalendarToken,
 } from './calendar-service';
+
+const state = route({
+  method: 'get',
+  path: '/api/my/calendar-link',
+  summary: 'Since when one’s own calendar has an address',
+  access: { roles: ['patient'] },
+  audit: {
+    action: 'calendar.link-seen',
+    objectType: 'patient',
+    objectId: ({ actor }) => actor?.patientId ?? null,
+    patientId: ({ actor }) => actor?.patientId ?? null,
+  },
+  request: {},
+  response: { 200: calendarStateSchema },
+  handler: async ({ tx, actor }) => {
+    if (actor.patientId === null) return fail('not-found');
+    const madeAt = await calendarMadeAt(tx, actor.patientId);
+    return ok({ madeAt: madeAt?.toISOString() ?? null });
+  },
+});
 
 const renew = route({
   method: 'post',
@@ -47,4 +72,4 @@ const read = route({
   },
 });
 
-export const calendarRoutes: RouteDefinition[] = [renew, read];
+export const calendarRoutes: RouteDefinition[] = [state, renew, read];

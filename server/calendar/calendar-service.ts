@@ -20,6 +20,15 @@ export async function renewCalendarToken(
   return token;
 }
 
+/** When the patient's calendar address was made; null while there is none. */
+export async function calendarMadeAt(tx: Transaction, patientId: string): Promise<Date | null> {
+  const { rows } = await tx.connection.query<{ createdAt: Date }>(
+    'SELECT created_at AS "createdAt" FROM calendar_links WHERE patient_id = $1',
+    [patientId],
+  );
+  return rows[0]?.createdAt ?? null;
+}
+
 /** @returns undefined when the address was never given out, or was made anew since */
 export async function patientOfCalendar(
   tx: Transaction,

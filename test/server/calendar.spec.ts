@@ -56,7 +56,10 @@ describe('a patient’s calendar', () => {
 
   it('has one address: a new one ends the former', async () => {
     const owed = await house.owe();
+    const since = async () => (await owed.payer.get('/api/my/calendar-link').expect(200)).body;
+    expect(await since()).toEqual({ madeAt: null });
     const former = await addressFor(owed);
+    expect(await since()).toEqual({ madeAt: house.testApp.clock.now().toISOString() });
     await read(await addressFor(owed)).expect(200);
     await read(former).expect(404);
     await read(`/api/calendar/${'x'.repeat(43)}.ics`).expect(404);
