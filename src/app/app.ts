@@ -27,7 +27,7 @@ export class App {
   readonly #url = signal('');
 
   /** Patient pages are set larger, for older eyes. */
-  protected readonly patientPage = computed(() => this.#url().startsWith('/my/'));
+  protected readonly patientPage = computed(() => /^\/(my|unsubscribe)\//.test(this.#url()));
   protected readonly areas = computed(() =>
     areasFor(this.session.roles(), routedPaths(this.#router)),
   );

@@ -1,4 +1,5 @@
 import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
+import { MatCheckbox, type MatCheckboxChange } from '@angular/material/checkbox';
 import { MatFormField, MatLabel } from '@angular/material/form-field';
 import { MatInput } from '@angular/material/input';
 import { RouterLink } from '@angular/router';
@@ -24,6 +25,9 @@ const usual = [
   'Pacific/Honolulu',
 ];
 
+/** "Chicago" for America/Chicago. */
+const placeOf = (zone: string): string => zoneWords(zone).replace(/ \(.*$/, '');
+
 /** "Chicago (America)" for America/Chicago. */
 function zoneWords(zone: string): string {
   const parts = zone.replaceAll('_', ' ').split('/');
@@ -38,6 +42,7 @@ const option = (value: string) => ({ value, label: zoneWords(value) });
   selector: 'app-my-details-page',
   imports: [
     Fact,
+    MatCheckbox,
     MatFormField,
     MatInput,
     MatLabel,
@@ -55,20 +60,37 @@ export class MyDetailsPage {
   readonly #notices = inject(Notices);
   readonly #session = inject(Session);
 
-  readonly #resource = this.#client.details(
-    computed(() => this.#session.user()?.patientId ?? undefined),
-  );
+  readonly #id = computed(() => this.#session.user()?.patientId ?? undefined);
+  readonly #resource = this.#client.details(this.#id);
+  readonly #preferences = this.#client.preferences(this.#id);
   protected readonly patient = computed(() => valueOf(this.#resource));
   protected readonly hasRecord = computed(() => Boolean(this.#session.user()?.patientId));
   readonly #refused = signal<Problem | null>(null);
-  protected readonly problem = computed(() => this.#refused() ?? failureOf(this.#resource));
+  protected readonly problem = computed(
+    () => this.#refused() ?? failureOf(this.#resource) ?? failureOf(this.#preferences),
+  );
+  protected readonly reminders = computed(() => valueOf(this.#preferences)?.reminders);
 
   protected readonly usualZones = usual.map(option);
   protected readonly otherZones = Intl.supportedValuesOf('timeZone')
     .filter((zone) => !usual.includes(zone))
     .map(option)
     .sort((a, b) => a.label.localeCompare(b.label));
-  protected readonly zoneWords = zoneWords;
+  protected readonly placeOf = placeOf;
+
+  protected async remind({ checked: reminders, source }: MatCheckboxChange): Promise<void> {
+    this.#refused.set(null);
+    try {
+      await firstValueFrom(this.#client.changePreferences({ reminders }));
+      await this.#notices.say(
+        reminders ? 'Saved. We will remind you.' : 'Saved. We send no more reminders.',
+      );
+    } catch (error) {
+      source.checked = !reminders;
+      this.#refused.set(toProblem(error));
+    }
+    this.#preferences.reload();
+  }
 
   protected async choose({ id, version }: Patient, zone: string): Promise<void> {
     this.#refused.set(null);
