@@ -20,6 +20,7 @@ export const errorStatus = {
   'email-taken': 409,
   'idempotency-key-reused': 409,
   'illegal-transition': 409,
+  'late-cancellation': 409,
   'monitors-full': 409,
   'no-active-enrollment': 409,
   'not-checked-in': 409,
@@ -62,6 +63,8 @@ export const errorTitle: Readonly<Record<ErrorCode, string>> = {
   'email-taken': 'Another account uses this e-mail address.',
   'idempotency-key-reused': 'This key was used for another request. Send it again with a new key.',
   'illegal-transition': 'That can no longer be done from the present status. Load the page again.',
+  'late-cancellation':
+    'It is now too late to cancel for free. Read what it costs, then decide again.',
   'monitors-full': 'All monitored places of this class are taken. Choose another date.',
   'no-active-enrollment': 'There is no active enrollment. Enroll the patient first.',
   'not-checked-in': 'Check the patient in first.',

@@ -36,6 +36,7 @@ function selectCharges(tx: Queryable) {
       status: charges.status,
       createdAt: charges.createdAt,
       appointmentId: appointments.id,
+      appointmentStatus: appointments.status,
       startsAt: appointments.startsAt,
       timeZone: sites.timeZone,
       site: sites.name,
@@ -54,10 +55,19 @@ function selectCharges(tx: Queryable) {
 
 type ChargeRow = Awaited<ReturnType<typeof selectCharges>>[number];
 
-const appointmentOf = ({ appointmentId, startsAt, timeZone, site }: ChargeRow) =>
-  appointmentId !== null && startsAt !== null && timeZone !== null && site !== null
-    ? { id: appointmentId, startsAt: startsAt.toISOString(), timeZone, site }
-    : null;
+function appointmentOf({
+  appointmentId,
+  appointmentStatus,
+  startsAt,
+  timeZone,
+  site,
+}: ChargeRow): Charge['appointment'] {
+  if (appointmentId === null || startsAt === null || timeZone === null || site === null) {
+    return null;
+  }
+  const cancelled = appointmentStatus === 'cancelled';
+  return { id: appointmentId, startsAt: startsAt.toISOString(), timeZone, site, cancelled };
+}
 
 function present(row: ChargeRow): Charge {
   const { id, patientId, description, amountMinor, currency, status, payment, refund } = row;

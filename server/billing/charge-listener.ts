@@ -9,6 +9,8 @@ import {
   insertCharge,
   liveAttempt,
   lockChargeOf,
+  lockStandingCharge,
+  moveCharge,
   setChargeStatus,
   settledPayment,
   type ChargeRow,
@@ -18,10 +20,12 @@ import { requestRefund } from './refunds-service';
 
 async function charge(
   tx: Transaction,
-  { appointmentId, patientId, price }: AppointmentFacts,
+  { appointmentId, classDateId, patientId, price }: AppointmentFacts,
   { at }: AppointmentCause,
 ): Promise<void> {
   if (price === null) return;
+  const standing = await lockStandingCharge(tx, { patientId, classDateId });
+  if (standing) return moveCharge(tx, standing.id, appointmentId);
   const { priceItemId, amountMinor, currency } = price;
   const made = { patientId, appointmentId, priceItemId, amountMinor, currency, createdAt: at };
   const { id: chargeId } = await insertCharge(tx, made);
@@ -48,7 +52,7 @@ async function giveBack(tx: Transaction, row: ChargeRow, cause: AppointmentCause
 
 /**
  * A self-pay class is charged when it is booked. Cancelled in time, or by the program, the charge is taken back or the
- * payment returned in full; cancelled late it stays.
+ * payment returned in full; cancelled late it stays, and whoever takes a place in the same class again is not charged twice.
  */
 export const chargeForPlaces: AppointmentListener = async (tx, event, cause) => {
   if (event.type === 'booked') {

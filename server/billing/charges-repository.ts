@@ -1,6 +1,6 @@
-import { and, eq, inArray, ne, sql } from 'drizzle-orm';
+import { and, eq, inArray, ne, notExists, sql } from 'drizzle-orm';
 import type { Transaction } from '../database/client';
-import { charges, payments, refunds } from '../database/schema';
+import { appointments, charges, payments, refunds } from '../database/schema';
 
 export type ChargeRow = typeof charges.$inferSelect;
 export type PaymentRow = typeof payments.$inferSelect;
@@ -22,6 +22,52 @@ export async function lockChargeOf(
     .where(and(eq(charges.appointmentId, appointmentId), ne(charges.status, 'void')))
     .for('no key update');
   return row;
+}
+
+/** A charge that stayed when the patient cancelled a place in this class late, locked. */
+export async function lockStandingCharge(
+  tx: Transaction,
+  { patientId, classDateId }: { readonly patientId: string; readonly classDateId: string },
+): Promise<ChargeRow | undefined> {
+  const given = tx
+    .select({ id: refunds.id })
+    .from(refunds)
+    .innerJoin(payments, eq(payments.id, refunds.paymentId))
+    .where(eq(payments.chargeId, charges.id));
+  const cancelled = tx
+    .select({ id: appointments.id })
+    .from(appointments)
+    .where(
+      and(
+        eq(appointments.patientId, patientId),
+        eq(appointments.classDateId, classDateId),
+        eq(appointments.status, 'cancelled'),
+      ),
+    );
+  const [row] = await tx
+    .select()
+    .from(charges)
+    .where(
+      and(
+        inArray(charges.appointmentId, cancelled),
+        inArray(charges.status, ['open', 'paid']),
+        notExists(given),
+      ),
+    )
+    .for('no key update');
+  return row;
+}
+
+/** Lets a charge stand for another place in the same class. */
+export async function moveCharge(
+  tx: Transaction,
+  id: string,
+  appointmentId: string,
+): Promise<void> {
+  await tx
+    .update(charges)
+    .set({ appointmentId, version: sql`${charges.version} + 1` })
+    .where(eq(charges.id, id));
 }
 
 export async function insertCharge(

@@ -7,7 +7,7 @@ import type { Transaction } from '../database/client';
 
 type Times = 'startsAt' | 'endsAt';
 
-type ItemRow = Omit<AppointmentItem, Times | 'price' | 'site'> & {
+type ItemRow = Omit<AppointmentItem, Times | 'price' | 'charge' | 'site'> & {
   readonly startsAt: Date;
   readonly endsAt: Date;
   readonly siteId: string;
@@ -17,6 +17,9 @@ type ItemRow = Omit<AppointmentItem, Times | 'price' | 'site'> & {
   readonly priceName: string | null;
   readonly amountMinor: number | null;
   readonly currency: string | null;
+  readonly chargedMinor: number | null;
+  readonly chargedIn: string | null;
+  readonly chargeStatus: string | null;
 };
 
 const ITEM = `
@@ -24,21 +27,29 @@ const ITEM = `
          a.starts_at AS "startsAt", a.ends_at AS "endsAt", a.local_date::text AS "localDate", a.monitored,
          a.cancelled_reason AS "cancelledReason", t.name AS "className", t.kind,
          s.id AS "siteId", s.name AS "siteName", s.time_zone AS "timeZone", s.phone,
-         p.name AS "priceName", p.amount_minor::int AS "amountMinor", p.currency
+         p.name AS "priceName", p.amount_minor::int AS "amountMinor", p.currency,
+         c.amount_minor::int AS "chargedMinor", c.currency AS "chargedIn", c.status AS "chargeStatus"
     FROM appointments a
     JOIN class_dates d ON d.id = a.class_date_id
     JOIN class_templates t ON t.id = d.template_id
     JOIN sites s ON s.id = d.site_id
-    LEFT JOIN price_items p ON p.id = t.price_item_id`;
+    LEFT JOIN price_items p ON p.id = t.price_item_id
+    LEFT JOIN charges c ON c.appointment_id = a.id AND c.status IN ('open', 'paid')
+      AND NOT EXISTS (SELECT FROM refunds r JOIN payments y ON y.id = r.payment_id WHERE y.charge_id = c.id)`;
 
 function presentItem(row: ItemRow): AppointmentItem {
-  const { siteId, siteName, timeZone, phone, priceName, amountMinor, currency, ...rest } = row;
+  const { siteId, siteName, timeZone, phone, priceName, amountMinor, currency, ...more } = row;
+  const { chargedMinor, chargedIn, chargeStatus, ...rest } = more;
+  const charged = chargedMinor !== null && chargedIn !== null;
   const priced = priceName !== null && amountMinor !== null && currency !== null;
   return {
     ...rest,
     startsAt: row.startsAt.toISOString(),
     endsAt: row.endsAt.toISOString(),
     price: priced ? { name: priceName, amountMinor, currency } : null,
+    charge: charged
+      ? { amountMinor: chargedMinor, currency: chargedIn, paid: chargeStatus === 'paid' }
+      : null,
     site: { id: siteId, name: siteName, timeZone, phone },
   };
 }

@@ -14,6 +14,8 @@ export interface StatusChange {
   readonly status: AppointmentStatus;
   /** Shown to staff beside a cancelled place. */
   readonly reason?: string;
+  /** False refuses a cancellation that counts as late by now. */
+  readonly acceptsLate?: boolean;
   /** What the caller has seen; left out by a feature that acts in its own transaction. */
   readonly version?: number;
 }
@@ -76,6 +78,9 @@ function refusalOf(
     return fail('illegal-transition', {
       title: 'This class has started, so it can’t be cancelled here. Please call us.',
     });
+  }
+  if (change.acceptsLate === false && isLateCancellation(appointment, now, context.window)) {
+    return fail('late-cancellation');
   }
   return null;
 }

@@ -20,7 +20,14 @@ export const chargeSchema = z.object({
   createdAt: instant,
   /** The class that it pays for; null when there is none. */
   appointment: z
-    .object({ id: z.uuid(), startsAt: instant, timeZone: z.string(), site: z.string() })
+    .object({
+      id: z.uuid(),
+      startsAt: instant,
+      timeZone: z.string(),
+      site: z.string(),
+      /** Given back; a charge that stays all the same was cancelled late. */
+      cancelled: z.boolean(),
+    })
     .nullable(),
   paidAt: instant.nullable(),
   /** An attempt to pay that is not decided yet. */

@@ -94,6 +94,8 @@ export type Appointment = z.infer<typeof appointmentSchema>;
 export const changeAppointmentRequestSchema = z.strictObject({
   status: appointmentStatusSchema,
   reason: textField(200, 'Enter a reason').optional(),
+  /** False cancels only while that is in time: who was told that it is free is never charged by a clock that went on. */
+  acceptsLate: z.boolean().optional(),
   version,
 });
 export type ChangeAppointmentRequest = z.infer<typeof changeAppointmentRequestSchema>;
@@ -105,6 +107,10 @@ export const appointmentItemSchema = appointmentSchema.extend({
   localDate: z.iso.date(),
   monitored: z.boolean(),
   price: priceSchema.nullable(),
+  /** What the patient owes for this place, or has paid and does not get back; null when nothing. */
+  charge: z
+    .object({ amountMinor: z.int().positive(), currency: z.string().length(3), paid: z.boolean() })
+    .nullable(),
   cancelledReason: z.string().nullable(),
   site: z.object({ id: z.uuid(), name: z.string(), timeZone: z.string(), phone: z.string() }),
 });

@@ -3,6 +3,7 @@ import type { Role } from '@shared/contracts/accounts-contract';
 import { accountsRoutes } from './accounts/accounts.routes';
 import { allow, landing } from './core/access-guard';
 import { type AreaPath, areaOf, staff } from './core/navigation';
+import { messagesRoutes } from './messages/messages.routes';
 import { paymentRoutes } from './my-payments/payment.routes';
 
 /** Who works out and reads ranges; the server decides again on every call. */
@@ -50,6 +51,7 @@ export const routes: Routes = [
     async () => (await import('./my-payments/my-payments.routes')).myPaymentsRoutes,
   ),
   ...paymentRoutes,
+  ...messagesRoutes,
   area('settings', async () => (await import('./settings/settings.routes')).settingsRoutes),
   {
     path: 'api-reference',

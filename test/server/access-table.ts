@@ -281,6 +281,7 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
     strangers: 200,
     record: () => ({ body: {} }),
   },
+  'GET /api/my/calendar-link': { who: ['patient'], none: 'one’s own calendar alone' },
   'POST /api/my/calendar-link': { who: ['patient'], none: 'one’s own calendar alone' },
   'GET /api/calendar/:token.ics': { who: 'anyone', none: 'the token decides' },
   'GET /api/my/message-preferences': { who: ['patient'], none: 'one’s own wishes alone' },

@@ -36,6 +36,7 @@ const held = (given: Partial<AppointmentItem> = {}): AppointmentItem => ({
   localDate: '2026-12-07',
   monitored: true,
   price: null,
+  charge: null,
   cancelledReason: null,
   site: { id: id(2), name: 'Quayside', timeZone: zone, phone: '555-0100' },
   ...given,

@@ -58,6 +58,15 @@ function isDayFull(localDate: string, { appointments, dailyLimit }: Own): boolea
   return held.length >= dailyLimit;
 }
 
+/** What the patient still owes or has paid for a place in this class that they cancelled late; it pays for another. */
+export function standingCharge(date: ClassDate, { appointments }: Own): AppointmentItem['charge'] {
+  const given = appointments.find(
+    ({ classDateId, status, charge }) =>
+      classDateId === date.id && status === 'cancelled' && charge !== null,
+  );
+  return given?.charge ?? null;
+}
+
 /** Whether this patient can take a place in this class now, as far as this page can tell. */
 export function isBookable(date: ClassDate, own: Own, timeZone: string, now: Date): boolean {
   const span = spanOf(date);

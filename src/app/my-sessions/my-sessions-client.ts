@@ -1,10 +1,16 @@
-import { type HttpResourceRef, httpResource } from '@angular/common/http';
+import { HttpClient, type HttpResourceRef, httpResource } from '@angular/common/http';
 import { Injectable, inject } from '@angular/core';
+import {
+  type CalendarState,
+  calendarLinkSchema,
+  calendarStateSchema,
+} from '@shared/contracts/calendar-contract';
 import { patientSchema } from '@shared/contracts/patients-contract';
 import {
   type AppointmentItem,
   appointmentsResponseSchema,
 } from '@shared/contracts/schedule-contract';
+import { firstValueFrom } from 'rxjs';
 import type * as z from 'zod';
 import { Session } from '../core/session';
 
@@ -16,6 +22,7 @@ type OwnRecord = z.infer<typeof ownRecordSchema>;
 @Injectable({ providedIn: 'root' })
 export class MySessionsClient {
   readonly #session = inject(Session);
+  readonly #http = inject(HttpClient);
 
   /** Earliest first. @param from local date, inclusive */
   appointments(from: () => string): HttpResourceRef<readonly AppointmentItem[] | undefined> {
@@ -23,6 +30,18 @@ export class MySessionsClient {
       () => ({ url: '/api/appointments', params: { from: from(), limit: 100 } }),
       { parse: (body) => appointmentsResponseSchema.parse(body).items },
     );
+  }
+
+  calendar(): HttpResourceRef<CalendarState | undefined> {
+    return httpResource(() => '/api/my/calendar-link', {
+      parse: (body) => calendarStateSchema.parse(body),
+    });
+  }
+
+  /** Makes the address of the own calendar, and ends the former. */
+  async renewCalendar(): Promise<string> {
+    const answer = await firstValueFrom(this.#http.post<unknown>('/api/my/calendar-link', null));
+    return calendarLinkSchema.parse(answer).url;
   }
 
   record(): HttpResourceRef<OwnRecord | undefined> {

@@ -1,5 +1,5 @@
 import { TestBed } from '@angular/core/testing';
-import type { ClassDate } from '@shared/contracts/schedule-contract';
+import type { AppointmentItem, ClassDate } from '@shared/contracts/schedule-contract';
 import { ClassChoice } from './class-choice';
 
 const day = new Date(Date.now() + 5 * 86_400_000).toISOString().slice(0, 10);
@@ -23,10 +23,10 @@ const classDate = (given: Partial<ClassDate>): ClassDate => ({
 });
 
 describe('ClassChoice', () => {
-  function rows(dates: ClassDate[]): HTMLElement[] {
+  function rows(dates: ClassDate[], appointments: Partial<AppointmentItem>[] = []): HTMLElement[] {
     const fixture = TestBed.createComponent(ClassChoice);
     fixture.componentRef.setInput('dates', dates);
-    fixture.componentRef.setInput('own', { appointments: [], monitored: true });
+    fixture.componentRef.setInput('own', { appointments, monitored: true });
     fixture.componentRef.setInput('timeZone', 'America/New_York');
     fixture.detectChanges();
     return [...(fixture.nativeElement as HTMLElement).querySelectorAll('li')];
@@ -42,6 +42,20 @@ describe('ClassChoice', () => {
     const button = row?.querySelector('button');
     expect(button?.textContent.trim()).toBe('Book for $18.00');
     expect(button?.getAttribute('aria-label')).toContain('you pay $18.00');
+  });
+
+  it.each([
+    [false, 'You pay the $18.00 that you owe already'],
+    [true, 'You paid $18.00 already'],
+  ])('asks for nothing more after a late cancellation (paid: %s)', (paid, told) => {
+    const price = { name: 'Class', amountMinor: 1800, currency: 'USD' };
+    const charge = { amountMinor: 1800, currency: 'USD', paid };
+    const [row] = rows(
+      [classDate({ price })],
+      [{ classDateId: 'one', status: 'cancelled', charge }],
+    );
+    expect(words(row)).toContain(told);
+    expect(row?.querySelector('button')?.textContent.trim()).toBe('Book');
   });
 
   it('says why a class can’t be booked', () => {

@@ -5,7 +5,7 @@ import { formatMoney } from '@shared/units/money';
 import type { Problem } from '../../core/problem';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { dateInWords, spanOf } from '../../ui/site-time/site-time';
-import { type Own, isBookable, ownIn, placesLeft } from '../bookable-days';
+import { type Own, isBookable, ownIn, placesLeft, standingCharge } from '../bookable-days';
 
 /** A class that could not be booked, and why. */
 export interface Refused {
@@ -40,7 +40,7 @@ export class ClassChoice {
         date,
         day: dateInWords(date.localDate, 'long'),
         span: spanOf(date, this.timeZone()),
-        price: date.price && formatMoney(date.price.amountMinor, date.price.currency),
+        ...this.#cost(date),
         bookable: isBookable(date, this.own(), this.timeZone(), now),
         why: this.#whyNot(date, left, now),
         problem: this.refused()?.classDateId === date.id ? (this.refused()?.problem ?? null) : null,
@@ -48,6 +48,20 @@ export class ClassChoice {
       };
     });
   });
+
+  /** What is to be paid, and what was charged already for a place here that was cancelled late. */
+  #cost(date: ClassDate): { readonly price: string | null; readonly charged: string | null } {
+    const standing = standingCharge(date, this.own());
+    const price = date.price && formatMoney(date.price.amountMinor, date.price.currency);
+    if (standing === null || price === null) return { price, charged: null };
+    const amount = formatMoney(standing.amountMinor, standing.currency);
+    return {
+      price: null,
+      charged: standing.paid
+        ? `You paid ${amount} already`
+        : `You pay the ${amount} that you owe already`,
+    };
+  }
 
   #whyNot(date: ClassDate, left: number, now: Date): string {
     if (ownIn(date, this.own())) return 'This one is yours';

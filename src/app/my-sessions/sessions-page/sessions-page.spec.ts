@@ -22,15 +22,19 @@ const session = (number: number, days: number, given: object = {}) => ({
   localDate: inDays(days).slice(0, 10),
   monitored: true,
   price: null,
+  charge: null,
   cancelledReason: null,
   site: { id: id(8), name: 'Quayside', timeZone: 'UTC', phone: '555-0100' },
   ...given,
 });
 
+const charge = { amountMinor: 1800, currency: 'USD', paid: false };
+
 describe('SessionsPage', () => {
   let fixture: ComponentFixture<SessionsPage>;
   let server: HttpTestingController;
   let undo: (() => void) | undefined;
+  let said: string[];
 
   const page = () => fixture.nativeElement as HTMLElement;
   const words = () => page().textContent.replace(/\s+/g, ' ');
@@ -43,6 +47,9 @@ describe('SessionsPage', () => {
   async function answer(items: object[]): Promise<void> {
     server.expectOne(({ url }) => url === '/api/appointments').flush({ items, nextCursor: null });
     await settle();
+    // The block for the calendar comes with the list.
+    for (const call of server.match('/api/my/calendar-link')) call.flush({ madeAt: null });
+    await settle();
   }
 
   async function press(text: string): Promise<void> {
@@ -52,6 +59,7 @@ describe('SessionsPage', () => {
   }
 
   beforeEach(async () => {
+    said = [];
     TestBed.configureTestingModule({
       providers: [
         provideRouter([]),
@@ -60,7 +68,12 @@ describe('SessionsPage', () => {
         {
           provide: Notices,
           useValue: {
-            offerUndo: (_: string, back: () => void) => {
+            say: (words: string) => {
+              said.push(words);
+              return Promise.resolve();
+            },
+            offerUndo: (words: string, back: () => void) => {
+              said.push(words);
               undo = back;
               return Promise.resolve();
             },
@@ -79,35 +92,85 @@ describe('SessionsPage', () => {
   });
 
   it('shows the next session first, and what it costs', async () => {
-    const price = { name: 'Class', amountMinor: 1800, currency: 'USD' };
     await answer([
       session(1, -0.1),
       session(2, 1, { status: 'cancelled' }),
       session(3, 2),
-      session(4, 3, { price }),
+      session(4, 3, { charge }),
     ]);
     const [next, ...later] = page().querySelectorAll('app-session-card');
     expect(next?.textContent).toContain('Class 3');
     expect(later.map((card) => card.textContent)).toEqual([expect.stringContaining('Class 4')]);
-    expect(words()).toContain('You pay $18.00 for this class.');
+    expect(words()).toContain('You pay $18.00. You can cancel for free until');
+    expect(words()).toContain('cancel at least 24 hours before it starts. After that, you still');
     expect(words()).not.toContain('Class 2');
   });
 
-  it('says what a late cancellation is before it is one', async () => {
-    await answer([session(3, 0.5)]);
+  it('says what a late cancellation costs before it is one', async () => {
+    await answer([session(3, 0.5, { charge })]);
     await press('Cancel');
-    expect(words()).toContain('It is less than 24 hours before the class.');
+    expect(words()).toContain('If you cancel now, you still pay $18.00.');
     await press('Keep it');
-    expect(words()).not.toContain('It is less than 24 hours before the class.');
+    expect(words()).not.toContain('If you cancel now');
+    await press('Cancel');
+    await press('Yes, cancel it');
+    const request = server.expectOne(`/api/appointments/${id(3)}`);
+    expect(request.request.body).toEqual({ status: 'cancelled', version: 1, acceptsLate: true });
+    request.flush({ ...session(3, 0.5), status: 'cancelled', version: 2 });
+    await settle();
+    await answer([]);
+    expect(said[0]).toMatch(/You still pay \$18.00.$/);
+  });
+
+  it('asks anew when the last free moment passes while one reads', async () => {
+    await answer([session(3, 1.0001, { charge })]);
+    await press('Cancel');
+    expect(words()).toContain('Cancelling is free: you will not pay the $18.00.');
+    await press('Yes, cancel it');
+    const title = 'It is now too late to cancel for free. Read what it costs, then decide again.';
+    const problem = {
+      type: '',
+      title,
+      status: 409,
+      code: 'late-cancellation',
+      id: 'x',
+      errors: [],
+    };
+    const request = server.expectOne(`/api/appointments/${id(3)}`);
+    expect(request.request.body).toMatchObject({ acceptsLate: false });
+    request.flush(problem, { status: 409, statusText: 'Conflict' });
+    await settle();
+    await answer([session(3, 0.9999, { charge })]);
+    expect(words()).toContain(title);
+    await press('Cancel');
+    expect(words()).toContain('If you cancel now, you still pay $18.00.');
+  });
+
+  it('says that a payment on its way back does not pay for the place taken again', async () => {
+    await answer([session(3, 2, { charge: { ...charge, paid: true } })]);
+    await press('Cancel');
+    expect(words()).toContain('you get your $18.00 back');
+    await press('Yes, cancel it');
+    server
+      .expectOne(`/api/appointments/${id(3)}`)
+      .flush({ ...session(3, 2), status: 'cancelled', version: 2 });
+    await settle();
+    await answer([]);
+    undo?.();
+    await settle();
+    server.expectOne('/api/appointments').flush(session(4, 2));
+    await settle();
+    await answer([session(4, 2, { charge })]);
+    expect(said[1]).toContain('please pay anew under Payments');
   });
 
   it('cancels, and books again when it is taken back', async () => {
     await answer([session(3, 2)]);
     await press('Cancel');
-    expect(words()).toContain('Your place will be free for someone else.');
+    expect(words()).toContain('Cancelling costs you nothing.');
     await press('Yes, cancel it');
     const request = server.expectOne(`/api/appointments/${id(3)}`);
-    expect(request.request.body).toEqual({ status: 'cancelled', version: 1 });
+    expect(request.request.body).toEqual({ status: 'cancelled', version: 1, acceptsLate: false });
     request.flush({ ...session(3, 2), status: 'cancelled', version: 2 });
     await settle();
     await answer([]);
