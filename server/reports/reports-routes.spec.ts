@@ -56,6 +56,31 @@ describe('the routes of reports', () => {
     );
   });
 
+  it('keep back what would tell of a few people in a file for sharing outside', async () => {
+    const reply = await readCompletionCsv(world.director, { sharing: 'outside', groupBy: 'sex' });
+    expect(reply.headers['content-disposition']).toBe(
+      'attachment; filename="completion-shared.csv"',
+    );
+    const [, , note, columns, ...rows] = reply.text.split('\r\n');
+    expect(note).toContain('counts of 1 to 10 people and what would give them away read');
+    expect(columns).toMatch(/^Group,Started/);
+    for (const row of rows.slice(0, -1)) {
+      expect(row).toMatch(/^[^,]+,suppressed,suppressed,0(,suppressed){5}$/);
+    }
+    const details = (await audited('report.exported')).map(({ details: one }) => one);
+    expect(details.at(-1)).toEqual({ sharing: 'outside' });
+    const world11 = await buildReportsWorld();
+    for (let each = 0; each < 11; each += 1) {
+      await world11.addCourse({
+        visits: visitsFrom('2025-02-03', 1),
+        enrollment: { plannedSessions: 1 },
+      });
+    }
+    const large = await readCompletionCsv(world11.director, { sharing: 'outside' });
+    expect(large.text).toMatch(/\r\nAll,11,11,0,1,/);
+    await world11.close();
+  });
+
   it('record each patient whose name a list showed', async () => {
     const { items } = await readBehind(world.director, { part: 'completed', limit: '100' });
     expect(items).toHaveLength(6);

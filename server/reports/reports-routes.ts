@@ -1,5 +1,6 @@
 import * as z from 'zod';
 import {
+  completionFileQuerySchema,
   completionPatientsQuerySchema,
   completionPatientsSchema,
   completionQuerySchema,
@@ -56,14 +57,21 @@ const completion = route({
 const completionFile = route({
   method: 'get',
   path: '/api/reports/completion.csv',
-  summary: 'The same as comma-separated values',
+  summary: 'The same as comma-separated values, for inside the program or for sharing outside',
   access: { roles: reportRoles },
-  audit: { action: 'report.exported', objectType: 'report', objectId: () => 'completion' },
-  request: { query: completionQuerySchema },
+  audit: {
+    action: 'report.exported',
+    objectType: 'report',
+    objectId: () => 'completion',
+    details: ({ input }) => ({ sharing: input.query.sharing }),
+  },
+  request: { query: completionFileQuerySchema },
   response: { 200: textAnswer('text/csv; charset=utf-8') },
   handler: async ({ actor, context, input: { query } }) => {
-    const headers = { 'Content-Disposition': 'attachment; filename="completion.csv"' };
-    return { ...ok(completionCsv(await report(context, actor, query), query)), headers };
+    const { sharing, ...asked } = query;
+    const name = sharing === 'outside' ? 'completion-shared.csv' : 'completion.csv';
+    const headers = { 'Content-Disposition': `attachment; filename="${name}"` };
+    return { ...ok(completionCsv(await report(context, actor, asked), query)), headers };
   },
 });
 

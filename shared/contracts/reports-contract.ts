@@ -47,6 +47,20 @@ export const completionQuerySchema = z
   .refine(inOrder, orderFault);
 export type CompletionQuery = z.infer<typeof completionQuerySchema>;
 
+/** What a file is for: `outside` keeps back counts of 1 to 10 people, and what would give them away. */
+export const sharings = ['inside', 'outside'] as const;
+export type Sharing = (typeof sharings)[number];
+
+/** The same, and who the file is for. */
+export const completionFileQuerySchema = z
+  .strictObject({
+    ...span,
+    groupBy: z.enum(completionGroupings).default('none'),
+    ...filters,
+    sharing: z.enum(sharings).default('inside'),
+  })
+  .refine(inOrder, orderFault);
+
 /** The same, and which row and which of its counts to open. */
 export const completionPatientsQuerySchema = z
   .strictObject({
