@@ -5,6 +5,8 @@ import { defaultPolicy } from '@shared/clinical/prescribing';
 import type { RosterItem } from '@shared/contracts/floor-contract';
 import type { ClassDate } from '@shared/contracts/schedule-contract';
 import { signIn, type Caller } from './caller';
+import { timeCompletion } from './completion';
+import { COURSES, fillLargeNetwork } from './large-network';
 import { measure, startBare, type Figure, type Load } from './load';
 import { startProduct, type Product } from './product';
 import { startRecorder } from './recorder';
@@ -191,6 +193,7 @@ async function storedRequest(nurse: Caller): Promise<PrescriptionRequest> {
 }
 
 async function bench(product: Product): Promise<void> {
+  if (COURSES > 0) await fillLargeNetwork(product.ownerUrl);
   const nurse = await signIn(product.url, 'nurse');
   const desk = await signIn(product.url, 'frontdesk');
   const request = await storedRequest(nurse);
@@ -214,6 +217,7 @@ async function bench(product: Product): Promise<void> {
   console.log(
     `${'evaluate, the function alone'.padEnd(40)} ${shown(evaluationsPerSecond(request))}`,
   );
+  await timeCompletion(await signIn(product.url, 'director'));
 }
 
 const product = await startProduct();

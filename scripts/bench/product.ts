@@ -5,7 +5,7 @@ import { fileURLToPath } from 'node:url';
 import { findFreePort } from '../ports.mjs';
 import { placeCluster } from '../postgres/placement.mjs';
 import { databaseUrl } from '../postgres/psql.mjs';
-import { APP_ROLE } from '../postgres/roles.mjs';
+import { APP_ROLE, OWNER_ROLE } from '../postgres/roles.mjs';
 import { ensureSecrets, type Secrets } from '../setup/secrets.mjs';
 
 const root = fileURLToPath(new URL('../..', import.meta.url));
@@ -15,6 +15,8 @@ export interface Product {
   readonly url: string;
   /** As the server signs in. */
   readonly databaseUrl: string;
+  /** As the migrations sign in. */
+  readonly ownerUrl: string;
   readonly secrets: Secrets;
   readonly stop: () => Promise<void>;
 }
@@ -37,16 +39,13 @@ export async function startProduct(): Promise<Product> {
   });
   await ready;
   const secrets = ensureSecrets(folder);
-  const password = secrets['database-app'];
   const { port: databasePort } = placeCluster(folder);
+  const as = (user: string, password: string) =>
+    databaseUrl({ user, password, port: databasePort, database: 'plimsoll' });
   return {
     url: `http://127.0.0.1:${port}`,
-    databaseUrl: databaseUrl({
-      user: APP_ROLE,
-      password,
-      port: databasePort,
-      database: 'plimsoll',
-    }),
+    databaseUrl: as(APP_ROLE, secrets['database-app']),
+    ownerUrl: as(OWNER_ROLE, secrets['database-owner']),
     secrets,
     stop: async () => {
       child.kill('SIGTERM');

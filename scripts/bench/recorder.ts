@@ -50,15 +50,20 @@ export interface Recorder {
 /** The server in this process, its connections watched: a bare handler then runs the very same SQL. */
 export async function startRecorder(product: Product): Promise<Recorder> {
   const heard: Statement[] = [];
-  // eslint-disable-next-line @typescript-eslint/unbound-method -- called with its own `this` below
-  const original = pg.Client.prototype.query;
-  pg.Client.prototype.query = function (this: pg.Client, ...given: unknown[]) {
-    const [first, second] = given;
-    const config = (typeof first === 'string' ? { text: first } : first) as Partial<Statement>;
-    const values = Array.isArray(second) ? (second as unknown[]) : (config.values ?? []);
-    heard.push({ text: config.text ?? '', values });
-    return Reflect.apply(original, this, given) as never;
-  };
+  const { prototype } = pg.Client;
+  const original = Object.getOwnPropertyDescriptor(prototype, 'query');
+  if (!original) throw new Error('pg.Client has no query to listen to');
+  const query = original.value as (...given: unknown[]) => unknown;
+  Object.defineProperty(prototype, 'query', {
+    ...original,
+    value(...given: unknown[]) {
+      const [first, second] = given;
+      const config = (typeof first === 'string' ? { text: first } : first) as Partial<Statement>;
+      const values = Array.isArray(second) ? (second as unknown[]) : (config.values ?? []);
+      heard.push({ text: config.text ?? '', values });
+      return Reflect.apply(query, this, given);
+    },
+  });
   const context = contextOf(product);
   const server = createServer(createApp(context, featureRoutes(context)));
   await new Promise<void>((resolve) => server.listen(0, '127.0.0.1', resolve));
@@ -71,7 +76,7 @@ export async function startRecorder(product: Product): Promise<Recorder> {
       return heard.filter(({ text }) => !house.test(text));
     },
     close: async () => {
-      pg.Client.prototype.query = original;
+      Object.defineProperty(prototype, 'query', original);
       server.close();
       await context.database.$client.end();
     },

@@ -3,10 +3,8 @@ import './zod';
 
 // Fields that requests share. PostgreSQL's text holds no NUL, and no field of one line needs a control character.
 
-/* eslint-disable-next-line no-control-regex -- to refuse them */
-const oneLine = /^[^\u0000-\u001f\u007f]*$/;
-/* eslint-disable-next-line no-control-regex -- to refuse them */
-const severalLines = /^[^\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f]*$/;
+const oneLine = /^\P{Cc}*$/u;
+const severalLines = /^[\P{Cc}\t\n\r]*$/u;
 
 /** One line of text, its ends trimmed, with at least one character. */
 export const textField = (maximum: number, empty = 'Fill this in') =>
