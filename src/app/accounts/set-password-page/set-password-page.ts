@@ -1,72 +1,37 @@
 import { ChangeDetectionStrategy, Component, inject, signal } from '@angular/core';
 import { NonNullableFormBuilder, ReactiveFormsModule } from '@angular/forms';
 import { MatButton } from '@angular/material/button';
-import { MatError, MatFormField, MatHint, MatLabel } from '@angular/material/form-field';
-import { MatInput } from '@angular/material/input';
-import { ActivatedRoute, Router, RouterLink } from '@angular/router';
-import { newPasswordSchema, passwordLength } from '@shared/contracts/accounts-contract';
+import { RouterLink } from '@angular/router';
+import { newPasswordSchema } from '@shared/contracts/accounts-contract';
 import { firstValueFrom } from 'rxjs';
-import { type Problem, toProblem } from '../../core/problem';
-import { FieldError } from '../../ui/field-error/field-error';
-import { showFieldErrors, zodValidator } from '../../ui/field-error/zod-validator';
+import { zodValidator } from '../../ui/field-error/zod-validator';
+import { FormSending } from '../../ui/form-sending/form-sending';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { AccountsClient } from '../accounts-client';
+import { takeLinkToken } from '../link-token';
+import { NewPasswordField } from '../new-password-field/new-password-field';
 
 /** Where reset and invitation links lead: a new password against the link's token. */
 @Component({
   selector: 'app-set-password-page',
-  imports: [
-    FieldError,
-    MatButton,
-    MatError,
-    MatFormField,
-    MatHint,
-    MatInput,
-    MatLabel,
-    ProblemMessage,
-    ReactiveFormsModule,
-    RouterLink,
-  ],
+  imports: [MatButton, NewPasswordField, ProblemMessage, ReactiveFormsModule, RouterLink],
   templateUrl: './set-password-page.html',
-  styleUrls: ['../account-page.scss', './set-password-page.scss'],
+  styleUrl: '../account-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
 })
 export class SetPasswordPage {
   readonly #client = inject(AccountsClient);
-  readonly #route = inject(ActivatedRoute);
-  readonly #router = inject(Router);
-  readonly #token = new URLSearchParams(this.#route.snapshot.fragment ?? '').get('token');
 
-  protected readonly linkIsWhole = this.#token !== null;
-  protected readonly length = passwordLength;
+  protected readonly token = takeLinkToken();
   protected readonly form = inject(NonNullableFormBuilder).group({
     password: ['', zodValidator(newPasswordSchema)],
   });
-  protected readonly shown = signal(false);
-  protected readonly sending = signal(false);
+  protected readonly sending = new FormSending(this.form);
   protected readonly done = signal(false);
-  protected readonly problem = signal<Problem | null>(null);
 
-  constructor() {
-    // The token leaves the address bar and the history at once.
-    if (this.linkIsWhole) void this.#router.navigate([], { replaceUrl: true });
-  }
-
-  protected async save(): Promise<void> {
-    this.form.markAllAsTouched();
-    if (this.form.invalid || this.sending() || this.#token === null) return;
-    this.sending.set(true);
-    this.problem.set(null);
-    try {
-      const { password } = this.form.getRawValue();
-      await firstValueFrom(this.#client.setPassword({ token: this.#token, password }));
-      this.done.set(true);
-    } catch (error) {
-      const problem = toProblem(error);
-      showFieldErrors(this.form, problem.errors);
-      this.problem.set(problem);
-    } finally {
-      this.sending.set(false);
-    }
+  protected async save(token: string): Promise<void> {
+    const { password } = this.form.getRawValue();
+    const call = () => firstValueFrom(this.#client.setPassword({ token, password }));
+    if (await this.sending.send(call)) this.done.set(true);
   }
 }

@@ -1,4 +1,4 @@
-import { ChangeDetectionStrategy, Component, inject, signal } from '@angular/core';
+import { ChangeDetectionStrategy, Component, DestroyRef, inject, signal } from '@angular/core';
 import { MatButton } from '@angular/material/button';
 import { MatFormField, MatLabel } from '@angular/material/form-field';
 import { MatOption, MatSelect } from '@angular/material/select';
@@ -6,6 +6,7 @@ import { RouterLink } from '@angular/router';
 import type { Charge } from '@shared/contracts/billing-contract';
 import { firstValueFrom } from 'rxjs';
 import { LEAVE } from '../../core/leave';
+import { PagedList } from '../../core/paged-list';
 import { type Problem, toProblem } from '../../core/problem';
 import { Session } from '../../core/session';
 import { amountOf, classTime, dayOf, stateOf } from '../../ui/charge/charge-words';
@@ -15,7 +16,6 @@ import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { Skeleton } from '../../ui/skeleton/skeleton';
 import { StateChip } from '../../ui/state-chip/state-chip';
 import { BillingClient } from '../billing-client';
-import { PagedList } from '../paged-list';
 
 /** Every charge of the reader's sites, what is owed first asked for. */
 @Component({
@@ -43,8 +43,9 @@ export class ChargesPage {
 
   protected readonly takesPayments = inject(Session).roles().includes('front-desk');
   protected readonly status = signal<Charge['status'] | null>('open');
-  protected readonly list = new PagedList((cursor) =>
-    this.#client.charges({ status: this.status(), cursor }),
+  protected readonly list = new PagedList(
+    (cursor) => this.#client.charges({ status: this.status(), cursor }),
+    inject(DestroyRef),
   );
   protected readonly paying = signal<string | null>(null);
   protected readonly payProblem = signal<Problem | null>(null);
@@ -62,12 +63,12 @@ export class ChargesPage {
   protected readonly stateOf = stateOf;
 
   constructor() {
-    void this.list.begin();
+    this.list.load();
   }
 
   protected choose(status: Charge['status'] | null): void {
     this.status.set(status);
-    void this.list.begin();
+    this.list.restart();
   }
 
   protected async takePayment(charge: Charge): Promise<void> {

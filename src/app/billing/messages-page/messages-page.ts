@@ -1,13 +1,13 @@
-import { ChangeDetectionStrategy, Component, inject } from '@angular/core';
+import { ChangeDetectionStrategy, Component, DestroyRef, inject } from '@angular/core';
 import { MatButton } from '@angular/material/button';
 import { RouterLink } from '@angular/router';
 import type { Undelivered } from '@shared/contracts/messages-contract';
+import { PagedList } from '../../core/paged-list';
 import { EmptyState } from '../../ui/empty-state/empty-state';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { Skeleton } from '../../ui/skeleton/skeleton';
 import { BillingClient } from '../billing-client';
-import { PagedList } from '../paged-list';
 
 const kinds: Readonly<Record<Undelivered['kind'], string>> = {
   'booking-confirmation': 'Booking confirmed',
@@ -37,12 +37,15 @@ const reasons: Readonly<Record<Undelivered['reason'], string>> = {
 export class MessagesPage {
   readonly #client = inject(BillingClient);
 
-  protected readonly list = new PagedList((cursor) => this.#client.undelivered(cursor));
+  protected readonly list = new PagedList(
+    (cursor) => this.#client.undelivered(cursor),
+    inject(DestroyRef),
+  );
   protected readonly kinds = kinds;
   protected readonly reasons = reasons;
 
   constructor() {
-    void this.list.begin();
+    this.list.load();
   }
 
   protected timeOf({ dueAt }: Undelivered): string {
