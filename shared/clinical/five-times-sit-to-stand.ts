@@ -27,9 +27,11 @@ export const standMarks = { recurrentFalls: 15, disability: 13.6, importantChang
 /**
  * Chair-stand points of the Short Physical Performance Battery: 4 to 11.19 s, 3 to 13.69, 2 to 16.69, 1 to 60, else 0.
  * @param time s; null when the patient could not do five stands
+ * @param ending its clock stops at the fifth standing: a time to the fifth sitting is longer, and gives no points
  * @see from memory; the same score shown in PMC7170430
  */
-export function chairStandPoints(time: Seconds | null): number {
+export function chairStandPoints(time: Seconds | null, ending: StandEnding): number | null {
+  if (ending === 'seated-fifth-time') return null;
   if (time === null || time > 60) return 0;
   if (time <= 11.19) return 4;
   if (time <= 13.69) return 3;

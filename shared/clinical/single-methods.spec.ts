@@ -98,9 +98,11 @@ describe('five stands', () => {
   it('are judged only where an average is', () => {
     expect(isWorseThanAverage(seconds(20), 55)).toBeNull();
     expect(isWorseThanAverage(seconds(11.4), 65)).toBe(false);
-    expect([null, seconds(60.1), seconds(60), seconds(13.69)].map(chairStandPoints)).toEqual([
-      0, 0, 1, 3,
-    ]);
+    const points = [null, seconds(60.1), seconds(60), seconds(13.69)].map((time) =>
+      chairStandPoints(time, 'standing-fifth-time'),
+    );
+    expect(points).toEqual([0, 0, 1, 3]);
+    expect(chairStandPoints(seconds(10), 'seated-fifth-time')).toBeNull();
   });
 });
 

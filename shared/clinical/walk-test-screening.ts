@@ -38,7 +38,7 @@ export interface WalkScreening {
   readonly why: readonly string[];
 }
 
-/** What a resting reading speaks against; null where it is missing or the standard asks nothing. */
+/** Whether a reading is there, asked for, and above its limit. */
 const exceeds = (value: number | null | undefined, limit: number | null): boolean =>
   value !== null && value !== undefined && limit !== null && value > limit;
 

@@ -66,7 +66,10 @@ export const scoreComputations: readonly (readonly [RegExp, Compute])[] = [
   [/^RX-JOO-1$/, () => observedDoseOfGuides['resting-plus-20'].mean],
   [/^RX-JOO-2$/, () => observedDoseOfGuides['perceived-exertion-11-13'].mean],
   [/^PHQ9-MISS$/, (vector) => prorateTotal(input(vector, 'sum'), input(vector, 'answered'))],
-  [/^STS-\d/, (vector) => chairStandPoints(seconds(input(vector, 'time')))],
+  [
+    /^STS-\d/,
+    (vector) => chairStandPoints(seconds(input(vector, 'time')), 'standing-fifth-time') ?? NaN,
+  ],
   [/^DASI-(MAX|720)$/, dasi],
   [/^DASI-(0|720V)$/, (vector) => peakVo2OfDasi(input(vector, 'dasi'))],
   [/^RPP-2$/, product],

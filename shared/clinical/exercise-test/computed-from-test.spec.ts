@@ -43,6 +43,7 @@ describe('what a test comes to', () => {
       'peak-foster',
       'peak-friend',
       ...[1, 2, 3, 4, 5, 6].map((index) => `time-${index}`),
+      'heart-rate-index',
       'percent-of-predicted',
       'recovery-1',
       'recovery-2',
@@ -70,6 +71,9 @@ describe('what a test comes to', () => {
     ['percent-of-predicted', 'height', { mode: 'cycle', height: null }],
     ['stage-work', 'weight', { mode: 'cycle', lastPower: watts(100), weight: null }],
     ['recovery-1', 'peak', { peakHeartRate: null }],
+    ['heart-rate-index', 'peak', { peakHeartRate: null }],
+    ['heart-rate-index', 'beta blocker', { onBetaBlocker: null }],
+    ['heart-rate-index', 'beta blocker', { onBetaBlocker: true }],
     ['chronotropic-index', 'resting', { restingHeartRate: null }],
     ['rate-pressure-product', 'systolic', { peakSystolic: null }],
   ])('%s is not made up: %s', (key, why, changes) => {

@@ -1,6 +1,7 @@
 import type { Vo2 } from '../../units';
 import { metsOf, speedOfMph } from '../../units';
 import { equationSource, handrailNote } from '../gait';
+import { metsOfHeartRateIndex } from '../heart-rate-index';
 import { armCyclingPowerInRange, armCyclingVo2 } from '../metabolic-equations';
 import type { ComputedValue, RecordedTest } from './recorded-test';
 import { found, notFound } from './recorded-test';
@@ -107,6 +108,26 @@ function timeValues({ protocol, sexAtBirth, time, handrail }: RecordedTest): Com
   );
 }
 
+const indexPart = {
+  key: 'heart-rate-index',
+  label: 'Peak from the heart-rate index',
+  unit: 'METs',
+  source: 'Wicks et al. Med Sci Sports Exerc 2011;43:2005–2012; from memory',
+} as const;
+
+function indexValue({
+  peakHeartRate,
+  restingHeartRate,
+  onBetaBlocker,
+}: RecordedTest): ComputedValue {
+  if (peakHeartRate === null || restingHeartRate === null) {
+    return notFound(indexPart, 'The resting or the peak rate is not recorded.');
+  }
+  return onBetaBlocker === false
+    ? found(indexPart, metsOfHeartRateIndex(peakHeartRate, restingHeartRate))
+    : notFound(indexPart, 'Not on a beta blocker, nor when it is not known.');
+}
+
 /** The peak on which a comparison rests: measured, else corrected from the last treadmill stage, else of the ergometer. */
 export function peakOfTest(test: RecordedTest): { readonly vo2: Vo2; readonly how: string } | null {
   if (test.measuredVo2 !== null) return { vo2: test.measuredVo2, how: 'measured' };
@@ -123,4 +144,5 @@ export const workOfTest = (test: RecordedTest): ComputedValue[] => [
   stageWork(test),
   ...(test.mode === 'treadmill' ? [fosterValue(test), kokkinosValue(test)] : []),
   ...timeValues(test),
+  indexValue(test),
 ];

@@ -1,3 +1,4 @@
+import { max, median } from 'simple-statistics';
 import type { PrescriptionAnswer } from '../prescribing/answer';
 import type { HeartRateRange } from '../prescribing/request';
 import type { ProgressionPolicy } from './progression-policy';
@@ -25,15 +26,9 @@ export interface SessionReport {
   readonly highestEffort: number | null;
 }
 
-function median(values: readonly number[]): number | null {
-  const sorted = [...values].sort((a, b) => a - b);
-  const upper = sorted[Math.floor(sorted.length / 2)];
-  const lower = sorted[Math.floor((sorted.length - 1) / 2)];
-  return upper === undefined || lower === undefined ? null : (upper + lower) / 2;
-}
-
-const highest = (values: readonly number[]): number | null =>
-  values.length === 0 ? null : Math.max(...values);
+/** A statistic of what was read; null when nothing was. */
+const ifAny = (of: (values: number[]) => number, values: number[]): number | null =>
+  values.length === 0 ? null : of(values);
 
 const present = (values: readonly (number | null)[]): number[] =>
   values.filter((value): value is number => value !== null);
@@ -108,7 +103,7 @@ export function readSession(
   const efforts = present(exercise.map(({ perceivedExertion }) => perceivedExertion));
   const upperRate = targetFor(session, answer)?.upper;
   const upperEffort = answer.perceivedExertion.upper;
-  const [medianRate, medianEffort] = [median(rates), median(efforts)];
+  const [medianRate, medianEffort] = [ifAny(median, rates), ifAny(median, efforts)];
   const isRecorded =
     efforts.length > 0 && (!needsRates(answer) || rates.length >= policy.leastReadings);
   return {
@@ -122,8 +117,8 @@ export function readSession(
         symptomsOf(session).some((symptom) => minorSymptoms.has(symptom)),
         'minor-symptom',
       ),
-      ...when<ProgressionReasonCode>(isAbove(highest(rates), upperRate), 'one-rate-above'),
-      ...when<ProgressionReasonCode>(isAbove(highest(efforts), upperEffort), 'one-effort-above'),
+      ...when<ProgressionReasonCode>(isAbove(ifAny(max, rates), upperRate), 'one-rate-above'),
+      ...when<ProgressionReasonCode>(isAbove(ifAny(max, efforts), upperEffort), 'one-effort-above'),
       ...when<ProgressionReasonCode>(!isRecorded, 'not-recorded'),
       ...when<ProgressionReasonCode>(
         session.readings.every(({ symptoms }) => symptoms.length === 0),
@@ -132,7 +127,7 @@ export function readSession(
       ...when<ProgressionReasonCode>(session.doseMissed, 'dose-missed'),
     ],
     medianRate,
-    highestRate: highest(rates),
-    highestEffort: highest(efforts),
+    highestRate: ifAny(max, rates),
+    highestEffort: ifAny(max, efforts),
   };
 }

@@ -96,4 +96,3 @@ export const questionnaires = {
     source: dasiSource,
   },
 } as const satisfies Readonly<Record<string, Questionnaire>>;
-export type QuestionnaireKey = keyof typeof questionnaires;

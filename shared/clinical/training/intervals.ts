@@ -143,7 +143,7 @@ const recoveryOf = (basis: IntervalBasis, fraction: number): Mets | null =>
   workOf(basis, { lower: 0, upper: fraction })?.upper ?? null;
 
 function signatures(
-  { request, answer }: IntervalBasis,
+  { request, answer, policy: basisPolicy }: IntervalBasis,
   plan: IntervalPlan,
   policy: IntervalPolicy,
 ): string[] {
@@ -154,6 +154,7 @@ function signatures(
     ],
     [request.risk === 'high' || request.risk === 'unknown', 'the risk is high or not known'],
     [request.conditions.transplant === 'denervated', 'a transplanted heart'],
+    [acceptedPeak(request.test, basisPolicy) === null, 'no test to base the work on'],
     [answer.maximum !== null && answer.maximum.method !== 'measured', 'the maximum is an estimate'],
   ];
   return asked.flatMap(([isAsked, why]) => (isAsked ? [why] : []));

@@ -135,6 +135,7 @@ describe('intervals', () => {
       target: null,
       workMets: null,
       recoveryMets: null,
+      physicianSigns: ['no test to base the work on'],
     });
   });
 
