@@ -5,7 +5,6 @@ import type { Actor } from '../accounts/actor';
 import type { Transaction } from '../database/client';
 import { enrollments, patients, sites } from '../database/schema';
 import { statement } from '../database/statement';
-import type { NamePosition } from './patient-cursor';
 
 interface FoundRow {
   readonly id: string;
@@ -46,6 +45,13 @@ const statements = {
   found: statement<FoundRow>(null, pageOfPatients([matches])),
   foundAfter: statement<FoundRow>(null, pageOfPatients([matches, isAfter])),
 };
+
+/** Where a list by name goes on: after this patient. */
+export interface NamePosition {
+  readonly familyName: string;
+  readonly givenName: string;
+  readonly id: string;
+}
 
 interface Search {
   /** Words that hold nothing to search by find nobody; no words at all find everybody. */

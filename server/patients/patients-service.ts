@@ -5,16 +5,16 @@ import type {
   registerPatientRequestSchema,
 } from '@shared/contracts/patients-contract';
 import { localDateAt } from '@shared/scheduling/wall-time';
-import type * as z from 'zod';
+import * as z from 'zod';
 import type { Actor } from '../accounts/actor';
 import type { Transaction } from '../database/client';
 import { constraintOf } from '../database/transaction';
+import { decodeCursor, pageOf } from '../http/cursor';
 import { fail } from '../http/failure';
 import { rangesOf } from '../prescriptions/range-in-force-queries';
 import { fieldFailure } from './field-failure';
-import { cursorOfName, positionOfCursor, type NamePosition } from './patient-cursor';
 import { isRegistrar, mayRead, ownFields } from './patients-policy';
-import { searchPatients } from './patient-search-queries';
+import { searchPatients, type NamePosition } from './patient-search-queries';
 import { coursesOf, latestRisk, patientById } from './patients-queries';
 import { insertPatient, updatePatient } from './patients-repository';
 import { presentListItem, presentPatient } from './present-patient';
@@ -25,11 +25,14 @@ interface Search {
   readonly limit: number;
 }
 
+// PostgreSQL's text holds no NUL. Names stand in this cursor, so it travels in a body, never in an address.
+const name = z.string().regex(/^[^\0]*$/);
+const position = z.tuple([name, name, z.uuid()]);
+
 function positionOf(cursor: string | null | undefined): NamePosition | null {
   if (cursor === undefined || cursor === null) return null;
-  const position = positionOfCursor(cursor);
-  if (!position) throw fieldFailure('cursor', 'invalid', 'Start the list again');
-  return position;
+  const [familyName, givenName, id] = decodeCursor(position, cursor);
+  return { familyName, givenName, id };
 }
 
 /** The local date in a zone, worked out once a zone. */
@@ -50,20 +53,25 @@ export async function search(
   now: Date,
 ): Promise<PatientSearchResponse> {
   const found = await searchPatients(tx, actor, { q, after: positionOf(cursor), limit });
-  const page = found.slice(0, limit);
-  const last = page.at(-1);
+  const { items, nextCursor } = pageOf(found, limit, ({ familyName, givenName, id }) => [
+    familyName,
+    givenName,
+    id,
+  ]);
   const todayIn = datesIn(now);
   const readsChart = mayRead(actor, 'chart');
   const rangeOf = readsChart
     ? await rangesOf(
         tx,
-        page.map(({ id }) => id),
+        items.map(({ id }) => id),
         now,
       )
     : () => null;
   return {
-    items: page.map((item) => presentListItem(item, rangeOf(item.id), todayIn(item.site.timeZone))),
-    nextCursor: found.length > limit && last ? cursorOfName(last) : null,
+    items: items.map((item) =>
+      presentListItem(item, rangeOf(item.id), todayIn(item.site.timeZone)),
+    ),
+    nextCursor,
   };
 }
 

@@ -2,7 +2,7 @@ import { timePosition } from '@shared/contracts/fields';
 import type { VitalsHistory } from '@shared/contracts/vitals-history-contract';
 import type { Queryable } from '../database/client';
 import { vitalsHistory } from '../floor/vital-signs-queries';
-import { fieldFailure } from './field-failure';
+import { decodeCursor, pageOf } from '../http/cursor';
 
 interface Page {
   readonly cursor?: string | undefined;
@@ -10,13 +10,10 @@ interface Page {
 }
 
 /** Where a list of sessions goes on: instant and id of the last, nothing that names anybody. */
-
 function positionOf(cursor: string | undefined) {
   if (cursor === undefined) return null;
-  const parts = Buffer.from(cursor, 'base64url').toString().split(' ');
-  const { data } = timePosition.safeParse(parts);
-  if (!data) throw fieldFailure('cursor', 'invalid', 'Start the list again');
-  return { startedAt: new Date(data[0]), id: data[1] };
+  const [startedAt, id] = decodeCursor(timePosition, cursor);
+  return { startedAt: new Date(startedAt), id };
 }
 
 /** A page of a patient's sessions with their readings. @throws Failure `invalid-request` for a foreign cursor */
@@ -26,11 +23,5 @@ export async function readVitals(
   { cursor, limit }: Page,
 ): Promise<VitalsHistory> {
   const found = await vitalsHistory(db, patientId, { after: positionOf(cursor), limit });
-  const items = found.slice(0, limit);
-  const last = items.at(-1);
-  const nextCursor =
-    found.length > limit && last
-      ? Buffer.from(`${last.startedAt} ${last.sessionRecordId}`).toString('base64url')
-      : null;
-  return { items, nextCursor };
+  return pageOf(found, limit, ({ startedAt, sessionRecordId }) => [startedAt, sessionRecordId]);
 }
