@@ -8,7 +8,7 @@ import { signIn, type Caller } from './caller';
 import { timeCompletion } from './completion';
 import { COURSES, fillLargeNetwork } from './large-network';
 import { measure, startBare, type Figure, type Load } from './load';
-import { startProduct, type Product } from './product';
+import { startProduct, type Product } from '../demonstration-product';
 import { startRecorder } from './recorder';
 
 interface Row {
@@ -220,7 +220,7 @@ async function bench(product: Product): Promise<void> {
   await timeCompletion(await signIn(product.url, 'director'));
 }
 
-const product = await startProduct();
+const product = await startProduct('bench');
 try {
   await bench(product);
 } finally {

@@ -6,7 +6,7 @@ import type { AppContext } from '../../server/app-context';
 import { openDatabase } from '../../server/database/client';
 import { featureRoutes } from '../../server/features';
 import { createLog } from '../../server/http/log';
-import type { Product } from './product';
+import type { Product } from '../demonstration-product';
 
 export interface Statement {
   readonly text: string;

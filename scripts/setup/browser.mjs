@@ -3,7 +3,7 @@ import { SetupFailure } from '../failure.mjs';
 import { canInstall, installDebianPackages } from './apt.mjs';
 
 /** Where Debian's package puts it. */
-const CHROMIUM = '/usr/bin/chromium';
+export const CHROMIUM = '/usr/bin/chromium';
 
 /**
  * Finds Chromium, or installs it when root.

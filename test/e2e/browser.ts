@@ -1,6 +1,8 @@
 import AxeBuilder from '@axe-core/playwright';
 import { chromium, type Browser, type BrowserContext, type Page } from 'playwright-core';
 import { afterAll, beforeAll, expect, inject } from 'vitest';
+import { demoPassword } from '../../server/demo/accounts';
+import { CHROMIUM } from '../../scripts/setup/browser.mjs';
 
 const flags = [
   '--no-sandbox',
@@ -11,8 +13,6 @@ const flags = [
   '--disable-component-update',
   '--disable-sync',
 ];
-
-export const demoPassword = 'Harbor-Lane-36-steps';
 
 export const sizes = {
   phone: { width: 390, height: 844 },
@@ -51,7 +51,7 @@ export function useDesk(): Desk {
   let browser: Browser;
   const problems: string[] = [];
   beforeAll(async () => {
-    browser = await chromium.launch({ executablePath: '/usr/bin/chromium', args: flags });
+    browser = await chromium.launch({ executablePath: CHROMIUM, args: flags });
   });
   afterAll(async () => {
     await browser.close();
