@@ -32,6 +32,15 @@ describe('which class the floor opens with', () => {
     expect(classToOpen(classes, at('06:46'))?.id).toBe('seven');
   });
 
+  it('passes over a class in which nobody is, for the nearest with people', () => {
+    const empty = dated('empty', '11:00', '12:00', 0);
+    const evening = dated('evening', '17:00', '18:00');
+    const day = [...classes, empty, evening];
+    expect(classToOpen(day, at('11:20'))?.id).toBe('ten');
+    expect(classToOpen(day, at('16:00'))?.id).toBe('evening');
+    expect(classToOpen([empty], at('11:20'))?.id).toBe('empty');
+  });
+
   it('opens the next one between classes, and the last after all', () => {
     expect(classToOpen(classes, at('05:00'))?.id).toBe('seven');
     expect(classToOpen(classes, at('12:00'))?.id).toBe('ten');

@@ -24,12 +24,20 @@ export function inOrderOfUse<C extends Dated>(classDates: readonly C[], now: Dat
   return [...classDates].sort((a, b) => rank(a) - rank(b) || start(a) - start(b));
 }
 
-/** The class to open with: on now with the most people in it, else the next, else the last. */
+/** How far from now a class is that is not on, in ms. */
+function away({ startsAt, endsAt }: Dated, now: Date): number {
+  return Math.max(Date.parse(startsAt) - now.getTime(), now.getTime() - Date.parse(endsAt));
+}
+
+/** The class to open with: on now with the most people in it, else the nearest in which anybody is. */
 export function classToOpen<C extends Dated & Pick<ClassDate, 'booked'>>(
   classDates: readonly C[],
   now: Date,
 ): C | undefined {
   const ordered = inOrderOfUse(classDates, now);
-  const running = ordered.filter((one) => momentOf(one, now) === 'now');
-  return [...running].sort((a, b) => b.booked - a.booked)[0] ?? ordered[0];
+  const held = ordered.filter(({ booked }) => booked > 0);
+  const running = held.filter((one) => momentOf(one, now) === 'now');
+  const fullest = [...running].sort((a, b) => b.booked - a.booked)[0];
+  const nearest = [...held].sort((a, b) => away(a, now) - away(b, now))[0];
+  return fullest ?? nearest ?? ordered[0];
 }
