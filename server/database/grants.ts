@@ -6,6 +6,7 @@ export const appendOnlyTables = [
   'audit_seals',
   'ledger_entries',
   'payment_events',
+  'policies',
 ] as const;
 
 /**

@@ -1,61 +1,82 @@
 import type { PoolClient } from 'pg';
-import { type PrescriptionPolicy, policyKeys, policyValue } from '@shared/clinical/prescribing';
-import { prescriptionPolicySchema } from '@shared/contracts/policy-contract';
+import {
+  policyChapters,
+  policyStep,
+  valuesOf,
+  type PolicyValuesByKey,
+} from '@shared/clinical/program-policy';
+import type { PolicyVersions } from '@shared/contracts/policy-change-contract';
 import type { PolicyInForce } from '@shared/contracts/policy-in-force-contract';
+import { readPolicy, type StoredPolicy } from './policy-queries';
+
+type Client = Pick<PoolClient, 'query'>;
 
 interface Version {
+  readonly version: number;
   readonly effectiveFrom: Date;
+  readonly by: string | null;
   readonly note: string;
-  readonly policy: PrescriptionPolicy;
+  readonly values: PolicyValuesByKey;
 }
 
-async function versionsUntil(
-  client: Pick<PoolClient, 'query'>,
-  version: number,
-): Promise<[Version, ...Version[]]> {
-  const { rows } = await client.query<{ content: unknown; effectiveFrom: Date; note: string }>(
-    `SELECT content, effective_from AS "effectiveFrom", note FROM policies
-      WHERE version <= $1 ORDER BY version DESC`,
-    [version],
+/** Every version that has come into force, newest first. */
+async function versionsUntil(client: Client, now: Date): Promise<[Version, ...Version[]]> {
+  const { rows } = await client.query<Omit<Version, 'values'> & StoredPolicy>(
+    `SELECT p.version, p.content, p.training, p.effective_from AS "effectiveFrom", p.note, u.display_name AS by
+       FROM policies p LEFT JOIN users u ON u.id = p.created_by
+      WHERE p.effective_from <= $1 OR p.version = 1 ORDER BY p.version DESC`,
+    [now],
   );
-  const [newest, ...older] = rows.map(({ content, ...row }) => ({
+  const [newest, ...older] = rows.map(({ content, training, ...row }) => ({
     ...row,
-    policy: prescriptionPolicySchema.parse(content),
+    values: valuesOf(readPolicy({ content, training })),
   }));
-  if (!newest) throw new Error(`There is no policy of version ${version}`);
+  if (!newest) throw new Error('The table of policies is empty');
   return [newest, ...older];
 }
 
 /** The oldest of the versions, newest first, from which on the key has had its present value. */
 function sinceOf([newest, ...older]: [Version, ...Version[]], key: string): Version {
-  const value = policyValue(newest.policy, key);
   let since = newest;
   for (const version of older) {
-    if (policyValue(version.policy, key) !== value) break;
+    if (version.values[key] !== newest.values[key]) break;
     since = version;
   }
   return since;
 }
 
-/** A version of the policy with the default, the bounds and the age of each of its numbers. */
+/** The policy in force with the default, the bounds, the source and the age of each of its numbers. */
 export async function policyWithHistory(
-  client: Pick<PoolClient, 'query'>,
-  version: number,
-): Promise<PolicyInForce> {
-  const versions = await versionsUntil(client, version);
-  const [{ policy, effectiveFrom, note }] = versions;
-  return {
-    version,
-    effectiveFrom: effectiveFrom.toISOString(),
-    note,
-    items: policyKeys.map((row) => {
-      const since = sinceOf(versions, row.key);
+  client: Client,
+  now: Date,
+): Promise<Omit<PolicyInForce, 'mayChange'>> {
+  const versions = await versionsUntil(client, now);
+  const [{ version, effectiveFrom, by, note, values }] = versions;
+  const items = policyChapters.flatMap(({ title, keys }) =>
+    keys.map((number) => {
+      const since = sinceOf(versions, number.key);
       return {
-        ...row,
-        value: policyValue(policy, row.key),
-        sinceVersion: since.policy.version,
+        ...number,
+        subject: title,
+        step: policyStep(number),
+        value: values[number.key] ?? number.default,
+        sinceVersion: since.version,
         since: since.effectiveFrom.toISOString(),
       };
     }),
+  );
+  return { version, effectiveFrom: effectiveFrom.toISOString(), by, note, items };
+}
+
+/** Every version with its numbers, newest first. */
+export async function policyVersions(client: Client, now: Date): Promise<PolicyVersions> {
+  const versions = await versionsUntil(client, now);
+  return {
+    items: versions.map(({ effectiveFrom, note, values, ...version }) => ({
+      ...version,
+      effectiveFrom: effectiveFrom.toISOString(),
+      reason: note,
+      values: { ...values },
+    })),
   };
 }

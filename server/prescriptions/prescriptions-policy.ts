@@ -30,3 +30,14 @@ export function hasNothingToSign(row: Signed, signer: Signer & { readonly id: st
   if (row.signedBy === null) return false;
   return row.signedBy === signer.id || !signsAsPhysician(signer);
 }
+
+/** Who may read the policy at all. */
+export const policyReaders: readonly Role[] = [
+  'administrator',
+  'physician',
+  'exercise-physiologist',
+];
+
+/** Who publishes the policy: an administrator, or the physician who is marked medical director. */
+export const mayChangePolicy = (person: Signer & { readonly medicalDirector: boolean }): boolean =>
+  person.roles.includes('administrator') || (person.medicalDirector && signsAsPhysician(person));

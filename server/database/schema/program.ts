@@ -128,13 +128,23 @@ export const classDates = pgTable(
   ],
 );
 
-/** The program's prescribing policy, a row a version; version 1 holds the published defaults. */
+/**
+ * The program's policy, a row a version, written once; version 1 holds the published defaults. Triggers keep every number
+ * within its bounds, and refuse changes.
+ */
 export const policies = pgTable(
   'policies',
   {
     version: integer().primaryKey(),
+    /** What ranges are worked out by. */
     content: jsonb().$type<unknown>().notNull(),
+    /** The other numbers by subject; one that is missing counts with its published default. */
+    training: jsonb()
+      .$type<unknown>()
+      .notNull()
+      .default(sql`'{}'::jsonb`),
     effectiveFrom: madeAt(),
+    /** A user; null for the published defaults. */
     createdBy: uuid(),
     note: text().notNull(),
   },
