@@ -77,7 +77,7 @@ const publish = route({
   },
   request: { body: policyPublishRequestSchema },
   response: { 201: policyInForceSchema },
-  constraints: { policies_pkey: 'stale-version' },
+  constraints: { policies_pkey: 'stale-version', policies_within_bounds: 'invalid-request' },
   handler: async ({ tx, actor, input: { body }, context }) => {
     if (!mayChangePolicy(actor)) return fail('forbidden');
     const now = context.clock.now();

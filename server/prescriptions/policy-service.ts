@@ -1,7 +1,9 @@
 import {
+  changedKeys,
   orderFaults,
   policyOf,
   valuesOf,
+  withValues,
   type PolicyFault,
   type ProgramPolicy,
 } from '@shared/clinical/program-policy';
@@ -38,11 +40,13 @@ export async function proposedPolicy(
   const present = await programPolicyInForce(tx.connection, now);
   if (present.prescribing.version !== basedOn) return published();
   const old = valuesOf(present);
-  const merged = { ...old, ...values } as Record<string, number>;
+  const merged = withValues(old, values);
   const faults = orderFaults(merged);
   if (faults.length > 0) return invalid(faults);
-  if (Object.keys(merged).every((key) => merged[key] === old[key])) {
-    return invalid([{ key: '', message: 'Every number is what it is already. Change at least one.' }]);
+  if (changedKeys(old, merged).length === 0) {
+    return invalid([
+      { key: '', message: 'Every number is what it is already. Change at least one.' },
+    ]);
   }
   return { present, proposed: policyOf(merged, basedOn + 1) };
 }

@@ -65,9 +65,7 @@ export type RangeInBrief = z.infer<typeof briefSchema>;
 const changedRangeSchema = z.object({
   prescriptionId: z.uuid(),
   /** Null when the reader does not treat, or not at this site: ranges are read by those who treat. */
-  patient: z
-    .object({ id: z.uuid(), displayName: z.string(), recordNumber: z.string() })
-    .nullable(),
+  patient: z.object({ id: z.uuid(), displayName: z.string(), recordNumber: z.string() }).nullable(),
   site: z.string(),
   parts: z.array(z.enum(effectParts)),
   /** As it was signed and is in force. */

@@ -131,6 +131,18 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
     who: [...signing, 'administrator'],
     none: 'the policy is the whole program’s',
   },
+  'GET /api/policy/versions': {
+    who: [...signing, 'administrator'],
+    none: 'the policy is the whole program’s',
+  },
+  'POST /api/policy/preview': {
+    who: ['physician', 'administrator'],
+    none: 'counts of the whole program; names of one’s own records alone, which policy-publishing.spec holds',
+  },
+  'POST /api/policy/versions': {
+    who: ['physician', 'administrator'],
+    none: 'the policy is the whole program’s',
+  },
   'POST /api/sites': { who: administrator, none: 'names of sites alone' },
   'PUT /api/sites/:id': { who: administrator, none: 'names of sites alone' },
 

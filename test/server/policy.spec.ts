@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { defaultPolicy, policyKeys } from '@shared/clinical/prescribing';
+import { defaultPolicy } from '@shared/clinical/prescribing';
+import { programPolicyKeys } from '@shared/clinical/program-policy';
 import type { PolicyInForce } from '@shared/contracts/policy-in-force-contract';
 import { agentFor, type Agent } from '../builders/agent';
 import { buildUser } from '../builders/people';
@@ -32,7 +33,7 @@ describe('the policy in force', () => {
   it('is the defaults at first, each with bounds and source', async () => {
     const policy = await read();
     expect(policy.version).toBe(1);
-    expect(policy.items).toHaveLength(policyKeys.length);
+    expect(policy.items).toHaveLength(programPolicyKeys.length);
     for (const item of policy.items) expect(item.value).toBe(item.default);
     expect(rowOf(policy, 'margin.icd')).toMatchObject({
       value: 10,

@@ -47,6 +47,10 @@ export function policyStep(number: Omit<PolicyKey, 'key' | 'label' | 'source'>):
 export const isOnStep = (value: number, step: number): boolean =>
   Math.abs(value / step - Math.round(value / step)) < 1e-9;
 
+/** A value without the noise of decimals: 0.1 + 0.2 is set as 0.3. */
+export const toStep = (value: number, step: number): number =>
+  Number((Math.round(value / step) * step).toFixed(2));
+
 const byKey: ReadonlyMap<string, PolicyKey> = new Map(
   programPolicyKeys.map((number) => [number.key, number]),
 );
@@ -69,6 +73,18 @@ export function orderFaults(values: PolicyValuesByKey): PolicyFault[] {
     const words = mayBeEqual ? 'must not be below' : 'must be above';
     return [{ key: upper, message: `“${labelOf(upper)}” ${words} “${labelOf(lower)}”.` }];
   });
+}
+
+/** The policy's values with others in their place, each exactly on its step. */
+export function withValues(
+  values: PolicyValuesByKey,
+  changes: Readonly<Record<string, number | undefined>>,
+): PolicyValuesByKey {
+  const changed = programPolicyKeys.flatMap((number) => {
+    const value = changes[number.key];
+    return value === undefined ? [] : [[number.key, toStep(value, policyStep(number))] as const];
+  });
+  return { ...values, ...Object.fromEntries(changed) };
 }
 
 /** How two policies differ, in the order of reading. */

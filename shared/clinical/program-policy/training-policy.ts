@@ -36,8 +36,10 @@ export function trainingPolicyOf(
   const subjects = trainingSubjects.map((subject) => {
     const defaults: PolicyValues<PolicyNumbers> = defaultsOf(trainingNumbers[subject]);
     const own = stored[subject] ?? {};
-    const values = Object.keys(defaults).map((key) => [key, own[key] ?? defaults[key]]);
-    return [subject, Object.fromEntries(values)];
+    const values = Object.entries(defaults).map(
+      ([key, usual]) => [key, own[key] ?? usual] as const,
+    );
+    return [subject, Object.fromEntries(values)] as const;
   });
   return Object.fromEntries(subjects) as TrainingPolicy;
 }

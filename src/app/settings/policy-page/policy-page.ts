@@ -25,9 +25,9 @@ export class PolicyPage {
   protected readonly rows = computed(() =>
     this.policy()?.items.map((item) => ({
       ...item,
-      shown: policyNumber(item.value, item.unit),
-      shownDefault: policyNumber(item.default, item.unit),
-      bounds: `${policyNumber(item.lowest, item.unit)} to ${policyNumber(item.highest, item.unit)}`,
+      shown: policyNumber(item.value, item),
+      shownDefault: policyNumber(item.default, item),
+      bounds: `${policyNumber(item.lowest, item)} to ${policyNumber(item.highest, item)}`,
       changed: item.value !== item.default,
     })),
   );
