@@ -8,26 +8,13 @@ import {
   withoutThresholds,
   type Change,
 } from '../../../test/builders/prescription-request';
-import { bpm, kilograms, mets, minutes } from '../../units';
-import type { PolicyNumbers } from '../policy-numbers';
-import { policyFaults } from '../policy-numbers';
+import { bpm, minutes } from '../../units';
 import { defaultPolicy } from '../prescribing';
-import {
-  defaultIntermittentPolicy,
-  firstBouts,
-  intermittentNumbers,
-  longerBouts,
-  needsIntermittent,
-} from './intermittent';
 import type { BoutMoment } from './interval-placement';
 import { placeIntervalRate } from './interval-placement';
-import { defaultIntervalPolicy, intervalNumbers } from './interval-policy';
+import { defaultIntervalPolicy } from './interval-policy';
 import type { IntervalPlan } from './intervals';
 import { prescribeIntervals } from './intervals';
-import type { ResistanceFacts, WeeksSince } from './resistance';
-import { nextLoad, resistanceLimits } from './resistance';
-import { defaultResistancePolicy, resistanceNumbers } from './resistance-policy';
-import { defaultSessionShape, sessionShapeNumbers } from './session-shape';
 
 const plan = (changes: Partial<IntervalPlan> = {}): IntervalPlan => ({
   repeats: 4,
@@ -209,146 +196,5 @@ describe('a rate within intervals', () => {
         },
       ),
     );
-  });
-});
-
-describe('intermittent bouts', () => {
-  it.each<[number | null, number | null, boolean | null]>([
-    [2.9, null, true],
-    [3, null, false],
-    [6, 4, true],
-    [2.5, 12, false],
-    [null, null, null],
-  ])('peak %s, longest bout %s: %s', (peak, longest, needed) => {
-    const answer = needsIntermittent(
-      peak === null ? null : mets(peak),
-      longest === null ? null : minutes(longest),
-      defaultIntermittentPolicy,
-    );
-    expect(answer).toBe(needed);
-  });
-
-  it('grow longer and fewer until one is left', () => {
-    let pattern = firstBouts(null, defaultIntermittentPolicy);
-    expect(pattern).toEqual({ bouts: 3, minutesEach: 5, restMinutes: 2, totalMinutes: 15 });
-    const seen = [pattern];
-    for (let round = 0; round < 20; round += 1) {
-      pattern = longerBouts(pattern, defaultIntermittentPolicy);
-      seen.push(pattern);
-    }
-    expect(
-      seen.slice(0, 8).map(({ bouts, minutesEach }) => `${bouts} × ${Number(minutesEach)}`),
-    ).toEqual(['3 × 5', '3 × 7', '3 × 9', '2 × 11', '2 × 13', '2 × 15', '1 × 17', '1 × 19']);
-    expect(pattern).toMatchObject({ bouts: 1, minutesEach: 30, restMinutes: 0 });
-    expect(Math.max(...seen.map(({ totalMinutes }) => totalMinutes))).toBeLessThanOrEqual(30);
-  });
-
-  it('are no longer than what was managed', () => {
-    expect(firstBouts(minutes(3), defaultIntermittentPolicy)).toMatchObject({
-      bouts: 5,
-      minutesEach: 3,
-    });
-  });
-});
-
-describe('resistance', () => {
-  const facts = (changes: Partial<ResistanceFacts> = {}): ResistanceFacts => ({
-    sternotomy: 'never',
-    infarction: 'never',
-    stent: 8,
-    device: 'never',
-    sternumStable: null,
-    supervisedWeeks: 4,
-    liftingLimit: null,
-    ...changes,
-  });
-  const limits = (changes: Partial<ResistanceFacts> = {}) =>
-    resistanceLimits(facts(changes), defaultResistancePolicy);
-
-  it.each<[Partial<ResistanceFacts>, string, string, string]>([
-    [{}, 'load', 'load', 'load'],
-    [{ stent: 2 }, 'none', 'none', 'none'],
-    [{ stent: null }, 'none', 'none', 'none'],
-    [{ infarction: 4.9 }, 'none', 'none', 'none'],
-    [{ supervisedWeeks: 1 }, 'none', 'none', 'none'],
-    [{ sternotomy: 4, sternumStable: true }, 'none', 'none', 'none'],
-    [{ sternotomy: 6, sternumStable: true }, 'load', 'light', 'light'],
-    [{ sternotomy: 12, sternumStable: true }, 'load', 'load', 'load'],
-    [{ sternotomy: 12, sternumStable: null }, 'load', 'light', 'light'],
-    [{ sternotomy: 20, sternumStable: false }, 'load', 'none', 'none'],
-    [{ device: 5 }, 'load', 'load', 'light'],
-    [{ device: null }, 'load', 'load', 'light'],
-    [{ device: 6 }, 'load', 'load', 'load'],
-  ])('%o: legs %s, arms %s, device arm %s', (changes, legs, arms, deviceArm) => {
-    const it = limits(changes);
-    expect([it.legs.level, it.arms.level, it.deviceArm.level]).toEqual([legs, arms, deviceArm]);
-    if (legs === 'none') expect(it.legs.why.length).toBeGreaterThan(0);
-  });
-
-  it('keeps to the lower of policy and order', () => {
-    expect(limits({ sternotomy: 6, sternumStable: true }).arms.mostLoad).toBe(3.6);
-    expect(
-      limits({ sternotomy: 6, sternumStable: true, liftingLimit: kilograms(2) }).arms.mostLoad,
-    ).toBe(2);
-    expect(limits({ liftingLimit: kilograms(9) }).legs).toMatchObject({
-      level: 'load',
-      mostLoad: 9,
-    });
-    expect(limits({ device: 2 })).toMatchObject({ deviceArmAboveShoulder: false });
-  });
-
-  it.each<[number | null, number | null, boolean | null, number]>([
-    [15, 12, false, 10.5],
-    [14, 12, false, 10],
-    [15, 13, false, 10],
-    [15, 12, true, 10],
-    [null, 12, false, 10],
-    [15, null, false, 10],
-    [15, 12, null, 10],
-  ])(
-    'after %s repetitions at effort %s, symptoms %s: %d kg',
-    (repetitions, effort, symptoms, load) => {
-      const history = { load: kilograms(10), repetitions, effort, symptoms };
-      expect(nextLoad(history, limits().legs, defaultResistancePolicy)).toBeCloseTo(load, 9);
-      const ordered = limits({ liftingLimit: kilograms(9) }).legs;
-      expect(nextLoad(history, ordered, defaultResistancePolicy)).toBe(9);
-      expect(nextLoad(history, limits({ stent: 1 }).legs, defaultResistancePolicy)).toBeNull();
-    },
-  );
-
-  it('never grows by what is not known', () => {
-    const since = fc.oneof(fc.constant<WeeksSince>('never'), fc.integer({ min: 0, max: 30 }));
-    const order = ['none', 'light', 'load'];
-    fc.assert(
-      fc.property(
-        fc.record({ sternotomy: since, infarction: since, stent: since, device: since }),
-        fc.constantFrom('sternotomy', 'infarction', 'stent', 'device'),
-        fc.boolean(),
-        (known, hidden, sternumStable) => {
-          const before = limits({ ...known, sternumStable });
-          const after = limits({ ...known, sternumStable, [hidden]: null });
-          for (const region of ['legs', 'arms', 'deviceArm'] as const) {
-            expect(order.indexOf(after[region].level)).toBeLessThanOrEqual(
-              order.indexOf(before[region].level),
-            );
-          }
-        },
-      ),
-    );
-  });
-});
-
-describe('the policies of training', () => {
-  it.each<[string, PolicyNumbers, Readonly<Record<string, number>>]>([
-    ['intervals', intervalNumbers, defaultIntervalPolicy],
-    ['intermittent', intermittentNumbers, defaultIntermittentPolicy],
-    ['resistance', resistanceNumbers, defaultResistancePolicy],
-    ['session', sessionShapeNumbers, defaultSessionShape],
-  ])('%s: defaults lie within their bounds, each with a source', (_subject, numbers, values) => {
-    expect(policyFaults(numbers, values)).toEqual([]);
-    for (const { source, label, lowest, highest } of Object.values(numbers)) {
-      expect([source, label]).not.toContain('');
-      expect(lowest).toBeLessThan(highest);
-    }
   });
 });
