@@ -5,7 +5,7 @@ import { fileURLToPath } from 'node:url';
 import { findFreePort, portFromPath } from './ports.mjs';
 import { placeCluster } from './postgres/placement.mjs';
 import { databaseUrl } from './postgres/psql.mjs';
-import { APP_ROLE, OWNER_ROLE } from './postgres/roles.mjs';
+import { APP_ROLE } from './postgres/roles.mjs';
 import { ensureSecrets, type Secrets } from './setup/secrets.mjs';
 
 const root = fileURLToPath(new URL('..', import.meta.url));
@@ -16,8 +16,7 @@ export interface Product {
   readonly mailUrl: string;
   /** As the server signs in. */
   readonly databaseUrl: string;
-  /** As the migrations sign in. */
-  readonly ownerUrl: string;
+  readonly superuserUrl: string;
   readonly secrets: Secrets;
   readonly stop: () => Promise<void>;
 }
@@ -65,7 +64,7 @@ export async function startProduct(purpose: string): Promise<Product> {
     url: addressIn(output, /ready at/),
     mailUrl: addressIn(output, /E-mail \(stand-in[^)]*\):/),
     databaseUrl: as(APP_ROLE, secrets['database-app']),
-    ownerUrl: as(OWNER_ROLE, secrets['database-owner']),
+    superuserUrl: as('postgres', secrets['database-superuser']),
     secrets,
     stop: async () => {
       const ended = once(child, 'exit');

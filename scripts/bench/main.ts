@@ -193,7 +193,7 @@ async function storedRequest(nurse: Caller): Promise<PrescriptionRequest> {
 }
 
 async function bench(product: Product): Promise<void> {
-  if (COURSES > 0) await fillLargeNetwork(product.ownerUrl);
+  if (COURSES > 0) await fillLargeNetwork(product.superuserUrl);
   const nurse = await signIn(product.url, 'nurse');
   const desk = await signIn(product.url, 'frontdesk');
   const request = await storedRequest(nurse);
