@@ -1,6 +1,7 @@
 import type { Logger } from 'pino';
 import type { DemoAccount } from '@shared/contracts/accounts-contract';
 import type { Database } from './database/client';
+import type { ChangeFeed } from './live/change-feed';
 import type { Mailer } from './mail/mailer';
 import type { Payments } from './payments/payments';
 
@@ -32,6 +33,8 @@ export interface AppContext {
   /** A replica when there is one, else the database itself. */
   readonly reportsDatabase: Database;
   readonly clock: Clock;
+  /** What any process changes, for the pages that are open here. */
+  readonly changes: ChangeFeed;
   /** Null while no payment service is configured. */
   readonly payments: Payments | null;
   /** Null while no mail server is configured: messages wait in the outbox. */

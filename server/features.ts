@@ -11,6 +11,7 @@ import { auditRoutes } from './audit/audit-routes';
 import type { RouteDefinition } from './http/route';
 import { serviceRoutes } from './http/service-routes';
 import type { JobDefinition } from './jobs/job';
+import { liveRoutes } from './live/live-routes';
 import { messagesJobs } from './messages/messages-jobs';
 import { messagesRoutes } from './messages/messages-routes';
 import { preferencesRoutes } from './messages/preferences-routes';
@@ -42,6 +43,7 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...usersRoutes,
     ...sitesRoutes,
     ...auditRoutes,
+    ...liveRoutes,
     ...policyRoutes,
     ...prescriptionsRoutes,
     ...scheduleRoutes(appointmentListeners),

@@ -11,6 +11,7 @@ import { demoAccounts } from './demo/accounts';
 import { featureJobs } from './features';
 import { createLog } from './http/log';
 import { startWorker } from './jobs/worker';
+import { createChangeFeed } from './live/change-feed';
 import type { Mailer } from './mail/mailer';
 import { createMailer } from './mail/smtp-mailer';
 import { createPayments } from './payments/stripe-payments';
@@ -46,6 +47,7 @@ function contextOf(config: Config): AppContext {
     database,
     reportsDatabase: config.databaseReplicaUrl ? open(config.databaseReplicaUrl) : database,
     clock: { now: () => new Date() },
+    changes: createChangeFeed(database, log),
     payments: config.stripe && createPayments(config.stripe),
     mailer: mailerOf(config),
     log,
@@ -86,7 +88,7 @@ async function start(): Promise<void> {
 
   let stopping: Promise<void> | undefined;
   const stop = async (): Promise<void> => {
-    await Promise.all([close(server), worker?.stop()]);
+    await Promise.all([close(server), worker?.stop(), context.changes.close()]);
     context.mailer?.close();
     await context.database.$client.end();
     if (context.reportsDatabase !== context.database) await context.reportsDatabase.$client.end();

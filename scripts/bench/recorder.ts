@@ -6,6 +6,7 @@ import type { AppContext } from '../../server/app-context';
 import { openDatabase } from '../../server/database/client';
 import { featureRoutes } from '../../server/features';
 import { createLog } from '../../server/http/log';
+import { createChangeFeed } from '../../server/live/change-feed';
 import type { Product } from '../demonstration-product';
 
 export interface Statement {
@@ -19,13 +20,15 @@ const house =
 
 function contextOf(product: Product): AppContext {
   const database = openDatabase(product.databaseUrl);
+  const log = createLog('silent');
   return {
     database,
     reportsDatabase: database,
     clock: { now: () => new Date() },
+    changes: createChangeFeed(database, log),
     payments: null,
     mailer: null,
-    log: createLog('silent'),
+    log,
     settings: {
       origin: product.url,
       secureCookies: false,

@@ -6,10 +6,11 @@ import type {
   RosterItem,
   SessionRecord,
 } from '@shared/contracts/floor-contract';
+import type { RangeFlag } from '@shared/clinical/range-flags';
 import type { AppointmentStatus } from '@shared/contracts/schedule-contract';
 import type { Transaction } from '../database/client';
 import { floorRanges, type FloorRange } from '../prescriptions/floor-ranges-queries';
-import { READING_COLUMNS, type ReadingRow } from './floor-repository';
+import { RANGE_WITHDRAWN, READING_COLUMNS, type ReadingRow } from './floor-repository';
 
 /** A reading as it is answered. */
 export function presentReading({ patientId: _, ...row }: ReadingRow): Reading {
@@ -61,7 +62,7 @@ const VISITS = `
          a.arrived_at AS "arrivedAt", a.checked_in_at AS "checkedInAt",
          r.id AS "recordId", r.started_at AS "startedAt", r.identity_confirmed_with AS "identityConfirmedWith",
          began.display_name AS "beganBy", r.signed_at AS "signedAt", signer.display_name AS "signedBy",
-         r.prescription_id AS "rangeId", r.range_withdrawn AS "rangeWithdrawn",
+         r.prescription_id AS "rangeId", ${RANGE_WITHDRAWN} AS "rangeWithdrawn",
          device.icd_status AS "icdStatus", device.lowest AS "icdLowest", device.pacemaker,
          EXISTS (SELECT FROM medications m
                   WHERE m.patient_id = p.id AND m.name ILIKE '%insulin%' AND m.entered_in_error_at IS NULL
@@ -88,19 +89,22 @@ const isoOrNull = (at: Date | null): string | null => at?.toISOString() ?? null;
 interface VisitRange {
   readonly range: FloorRange | undefined;
   readonly withdrawn: readonly string[];
+  /** Of the range in force now. */
+  readonly flags: readonly RangeFlag[];
   readonly changed: boolean;
 }
 
 function rangeOf(row: VisitRow, ranges: readonly FloorRange[]): VisitRange {
   const active = ranges.find(({ patientId, active }) => active && patientId === row.patientId);
+  const flags = active?.flags ?? [];
   if (row.recordId === null) {
-    return { range: active, withdrawn: active?.withdrawn ?? [], changed: false };
+    return { range: active, withdrawn: active?.withdrawn ?? [], flags, changed: false };
   }
   const range = ranges.find(({ id }) => id === row.rangeId);
   const another = active?.id !== row.rangeId;
   const withdrawnSince = row.rangeWithdrawn.length === 0 && (active?.withdrawn.length ?? 0) > 0;
   const changed = row.signedAt === null && (another || withdrawnSince);
-  return { range, withdrawn: row.rangeWithdrawn, changed };
+  return { range, withdrawn: row.rangeWithdrawn, flags, changed };
 }
 
 const irregular: readonly string[] = ['atrial-fibrillation', 'atrial-flutter', 'frequent-ectopy'];
@@ -114,7 +118,7 @@ function flagsOf(row: VisitRow, { range, changed }: VisitRange): FloorFlag[] {
   return flags;
 }
 
-function presentRange({ range, withdrawn }: VisitRange) {
+function presentRange({ range, withdrawn, flags }: VisitRange) {
   const answer = range?.answer;
   const isWithdrawn = withdrawn.length > 0;
   return {
@@ -131,6 +135,7 @@ function presentRange({ range, withdrawn }: VisitRange) {
     oxygenFloor: answer?.oxygenFloor ?? null,
     restingHeartRate: range?.restingHeartRate ?? null,
     withdrawn: [...withdrawn],
+    rangeFlags: [...flags],
   };
 }
 
@@ -174,6 +179,7 @@ export async function classRoster(
   tx: Transaction,
   classDateId: string,
   siteIds: readonly string[],
+  now: Date,
 ): Promise<Omit<Roster, 'at'>> {
   const { rows } = await tx.connection.query<VisitRow>({
     name: 'floor-roster',
@@ -181,10 +187,14 @@ export async function classRoster(
     values: [classDateId],
   });
   const visible = rows.filter(({ siteId }) => siteIds.includes(siteId));
-  const ranges = await floorRanges(tx, {
-    patientIds: visible.map(({ patientId }) => patientId),
-    rangeIds: visible.flatMap(({ rangeId }) => rangeId ?? []),
-  });
+  const ranges = await floorRanges(
+    tx,
+    {
+      patientIds: visible.map(({ patientId }) => patientId),
+      rangeIds: visible.flatMap(({ rangeId }) => rangeId ?? []),
+    },
+    now,
+  );
   return {
     items: visible.map((row) => presentVisit(row, ranges)),
     notShown: rows.length - visible.length,

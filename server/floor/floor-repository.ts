@@ -3,6 +3,7 @@ import type { AppointmentStatus } from '@shared/contracts/schedule-contract';
 import type { Placement } from '@shared/clinical/placement';
 import type { PrescriptionAnswer } from '@shared/clinical/prescribing';
 import type { Transaction } from '../database/client';
+import { doseMissed } from '../prescriptions/floor-ranges-queries';
 import type { SentReading } from './floor-policy';
 
 /** A session record as a write needs it. */
@@ -20,10 +21,16 @@ export interface RecordRow {
   readonly ceiling: PrescriptionAnswer['ceiling'];
 }
 
+/** Why the range of a record `r` of a visit `a` does not lead: as it was withdrawn at the beginning, and the day's missed dose. */
+export const RANGE_WITHDRAWN = `
+  r.range_withdrawn || CASE WHEN EXISTS (
+    SELECT FROM missed_doses d WHERE d.patient_id = r.patient_id AND d.local_date = a.local_date AND d.missed)
+    THEN ARRAY['${doseMissed}'] ELSE '{}' END`;
+
 const RECORD = `
   SELECT r.id, r.appointment_id AS "appointmentId", r.patient_id AS "patientId", r.started_at AS "startedAt",
          r.identity_confirmed_with AS "identityConfirmedWith", r.prescription_id AS "prescriptionId",
-         r.range_withdrawn AS "rangeWithdrawn", r.signed_at AS "signedAt", a.status AS "appointmentStatus",
+         ${RANGE_WITHDRAWN} AS "rangeWithdrawn", r.signed_at AS "signedAt", a.status AS "appointmentStatus",
          p.result -> 'target' AS target, p.result -> 'ceiling' AS ceiling
     FROM session_records r
     JOIN appointments a ON a.id = r.appointment_id
@@ -208,4 +215,27 @@ export async function writeSignature(
   });
   if (!rows[0]) throw new Error('A locked session record was not signed');
   return rows[0];
+}
+
+/** The visit's day counts as one with or without the dose. */
+export async function writeMissedDose(
+  tx: Transaction,
+  day: {
+    readonly appointmentId: string;
+    readonly missed: boolean;
+    readonly recordedBy: string;
+    readonly now: Date;
+  },
+): Promise<void> {
+  const { appointmentId, missed, recordedBy, now } = day;
+  await tx.connection.query({
+    name: 'write-missed-dose',
+    text: `
+      INSERT INTO missed_doses AS d (patient_id, local_date, missed, recorded_at, recorded_by)
+      SELECT a.patient_id, a.local_date, $2, $3, $4 FROM appointments a WHERE a.id = $1
+      ON CONFLICT (patient_id, local_date)
+      DO UPDATE SET missed = EXCLUDED.missed, recorded_at = EXCLUDED.recorded_at, recorded_by = EXCLUDED.recorded_by
+      WHERE d.missed <> EXCLUDED.missed`,
+    values: [appointmentId, missed, now, recordedBy],
+  });
 }

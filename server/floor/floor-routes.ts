@@ -2,6 +2,7 @@ import * as z from 'zod';
 import {
   amendmentRequestSchema,
   beginRecordRequestSchema,
+  missedDoseSchema,
   readingRequestSchema,
   readingSchema,
   rosterResponseSchema,
@@ -11,7 +12,7 @@ import {
   type SessionRecord,
 } from '@shared/contracts/floor-contract';
 import { requirePatientAccess } from '../accounts/access-service';
-import { created, ok } from '../http/answers';
+import { created, noContent, ok } from '../http/answers';
 import { fail, Failure } from '../http/failure';
 import { route, type Call, type RouteDefinition } from '../http/route';
 import { findClassDate } from '../schedule/class-dates-queries';
@@ -23,6 +24,7 @@ import {
   beginRecord,
   recordReading,
   signRecord,
+  tellMissedDose,
   type FloorCall,
   type Written,
 } from './floor-service';
@@ -59,12 +61,13 @@ const roster = route({
   request: { params: idParams },
   response: { 200: rosterResponseSchema },
   handler: async ({ tx, actor, input, context }) => {
-    const { items, notShown } = await classRoster(tx, input.params.id, actor.siteIds);
+    const now = context.clock.now();
+    const { items, notShown } = await classRoster(tx, input.params.id, actor.siteIds, now);
     if (items.length === 0) {
       const classDate = await findClassDate(tx, input.params.id);
       if (!classDate || !actor.siteIds.includes(classDate.siteId)) return fail('not-found');
     }
-    return ok({ items, notShown, at: context.clock.now().toISOString() });
+    return ok({ items, notShown, at: now.toISOString() });
   },
 });
 
@@ -168,6 +171,25 @@ const amend = route({
   },
 });
 
+const missedDose = route({
+  method: 'put',
+  path: '/api/appointments/:id/missed-dose',
+  summary: 'Says whether a patient came without the day’s dose: effort leads that day alone',
+  access: writers,
+  audit: 'handler',
+  request: { params: idParams, body: missedDoseSchema },
+  response: { 204: null },
+  handler: async (call) => {
+    const { id } = call.input.params;
+    const { missed } = call.input.body;
+    const outcome = await tellMissedDose(floorCall(call), id, missed);
+    if (outcome instanceof Failure) return outcome;
+    const action = missed ? 'missed-dose.told' : 'missed-dose.taken-back';
+    call.audit({ action, objectType: 'appointment', objectId: id, patientId: outcome.patientId });
+    return noContent();
+  },
+});
+
 const sign = route({
   method: 'post',
   path: '/api/session-records/:id/sign',
@@ -194,5 +216,6 @@ export const floorRoutes: RouteDefinition[] = [
   begin,
   recordVitals,
   amend,
+  missedDose,
   sign,
 ];

@@ -7,7 +7,7 @@ import { requirePatientAccess } from '../accounts/access-service';
 import type { Actor } from '../accounts/actor';
 import type { Transaction } from '../database/client';
 import { fail, Failure } from '../http/failure';
-import { floorRangeAt } from '../prescriptions/floor-ranges-queries';
+import { doseMissed, floorRangeAt } from '../prescriptions/floor-ranges-queries';
 import { fulfilAppointment } from '../schedule/transition-service';
 import { placementOf, sameReading, sameSet, statusOfEntry, type SentReading } from './floor-policy';
 import {
@@ -18,6 +18,7 @@ import {
   insertRecord,
   lockRecord,
   markAmended,
+  writeMissedDose,
   writeSignature,
   type ReadingRow,
   type RecordRow,
@@ -92,7 +93,8 @@ export async function beginRecord(
     patientId,
     startedAt,
     prescriptionId: range?.id ?? null,
-    rangeWithdrawn: range?.withdrawn ?? [],
+    // The day's missed dose is kept with the day: it may be told later, or taken back.
+    rangeWithdrawn: (range?.withdrawn ?? []).filter((reason) => reason !== doseMissed),
     identityConfirmedWith: request.identityConfirmedWith ?? null,
     recordedBy: actor.id,
     now,
@@ -101,6 +103,24 @@ export async function beginRecord(
   const winner = await findRecord(tx, id, appointmentId);
   if (!winner) throw new Error('A session record was refused by one that is not there');
   return answer(alreadyBegun(winner, id, request));
+}
+
+/**
+ * Says whether a patient came without the day's dose: effort leads that day alone, also in a record that is begun.
+ * @returns whose visit it is, or `not-found`, `record-signed`
+ */
+export async function tellMissedDose(
+  { tx, actor, now }: FloorCall,
+  appointmentId: string,
+  missed: boolean,
+): Promise<{ readonly patientId: string } | Failure> {
+  const visit = await findVisit(tx, appointmentId);
+  if (!visit) return fail('not-found');
+  const { patientId } = visit;
+  await requirePatientAccess(tx, actor, patientId);
+  if (visit.status === 'fulfilled') return fail('record-signed');
+  await writeMissedDose(tx, { appointmentId, missed, recordedBy: actor.id, now });
+  return { patientId };
 }
 
 type SentFields = Omit<ReadingRequest, 'sessionRecordId' | 'phase' | 'measuredAt'>;

@@ -43,6 +43,7 @@ describe('the roster', () => {
         perceivedExertion: { lower: 11, upper: 14 },
         icd: { status: 'unknown', lowestRate: null },
         withdrawn: [],
+        rangeFlags: [],
         record: { id: recordId, signedAt: null },
         readings: [{ heartRate: 100, placement: 'in' }],
       },

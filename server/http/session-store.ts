@@ -48,6 +48,13 @@ function withActor(row: Row): ReadSession {
   return Object.assign(sess, { [READ_WITH]: { actor, expire } });
 }
 
+/** Who holds a session as of now, for what stays open after its call; null once it has ended. */
+export async function actorOfSession(pool: Pool, hash: string, now: Date): Promise<Actor | null> {
+  const values = [hash, now, new Date(now.getTime() - ABSOLUTE)];
+  const { rows } = await pool.query<Row>({ name: 'read-session', text: READ, values });
+  return rows[0] ?? null;
+}
+
 /** Makes the session that `request.session.regenerate` prepared, in the transaction of the sign-in. */
 export async function insertSession(
   tx: Transaction,

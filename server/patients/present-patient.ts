@@ -99,6 +99,7 @@ export function presentPatient(
       risk: chart.risk,
       range: chart.range.range,
       withdrawn: [...chart.range.withdrawn],
+      rangeFlags: [...chart.range.flags],
       flags: flagsOf(current?.enrollment ?? null, chart.range),
     },
   };

@@ -1,10 +1,11 @@
 import { sql } from 'drizzle-orm';
 import type { PrescriptionAnswer } from '@shared/clinical/prescribing';
 import type { Bpm } from '@shared/units';
-import type { WithdrawalReason } from '@shared/clinical/withdrawal';
+import { isTodayFlag, withdrawalReasonsOf, type RangeFlag } from '@shared/clinical/range-flags';
 import type { Transaction } from '../database/client';
 import { statement } from '../database/statement';
-import { withdrawalOfPrescription } from './range-in-force-queries';
+import { presentFlag, type RawFlag } from '../patients/record-changes-queries';
+import { flagsOfPrescription } from './range-in-force-queries';
 
 /** What the floor needs of a result; the rest (candidates, workloads …) is most of its bulk. */
 type FloorAnswer = Pick<
@@ -27,9 +28,23 @@ export interface FloorRange {
   readonly answer: FloorAnswer;
   readonly restingHeartRate: Bpm | null;
   readonly rhythm: string | null;
-  /** Why it would lead no more now; of a range in force alone. */
-  readonly withdrawn: readonly WithdrawalReason[];
+  /** Why it does not lead now: why it is withdrawn, or that today's dose was missed; of a range in force alone. */
+  readonly withdrawn: readonly string[];
+  readonly flags: readonly RangeFlag[];
 }
+
+type FloorRow = Omit<FloorRange, 'withdrawn' | 'flags'> & { readonly flags: RawFlag[] };
+
+/** Of a visit that began when the day's dose was missed; such a range leads again tomorrow. */
+export const doseMissed = 'dose-missed';
+
+function withFlags({ flags: raw, ...row }: FloorRow): FloorRange {
+  const flags = raw.map(presentFlag);
+  const today = flags.some(isTodayFlag) ? [doseMissed] : [];
+  return { ...row, flags, withdrawn: [...withdrawalReasonsOf(flags), ...today] };
+}
+
+const at = sql`${sql.placeholder('at')}::timestamptz`;
 
 const COLUMNS = sql`
   p.id, p.patient_id AS "patientId", p.status = 'active' AS active,
@@ -40,10 +55,10 @@ const COLUMNS = sql`
     'pressureCeiling', p.result -> 'pressureCeiling', 'oxygenFloor', p.result -> 'oxygenFloor') AS answer,
   (p.inputs #>> '{resting,seated}')::float AS "restingHeartRate", p.inputs ->> 'rhythm' AS rhythm,
   CASE WHEN p.status = 'active'
-    THEN ${withdrawalOfPrescription}
-    ELSE '{}' END AS withdrawn`;
+    THEN ${flagsOfPrescription(at)}
+    ELSE '[]' END AS flags`;
 
-const readRanges = statement<FloorRange>(
+const readRanges = statement<FloorRow>(
   'floor-ranges',
   sql`
     SELECT ${COLUMNS} FROM prescriptions p
@@ -52,15 +67,15 @@ const readRanges = statement<FloorRange>(
 );
 
 /** The ranges in force of these patients, and these ranges whether or not they still are; in one statement. */
-export function floorRanges(
+export async function floorRanges(
   tx: Transaction,
   wanted: { readonly patientIds: readonly string[]; readonly rangeIds: readonly string[] },
+  now: Date,
 ): Promise<FloorRange[]> {
-  return readRanges(tx, wanted);
+  return (await readRanges(tx, { ...wanted, at: now })).map(withFlags);
 }
 
-const at = sql`${sql.placeholder('at')}::timestamptz`;
-const readRangeAt = statement<FloorRange>(
+const readRangeAt = statement<FloorRow>(
   'floor-range-at',
   sql`
     SELECT ${COLUMNS} FROM prescriptions p
@@ -76,5 +91,6 @@ export async function floorRangeAt(
   patientId: string,
   instant: Date,
 ): Promise<FloorRange | undefined> {
-  return (await readRangeAt(tx, { patientId, at: instant }))[0];
+  const [row] = await readRangeAt(tx, { patientId, at: instant });
+  return row && withFlags(row);
 }

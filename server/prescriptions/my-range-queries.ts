@@ -1,4 +1,5 @@
 import { sql } from 'drizzle-orm';
+import { isReviewFlag } from '@shared/clinical/range-flags';
 import type { MyRange } from '@shared/contracts/my-range-contract';
 import type { Transaction } from '../database/client';
 import { fail } from '../http/failure';
@@ -13,7 +14,10 @@ interface PlaceRow extends Record<string, unknown> {
 function told(range: RangeInForce, setBy: string): MyRange['range'] {
   const { lower, upper } = range.perceivedExertion;
   return {
-    state: range.withdrawn.length > 0 ? 'review' : 'in-force',
+    state: range.withdrawn.length > 0 ? 'review' : range.effortToday ? 'today' : 'in-force',
+    changes: range.flags
+      .filter((flag) => !isReviewFlag(flag))
+      .map(({ fact, effect, at }) => ({ fact, effect, at })),
     target: range.patientTarget,
     tenSecondCount: range.tenSecondCount,
     stayUnder: range.ceiling?.value ?? null,

@@ -1,4 +1,5 @@
 import type { PrescriptionAnswer, PrescriptionPolicy } from '@shared/clinical/prescribing';
+import { withdrawalReasonsOf } from '@shared/clinical/range-flags';
 import { physicianCausesOf } from '@shared/clinical/plan-limits';
 import type { prescriptionSchema } from '@shared/contracts/prescription-record-contract';
 import {
@@ -7,6 +8,7 @@ import {
   type PrescribingTasks,
 } from '@shared/contracts/prescriptions-waiting-contract';
 import type * as z from 'zod';
+import { presentFlag } from '../patients/record-changes-queries';
 import { withAge } from './patient-columns';
 import type { PrescriptionRow } from './prescriptions-queries';
 import type { RangeState } from './range-in-force-queries';
@@ -57,7 +59,7 @@ export function presentAwaiting(
   policy: PrescriptionPolicy,
   now: Date,
 ): AwaitingItem {
-  const { id, version, course, inputs, result, first, outdated, signedAt, signedBy } = row;
+  const { id, version, course, inputs, result, first, flags, signedAt, signedBy } = row;
   const proposal = { inputs, result, first, student: row.byStudent };
   return {
     id,
@@ -68,7 +70,7 @@ export function presentAwaiting(
     restingSeated: inputs.resting.seated,
     result: glanceOf(result),
     causes: physicianCausesOf(proposal, policy),
-    outdated,
+    outdated: withdrawalReasonsOf(flags.map(presentFlag)),
     signedAt: iso(signedAt),
     signedBy,
     inForce: range.range,
@@ -79,12 +81,12 @@ export function presentAwaiting(
 export function presentTasks(rows: readonly TaskRow[], now: Date): PrescribingTasks {
   const groups = taskKinds.map((kind) => {
     const ofKind = rows.filter((row) => row.kind === kind);
-    const items = ofKind.map(({ patient, prescriptionId, since, by, withdrawn }) => ({
+    const items = ofKind.map(({ patient, prescriptionId, since, by, flags }) => ({
       patient: withAge(patient, now),
       prescriptionId,
       since: isoOrNull(since),
       by,
-      withdrawn,
+      flags: flags.map(presentFlag),
     }));
     return { kind, total: ofKind[0]?.total ?? 0, items };
   });

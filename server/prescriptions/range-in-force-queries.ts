@@ -1,10 +1,16 @@
 import { sql, type SQL } from 'drizzle-orm';
 import type { RangeInForce as RangeInShort } from '@shared/contracts/patients-contract';
 import type { PrescriptionRequest } from '@shared/clinical/prescribing';
+import {
+  isReviewFlag,
+  isTodayFlag,
+  withdrawalReasonsOf,
+  type RangeFlag,
+} from '@shared/clinical/range-flags';
 import type { WithdrawalReason } from '@shared/clinical/withdrawal';
 import type { Transaction } from '../database/client';
 import { statement } from '../database/statement';
-import { withdrawalOf } from '../patients/record-changes-queries';
+import { presentFlag, rangeFlagsOf, type RawFlag } from '../patients/record-changes-queries';
 import { standingOf, type RangeInForce, type Standing } from './range-in-force';
 
 interface RangeRow {
@@ -15,16 +21,18 @@ interface RangeRow {
   readonly restingSeated: number;
   readonly icd: PrescriptionRequest['devices']['icd'];
   readonly activatedAt: Date | null;
-  readonly withdrawn: WithdrawalReason[];
-  readonly reviewDue: boolean | null;
+  readonly flags: RawFlag[];
 }
 
-/** Why the prescription `p` of the query around no longer holds, as an SQL array. */
-export const withdrawalOfPrescription = withdrawalOf({
-  patientId: sql`p.patient_id`,
-  madeAt: sql`coalesce(p.changed_at, p.created_at)`,
-  inputs: sql`p.inputs`,
-});
+/** What touches the prescription `p` of the query around, as a JSON array of `RawFlag`. */
+export const flagsOfPrescription = (now: SQL): SQL<RawFlag[]> =>
+  rangeFlagsOf({
+    patientId: sql`p.patient_id`,
+    madeAt: sql`coalesce(p.changed_at, p.created_at)`,
+    inputs: sql`p.inputs`,
+    activatedAt: sql`p.activated_at`,
+    now,
+  });
 
 /** What stands of a result; the rest (candidates, workloads …) is most of its bulk. */
 const signed = sql`jsonb_build_object(
@@ -35,10 +43,7 @@ const signed = sql`jsonb_build_object(
 const ofPatients = (which: SQL): SQL => sql`
   SELECT p.patient_id AS "patientId", p.id, p.status, ${signed} AS signed, p.activated_at AS "activatedAt",
          (p.inputs #>> '{resting,seated}')::float AS "restingSeated", p.inputs #> '{devices,icd}' AS icd,
-         ${withdrawalOfPrescription} AS withdrawn,
-         p.activated_at + make_interval(days => (
-           SELECT (content ->> 'reviewDueDays')::int FROM policies ORDER BY version DESC LIMIT 1
-         )) < ${sql.placeholder('now')}::timestamptz AS "reviewDue"
+         ${flagsOfPrescription(sql`${sql.placeholder('now')}::timestamptz`)} AS flags
     FROM prescriptions p
    WHERE p.patient_id = ANY(${sql.placeholder('patientIds')}::uuid[]) AND ${which}`;
 
@@ -49,13 +54,26 @@ const readStates = statement<RangeRow>(
 );
 
 function rangeOf(row: RangeRow): RangeInForce {
-  const { id: prescriptionId, status: _, signed: standing, activatedAt, reviewDue, ...facts } = row;
+  const {
+    id: prescriptionId,
+    status: _,
+    signed: standing,
+    activatedAt,
+    flags: raw,
+    ...facts
+  } = row;
+  const flags = raw.map(presentFlag);
+  const withdrawn = withdrawalReasonsOf(flags);
+  const effortToday = flags.some(isTodayFlag);
   return {
     ...facts,
-    ...standingOf(standing, row.withdrawn.length > 0),
+    ...standingOf(standing, withdrawn.length > 0 || effortToday),
     prescriptionId,
     activatedAt: activatedAt ?? new Date(NaN),
-    reviewDue: reviewDue === true,
+    withdrawn,
+    effortToday,
+    reviewDue: flags.some(isReviewFlag),
+    flags,
   };
 }
 
@@ -84,12 +102,20 @@ export interface RangeState {
   /** Null when none is in force. A withdrawn one leads by effort, its ceiling stays. */
   readonly range: RangeInShort | null;
   readonly withdrawn: readonly WithdrawalReason[];
-  /** The range is older than the policy's days of review; it stays in force. */
+  /** Someone has to look at it; it stays in force. */
   readonly reviewDue: boolean;
+  /** Each cause that touches it, the oldest first. */
+  readonly flags: readonly RangeFlag[];
   readonly awaitsPhysician: boolean;
 }
 
-const none: RangeState = { range: null, withdrawn: [], reviewDue: false, awaitsPhysician: false };
+const none: RangeState = {
+  range: null,
+  withdrawn: [],
+  reviewDue: false,
+  flags: [],
+  awaitsPhysician: false,
+};
 
 function inShort(row: RangeRow): Omit<RangeState, 'awaitsPhysician'> {
   const { prescriptionId, leadBy, target, ceiling, perceivedExertion, ...range } = rangeOf(row);
@@ -105,6 +131,7 @@ function inShort(row: RangeRow): Omit<RangeState, 'awaitsPhysician'> {
     },
     withdrawn: range.withdrawn,
     reviewDue: range.reviewDue,
+    flags: range.flags,
   };
 }
 

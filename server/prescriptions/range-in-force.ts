@@ -1,4 +1,5 @@
 import type { PrescriptionAnswer, PrescriptionRequest } from '@shared/clinical/prescribing';
+import type { RangeFlag } from '@shared/clinical/range-flags';
 import type { WithdrawalReason } from '@shared/clinical/withdrawal';
 
 /** What of an answer holds while it is in force. */
@@ -21,8 +22,12 @@ export interface RangeInForce extends Standing {
   readonly activatedAt: Date;
   /** Why it is withdrawn; [] while it holds. */
   readonly withdrawn: readonly WithdrawalReason[];
-  /** Older than the policy's days of review; it stays in force. */
+  /** A dose was missed: effort leads today alone. */
+  readonly effortToday: boolean;
+  /** Someone has to look at it; it stays in force. */
   readonly reviewDue: boolean;
+  /** Each cause that touches it, the oldest first. */
+  readonly flags: readonly RangeFlag[];
   readonly restingSeated: number;
   readonly icd: PrescriptionRequest['devices']['icd'];
 }
@@ -30,9 +35,9 @@ export interface RangeInForce extends Standing {
 /** The effort that leads where nothing else is known: rule 8, all else. */
 const usualEffort = { lower: 11, upper: 13 };
 
-/** What is left of a range: while it is withdrawn effort leads, no higher than usual, and the ceiling stays. */
-export function standingOf(signed: Standing, isWithdrawn: boolean): Standing {
-  if (!isWithdrawn) return signed;
+/** What is left of a range: while it is withdrawn, or today's dose was missed, effort leads, no higher than usual, and the ceiling stays. */
+export function standingOf(signed: Standing, effortLeads: boolean): Standing {
+  if (!effortLeads) return signed;
   const { ceiling, perceivedExertion } = signed;
   return {
     leadBy: 'perceived-exertion',

@@ -1,10 +1,10 @@
 import { sql, type SQL } from 'drizzle-orm';
 import type { PrescriptionAnswer, PrescriptionRequest } from '@shared/clinical/prescribing';
-import type { WithdrawalReason } from '@shared/clinical/withdrawal';
 import type { TaskKind } from '@shared/contracts/prescriptions-waiting-contract';
 import type { Queryable } from '../database/client';
+import type { RawFlag } from '../patients/record-changes-queries';
 import { patientColumns, type PatientColumns } from './patient-columns';
-import { withdrawalOfPrescription } from './range-in-force-queries';
+import { flagsOfPrescription } from './range-in-force-queries';
 
 /** A list of this length is a morning's work; more are counted, and shown as the first are done. */
 const awaitingShown = 50;
@@ -15,7 +15,7 @@ export interface AwaitingRow extends PatientColumns {
   readonly version: number;
   readonly inputs: PrescriptionRequest;
   readonly result: PrescriptionAnswer;
-  readonly outdated: WithdrawalReason[];
+  readonly flags: RawFlag[];
   readonly signedAt: Date | string;
   readonly signedBy: { readonly id: string; readonly displayName: string };
   readonly byStudent: boolean;
@@ -31,7 +31,7 @@ export async function awaitingPhysician(
   siteIds: readonly string[],
 ): Promise<AwaitingRow[]> {
   const { rows } = await db.execute<AwaitingRow>(sql`
-    SELECT p.id, p.version, p.inputs, p.result, ${withdrawalOfPrescription} AS outdated, p.signed_at AS "signedAt",
+    SELECT p.id, p.version, p.inputs, p.result, ${flagsOfPrescription(sql`p.signed_at`)} AS flags, p.signed_at AS "signedAt",
            json_build_object('id', u.id, 'displayName', u.display_name) AS "signedBy", u.student AS "byStudent",
            NOT EXISTS (SELECT FROM prescriptions f
              WHERE f.enrollment_id = p.enrollment_id AND f.activated_at IS NOT NULL) AS first,
@@ -52,7 +52,7 @@ export interface TaskRow extends PatientColumns {
   readonly prescriptionId: string | null;
   readonly since: Date | string | null;
   readonly by: string | null;
-  readonly withdrawn: WithdrawalReason[];
+  readonly flags: RawFlag[];
   readonly total: number;
 }
 
@@ -60,22 +60,20 @@ export interface TaskRow extends PatientColumns {
 const rangeTasks = (siteIds: readonly string[], now: Date): SQL => sql`
   SELECT CASE WHEN p.id IS NULL AND NOT EXISTS (
                 SELECT FROM prescriptions d WHERE d.enrollment_id = e.id AND d.status = 'draft') THEN 'without-range'
-              WHEN cardinality(w.reasons) > 0 THEN 'withdrawn'
-              WHEN p.activated_at + make_interval(days => (
-                SELECT (content ->> 'reviewDueDays')::int FROM policies ORDER BY version DESC LIMIT 1
-              )) < ${now.toISOString()}::timestamptz THEN 'review-due' END AS kind,
+              WHEN w.flags @? '$[*] ? (@.effect == "withdrawn")' THEN 'withdrawn'
+              WHEN w.flags @? '$[*] ? (@.effect == "review-due")' THEN 'review-due' END AS kind,
          e.id AS enrollment_id, p.id AS prescription_id, p.activated_at AS since, p.signed_by AS by_id,
-         coalesce(w.reasons, '{}') AS withdrawn
+         coalesce(w.flags, '[]') AS flags
     FROM enrollments e
     JOIN patients pt ON pt.id = e.patient_id AND pt.site_id = ANY(${uuids(siteIds)})
     LEFT JOIN prescriptions p ON p.patient_id = e.patient_id AND p.status = 'active'
-    LEFT JOIN LATERAL (SELECT ${withdrawalOfPrescription} AS reasons) w ON p.id IS NOT NULL
+    LEFT JOIN LATERAL (SELECT ${flagsOfPrescription(sql`${now.toISOString()}::timestamptz`)} AS flags) w ON p.id IS NOT NULL
    WHERE e.status = 'active'`;
 
 const draftTasks = (siteIds: readonly string[]): SQL => sql`
   SELECT CASE WHEN p.awaiting IS NULL THEN 'unsigned' ELSE 'awaiting-physician' END AS kind,
          p.enrollment_id, p.id AS prescription_id, coalesce(p.signed_at, p.changed_at, p.created_at) AS since,
-         coalesce(p.signed_by, p.created_by) AS by_id, '{}'::text[] AS withdrawn
+         coalesce(p.signed_by, p.created_by) AS by_id, '[]'::jsonb AS flags
     FROM prescriptions p
     JOIN patients pt ON pt.id = p.patient_id AND pt.site_id = ANY(${uuids(siteIds)})
    WHERE p.status = 'draft'`;
@@ -88,7 +86,7 @@ export async function prescribingTasks(
 ): Promise<TaskRow[]> {
   const { rows } = await db.execute<TaskRow>(sql`
     SELECT * FROM (
-      SELECT t.kind, t.prescription_id AS "prescriptionId", t.since, u.display_name AS by, t.withdrawn,
+      SELECT t.kind, t.prescription_id AS "prescriptionId", t.since, u.display_name AS by, t.flags,
              (count(*) OVER (PARTITION BY t.kind))::int AS total,
              row_number() OVER (PARTITION BY t.kind ORDER BY t.since, pt.family_name, pt.given_name, pt.id) AS place,
              ${patientColumns}

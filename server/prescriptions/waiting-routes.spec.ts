@@ -205,6 +205,7 @@ describe('GET /api/my/range', () => {
     await inForce(people, own.patientId);
     const told = {
       state: 'in-force',
+      changes: [],
       target: { lower: 91, upper: 105 },
       tenSecondCount: { lower: 16, upper: 17 },
       stayUnder: 108,
@@ -216,7 +217,12 @@ describe('GET /api/my/range', () => {
     };
     expect(await read()).toEqual({ site, range: told });
     await changeDrug(people, own.patientId);
-    const review = { state: 'review', target: null, tenSecondCount: null };
+    const review = {
+      state: 'review',
+      changes: [{ fact: 'rate-acting-drug-started', effect: 'withdrawn', at: expect.any(String) }],
+      target: null,
+      tenSecondCount: null,
+    };
     expect(await read()).toEqual({
       site,
       range: { ...told, ...review, effort: { lower: 11, upper: 13 } },

@@ -72,6 +72,7 @@ export async function worksheetOf(
           activatedAt: range.activatedAt.toISOString(),
           withdrawn: [...range.withdrawn],
           reviewDue: range.reviewDue,
+          flags: [...range.flags],
         }
       : null,
     lastPeak: await lastPeakOf(tx, patientId),

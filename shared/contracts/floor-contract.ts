@@ -4,6 +4,7 @@ import { leads, limitKinds } from '../clinical/prescribing';
 import { vitalPhases, vitalSignBounds } from '../clinical/vital-sign-bounds';
 import { instantField, noteField, textField, wholeNumberField } from './fields';
 import { appointmentStatusSchema } from './schedule-contract';
+import { rangeFlagSchema } from './range-flag';
 
 const instant = z.iso.datetime({ offset: true });
 
@@ -141,6 +142,9 @@ export const readingSchema = z.object({
 });
 export type Reading = z.infer<typeof readingSchema>;
 
+/** `PUT /api/appointments/:id/missed-dose`: whether the patient came without the day's dose of a rate-acting drug. */
+export const missedDoseSchema = z.strictObject({ missed: z.boolean() });
+
 /** `POST /api/session-records/:id/sign`; signing again answers the first signature. */
 export const signRecordRequestSchema = z
   .strictObject({
@@ -206,6 +210,8 @@ export const rosterItemSchema = z.object({
   restingHeartRate: z.number().nullable(),
   /** Why the range leads no more: something was entered in the record after it was made. */
   withdrawn: z.array(z.string()),
+  /** Each cause that touches the range in force now, the oldest first. */
+  rangeFlags: z.array(rangeFlagSchema),
   icd: z.object({
     status: z.enum(['none', 'present', 'unknown']),
     /** The lowest rate, bpm, at which it acts or listens. */

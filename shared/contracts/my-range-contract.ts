@@ -1,11 +1,17 @@
 import * as z from 'zod';
+import { rangeFlagSchema } from './range-flag';
 
 const beats = z.object({ lower: z.number(), upper: z.number() });
 
 /** What a patient is told of the own range; rates in beats a minute, effort on the Borg 6–20 scale. */
 const toldSchema = z.object({
-  /** `review`: something has changed, so effort leads until the team has set a new range. */
-  state: z.enum(['in-force', 'review']),
+  /**
+   * `review`: something has changed, so effort leads until the team has set a new range; `today`: a dose was missed, so
+   * effort leads today.
+   */
+  state: z.enum(['in-force', 'review', 'today']),
+  /** What has changed and when; not by whom. */
+  changes: z.array(rangeFlagSchema.pick({ fact: true, effect: true, at: true })),
   /** Null where effort leads. */
   target: beats.nullable(),
   tenSecondCount: beats.nullable(),

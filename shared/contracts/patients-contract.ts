@@ -12,6 +12,7 @@ import {
   timeZoneField,
   wholeNumberField,
 } from './fields';
+import { rangeFlagSchema } from './range-flag';
 
 export const diagnosisKinds = [
   'heart-attack',
@@ -148,6 +149,8 @@ export const patientSchema = z.object({
       range: rangeInForceSchema.nullable(),
       /** Why the range no longer holds; [] while it does. */
       withdrawn: z.array(z.enum(withdrawalReasons)),
+      /** Each cause that touches the range, the oldest first. */
+      rangeFlags: z.array(rangeFlagSchema),
       flags: z.array(patientFlagSchema),
     })
     .nullable(),

@@ -14,6 +14,7 @@ import {
 } from './prescription-answer';
 import { rangeCourseSchema, rangePatientSchema } from './prescriptions-worksheet-contract';
 import { computed } from './quantities';
+import { rangeFlagSchema } from './range-flag';
 
 // What waits for somebody: ranges for a physician's signature, and what a physiologist has to see to.
 
@@ -84,7 +85,8 @@ const taskSchema = z.object({
   /** Since when: written, signed, or in force; null for a patient without a range. */
   since: instant.nullable(),
   by: z.string().nullable(),
-  withdrawn: z.array(z.enum(withdrawalReasons)),
+  /** What touches the range in force, the oldest first. */
+  flags: z.array(rangeFlagSchema),
 });
 export type PrescribingTask = z.infer<typeof taskSchema>;
 

@@ -3,6 +3,7 @@ import { withdrawalReasons } from '../clinical/withdrawal';
 import { diagnosisKindSchema, enrollmentStatusSchema } from './patients-contract';
 import { prescriptionPolicySchema } from './policy-contract';
 import { prescribingInputsSchema } from './prescribing-inputs-contract';
+import { rangeFlagSchema } from './range-flag';
 
 // What a worksheet begins with, and whose range it is.
 
@@ -49,6 +50,8 @@ export const worksheetSchema = z.object({
       activatedAt: instant,
       withdrawn: z.array(z.enum(withdrawalReasons)),
       reviewDue: z.boolean(),
+      /** Each cause that touches it, the oldest first. */
+      flags: z.array(rangeFlagSchema),
     })
     .nullable(),
   /** The highest rate at exercise of the last signed session. */

@@ -5,6 +5,7 @@ import type { AppContext, AppSettings } from '../../server/app-context';
 import { openDatabase } from '../../server/database/client';
 import { featureRoutes } from '../../server/features';
 import { createLog } from '../../server/http/log';
+import { createChangeFeed } from '../../server/live/change-feed';
 import type { RouteDefinition } from '../../server/http/route';
 import { createTestDatabase, type TestDatabase } from '../database/test-database';
 import { testClock, type TestClock } from './test-clock';
@@ -57,6 +58,7 @@ function appOn(testDatabase: TestDatabase, options: TestAppOptions): TestApp {
     database,
     reportsDatabase: database,
     clock,
+    changes: createChangeFeed(database, log),
     payments: options.payments ?? null,
     mailer: options.mailer ?? null,
     settings: { ...testSettings, ...options.settings },
@@ -71,7 +73,10 @@ function appOn(testDatabase: TestDatabase, options: TestAppOptions): TestApp {
     testDatabase,
     logged,
     twin: () => appOn(testDatabase, { ...options, clock }),
-    close: () => database.$client.end(),
+    close: async () => {
+      await context.changes.close();
+      await database.$client.end();
+    },
   };
 }
 

@@ -62,6 +62,8 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
   'GET /api/health': { who: 'anyone', none: 'tells nothing of anybody' },
   'GET /api/openapi.json': { who: staffRoles, none: 'tells nothing of anybody' },
 
+  'GET /api/events': { who: 'signed-in', none: 'ids alone, of records that one may open' },
+
   'GET /api/auth/session': { who: 'anyone', ...ownAccount },
   'POST /api/auth/sign-in': { who: 'anyone', ...ownAccount },
   'POST /api/auth/sign-out': { who: 'anyone', ...ownAccount },
@@ -324,6 +326,10 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
   'POST /api/session-records/:id/sign': {
     who: floor,
     record: ({ sessionRecordId }) => ({ id: sessionRecordId }),
+  },
+  'PUT /api/appointments/:id/missed-dose': {
+    who: floor,
+    record: ({ appointmentId }) => ({ id: appointmentId, body: { missed: true } }),
   },
   'PUT /api/vital-signs/:id': {
     who: floor,

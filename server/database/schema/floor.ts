@@ -2,17 +2,20 @@ import { sql } from 'drizzle-orm';
 import {
   boolean,
   check,
+  date,
   index,
   integer,
   jsonb,
   pgEnum,
   pgTable,
+  primaryKey,
   text,
   unique,
   uniqueIndex,
   uuid,
 } from 'drizzle-orm/pg-core';
 import type { AnyPgColumn } from 'drizzle-orm/pg-core';
+import type { MachineSetting } from '@shared/clinical/progression/machine-setting';
 import { users } from './accounts';
 import { appointments } from './booking';
 import { instant, madeAt } from './columns';
@@ -116,4 +119,49 @@ export const vitalSigns = pgTable(
       sql`(${t.amends} is null) = (${t.amendmentReason} is null)`,
     ),
   ],
+);
+
+/** Work on a machine during a visit, as it was at the end of conditioning. The latest of a record counts; none is ever changed. */
+export const exerciseBouts = pgTable(
+  'exercise_bouts',
+  {
+    id: uuid().primaryKey(),
+    sessionRecordId: uuid()
+      .notNull()
+      .references(() => sessionRecords.id),
+    patientId: uuid()
+      .notNull()
+      .references(() => patients.id),
+    setting: jsonb().$type<MachineSetting>().notNull(),
+    /** Conditioning without pauses. */
+    minutes: integer(),
+    /** Bouts too short for heart rate to follow. */
+    shortBouts: boolean().notNull().default(false),
+    receivedAt: madeAt(),
+    recordedBy: uuid()
+      .notNull()
+      .references(() => users.id),
+  },
+  (t) => [
+    index('exercise_bouts_record').on(t.sessionRecordId, t.receivedAt),
+    check('exercise_bouts_minutes', sql`${t.minutes} between 1 and 180`),
+  ],
+);
+
+/** Whether a patient came without the day's dose of a rate-acting drug: effort leads that day alone. */
+export const missedDoses = pgTable(
+  'missed_doses',
+  {
+    patientId: uuid()
+      .notNull()
+      .references(() => patients.id),
+    localDate: date({ mode: 'string' }).notNull(),
+    /** False: it was said by mistake. */
+    missed: boolean().notNull(),
+    recordedAt: madeAt(),
+    recordedBy: uuid()
+      .notNull()
+      .references(() => users.id),
+  },
+  (t) => [primaryKey({ name: 'missed_doses_day', columns: [t.patientId, t.localDate] })],
 );

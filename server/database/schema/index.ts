@@ -8,4 +8,5 @@ export * from './messages';
 export * from './patients';
 export * from './prescriptions';
 export * from './program';
+export * from './progression';
 export * from './settings';

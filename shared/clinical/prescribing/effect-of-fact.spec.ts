@@ -7,6 +7,7 @@ const expected: Record<PrescriptionFact, FactEffect['effect']> = {
   'rate-acting-drug-started': 'withdrawn',
   'rate-acting-drug-raised': 'withdrawn',
   'rate-acting-drug-lowered': 'withdrawn',
+  'rate-acting-drug-changed': 'withdrawn',
   'rate-acting-drug-stopped': 'withdrawn',
   'rhythm-changed': 'withdrawn',
   'device-changed': 'withdrawn',

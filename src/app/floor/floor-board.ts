@@ -4,6 +4,7 @@ import type { Reading, Roster, RosterItem } from '@shared/contracts/floor-contra
 import type { AppointmentStatus } from '@shared/contracts/schedule-contract';
 import { interval } from 'rxjs';
 import { Bookings } from '../core/bookings';
+import { LiveChanges } from '../core/live-changes';
 import { type Problem, toProblem } from '../core/problem';
 import { EntryQueue, type Saved } from './entry-queue/entry-queue';
 import { FloorClient } from './floor-client';
@@ -61,6 +62,10 @@ export class FloorBoard {
     interval(tickEvery)
       .pipe(ended)
       .subscribe(() => this.#localNow.set(new Date()));
+    inject(LiveChanges)
+      .of(['range', 'visit'])
+      .pipe(takeUntilDestroyed())
+      .subscribe(() => void this.reload());
     interval(pollEvery)
       .pipe(takeUntilDestroyed())
       .subscribe(() => void this.#poll());
@@ -116,6 +121,12 @@ export class FloorBoard {
     } finally {
       await this.reload();
     }
+  }
+
+  /** @throws Problem when it was not written down */
+  async missedDose(appointmentId: string, missed: boolean): Promise<void> {
+    await this.#client.missedDose(appointmentId, missed);
+    await this.reload();
   }
 
   /** @throws Problem when it was not signed */

@@ -44,6 +44,11 @@ export class FloorClient {
     return readingSchema.parse(await firstValueFrom(answer));
   }
 
+  async missedDose(appointmentId: string, missed: boolean): Promise<void> {
+    const answer = this.#http.put(`/api/appointments/${appointmentId}/missed-dose`, { missed });
+    await firstValueFrom(answer);
+  }
+
   async sign(recordId: string, exercised: boolean): Promise<SessionRecord> {
     const answer = this.#http.post<unknown>(`/api/session-records/${recordId}/sign`, { exercised });
     return sessionRecordSchema.parse(await firstValueFrom(answer));

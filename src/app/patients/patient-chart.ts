@@ -4,7 +4,9 @@ import type {
   PatientRecord,
   RecordKind,
 } from '@shared/contracts/record-contract';
+import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { firstValueFrom } from 'rxjs';
+import { LiveChanges } from '../core/live-changes';
 import { Notices } from '../core/notices';
 import { toProblem } from '../core/problem';
 import { PatientAccess } from './patient-access';
@@ -23,6 +25,13 @@ export class PatientChart {
   readonly record = this.#client.record(
     computed(() => (this.#access.chart() ? this.id() : undefined)),
   );
+
+  constructor() {
+    inject(LiveChanges)
+      .of(['range'], this.id)
+      .pipe(takeUntilDestroyed())
+      .subscribe(() => this.reload());
+  }
 
   reload(): void {
     this.patient.reload();

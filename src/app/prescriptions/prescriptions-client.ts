@@ -31,6 +31,12 @@ export class PrescriptionsClient {
     });
   }
 
+  worksheetNow(patientId: string): Observable<Worksheet> {
+    return this.#http
+      .get(`/api/patients/${patientId}/worksheet`)
+      .pipe(map((answer) => worksheetSchema.parse(answer)));
+  }
+
   prescription(id: Signal<string | undefined>): HttpResourceRef<Prescription | undefined> {
     return httpResource(() => id() && `/api/prescriptions/${id()}`, { parse: parsed });
   }

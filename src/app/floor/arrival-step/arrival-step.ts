@@ -41,6 +41,16 @@ const choices: Partial<Record<AppointmentStatus, readonly Choice[]>> = {
         {{ choice.label }}
       </button>
     }
+    @if (visit().leadBy !== null && visit().status !== 'noshow') {
+      <button
+        type="button"
+        matButton="outlined"
+        [disabled]="busy()"
+        (click)="missed(!doseMissed())"
+      >
+        {{ doseMissed() ? 'Undo: today’s dose was taken' : 'Missed today’s heart-rate drug' }}
+      </button>
+    }
     <app-problem-message [problem]="problem()" />
   `,
   styleUrl: './arrival-step.scss',
@@ -53,11 +63,23 @@ export class ArrivalStep {
   protected readonly problem = signal<Problem | null>(null);
   protected readonly choices = computed(() => choices[this.visit().status] ?? []);
 
+  protected readonly doseMissed = computed(() =>
+    this.visit().rangeFlags.some(({ effect }) => effect === 'effort-today'),
+  );
+
   protected async take({ to }: Choice): Promise<void> {
+    await this.#doing(() => this.#board.changeStatus(this.visit().appointmentId, ...to));
+  }
+
+  protected async missed(missed: boolean): Promise<void> {
+    await this.#doing(() => this.#board.missedDose(this.visit().appointmentId, missed));
+  }
+
+  async #doing(work: () => Promise<void>): Promise<void> {
     this.busy.set(true);
     this.problem.set(null);
     try {
-      await this.#board.changeStatus(this.visit().appointmentId, ...to);
+      await work();
     } catch (error) {
       this.problem.set(toProblem(error));
     } finally {

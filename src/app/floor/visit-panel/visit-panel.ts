@@ -10,8 +10,8 @@ import {
   viewChild,
 } from '@angular/core';
 import { MatButton } from '@angular/material/button';
-import { withdrawalWords, type WithdrawalReason } from '@shared/clinical/withdrawal';
 import { Icon } from '../../ui/icon/icon';
+import { RangeFlags } from '../../ui/range-flags/range-flags';
 import { ArrivalStep } from '../arrival-step/arrival-step';
 import { CorrectionStep } from '../correction-step/correction-step';
 import { EntryQueue } from '../entry-queue/entry-queue';
@@ -25,9 +25,6 @@ import type { Visit, VisitReading } from '../visit/visit';
 
 type Step = 'arrival' | 'identity' | 'readings' | 'done';
 
-const inWords = (reason: string): string =>
-  withdrawalWords[reason as WithdrawalReason] ?? 'the record has changed';
-
 /** One patient's visit: who it is, what they are to keep to, and the next thing to do. */
 @Component({
   selector: 'app-visit-panel',
@@ -37,6 +34,7 @@ const inWords = (reason: string): string =>
     Icon,
     IdentityStep,
     MatButton,
+    RangeFlags,
     ReadingStep,
     ReadingsList,
     SignStep,
@@ -91,14 +89,13 @@ export class VisitPanel {
   });
 
   protected readonly notes = computed(() => {
-    const { icd, flags, withdrawn, monitored } = this.visit();
+    const { icd, flags, monitored } = this.visit();
     const rate = icd.lowestRate === null ? 'zones unknown' : `acts from ${icd.lowestRate}`;
     return [
       icd.status === 'present' ? `ICD, ${rate}` : null,
       icd.status === 'unknown' ? 'ICD not known: ask' : null,
       ...flags.map((flag) => flagWords[flag]),
       monitored ? null : 'not monitored',
-      withdrawn.length > 0 ? `Target withdrawn: ${withdrawn.map(inWords).join(', ')}` : null,
     ].filter((text) => text !== null);
   });
 

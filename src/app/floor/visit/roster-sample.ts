@@ -52,6 +52,7 @@ export function sampleItem(given: Partial<RosterItem> = {}): RosterItem {
     oxygenFloor: null,
     restingHeartRate: 62,
     withdrawn: [],
+    rangeFlags: [],
     icd: { status: 'none', lowestRate: null },
     flags: [],
     record: {

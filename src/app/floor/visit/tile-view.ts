@@ -132,8 +132,21 @@ function lastWords(visit: Visit, now: Date, timeZone: string): string[] {
   ];
 }
 
-function flagsOf({ icd, flags, ceiling, leadBy }: Visit): string[] {
+/** What took the lead from the rate, or asks for a review, in two words: the pad tells the rest. */
+function rangeFlagWords({ rangeFlags }: Visit): string[] {
+  const has = (wanted: Visit['rangeFlags'][number]['effect']): boolean =>
+    rangeFlags.some(({ effect }) => effect === wanted);
   return [
+    ...(has('withdrawn') ? ['range withdrawn'] : []),
+    ...(has('effort-today') ? ['dose missed'] : []),
+    ...(has('review-due') ? ['review due'] : []),
+  ];
+}
+
+function flagsOf(visit: Visit): string[] {
+  const { icd, flags, ceiling, leadBy } = visit;
+  return [
+    ...rangeFlagWords(visit),
     ...(leadBy === null ? [] : [ceiling === null ? 'no ceiling' : `ceiling ${ceiling.value}`]),
     ...(icd.lowestRate === null ? [] : [`ICD ${icd.lowestRate}`]),
     ...(icd.status === 'present' && icd.lowestRate === null ? ['ICD, zones unknown'] : []),

@@ -8,6 +8,7 @@ import { MyRangePage } from './my-range-page';
 const site = { name: 'Quayside', phone: '(555) 010-0142', timeZone: 'America/New_York' };
 const range: NonNullable<MyRange['range']> = {
   state: 'in-force',
+  changes: [],
   target: { lower: 91, upper: 105 },
   tenSecondCount: { lower: 16, upper: 17 },
   stayUnder: 108,
@@ -50,7 +51,15 @@ describe('MyRangePage', () => {
   });
 
   it('says that a range is being set anew', async () => {
-    const { text } = await open({ ...range, state: 'review', target: null, tenSecondCount: null });
+    const { text } = await open({
+      ...range,
+      state: 'review',
+      changes: [
+        { fact: 'rate-acting-drug-stopped', effect: 'withdrawn', at: '2026-12-01T15:00:00.000Z' },
+      ],
+      target: null,
+      tenSecondCount: null,
+    });
     expect(text).toContain('Something has changed. Your team will set a new range.');
   });
 

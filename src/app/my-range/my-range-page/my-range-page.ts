@@ -1,5 +1,7 @@
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
+import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { MatButton } from '@angular/material/button';
+import { LiveChanges } from '../../core/live-changes';
 import { failureOf, valueOf } from '../../core/resource-state';
 import { EmptyState } from '../../ui/empty-state/empty-state';
 import { LoadLine } from '../../ui/load-line/load-line';
@@ -8,6 +10,7 @@ import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { Skeleton } from '../../ui/skeleton/skeleton';
 import { formatDay } from '../../ui/words/dates';
 import { rangeText } from '../../ui/words/prescription-words';
+import { changeWords } from '../change-words';
 import { effortWords } from '../effort-words';
 import { MyRangeClient } from '../my-range-client';
 
@@ -43,9 +46,24 @@ export class MyRangePage {
     const value = this.mine()?.range?.stayUnder ?? null;
     return value === null ? null : { value, reason: '' };
   });
+  /** "A heart medicine was changed, Dec 1, 2026" */
+  protected readonly changes = computed(() => {
+    const mine = this.mine();
+    const changes = mine?.range?.changes ?? [];
+    return changes.map(
+      ({ fact, at }) => `${changeWords(fact)}, ${formatDay(at, mine?.site.timeZone ?? 'UTC')}`,
+    );
+  });
   protected readonly dial = computed(
     () => `tel:${this.mine()?.site.phone.replaceAll(/[^+\d]/g, '') ?? ''}`,
   );
+
+  constructor() {
+    inject(LiveChanges)
+      .of(['range'])
+      .pipe(takeUntilDestroyed())
+      .subscribe(() => this.reload());
+  }
 
   protected reload(): void {
     this.#resource.reload();

@@ -5,6 +5,7 @@ import { Icon } from '../../ui/icon/icon';
 import { LoadLine } from '../../ui/load-line/load-line';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
+import { RangeFlags } from '../../ui/range-flags/range-flags';
 import { Skeleton } from '../../ui/skeleton/skeleton';
 import { StateChip, type Tone } from '../../ui/state-chip/state-chip';
 import { diagnosisWords, flagWords, riskWords, sexWords } from '../../ui/words/clinical-words';
@@ -42,6 +43,7 @@ const parts: readonly Part[] = [
     LoadLine,
     PageHeader,
     ProblemMessage,
+    RangeFlags,
     RouterLink,
     RouterLinkActive,
     RouterOutlet,

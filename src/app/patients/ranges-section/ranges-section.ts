@@ -1,17 +1,19 @@
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
+import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { MatButton } from '@angular/material/button';
 import { RouterLink } from '@angular/router';
 import type { Prescription } from '@shared/contracts/prescription-record-contract';
-import { withdrawalWords } from '@shared/clinical/withdrawal';
 import { EmptyState } from '../../ui/empty-state/empty-state';
 import { Fact } from '../../ui/fact/fact';
 import { Icon } from '../../ui/icon/icon';
 import { LoadLine } from '../../ui/load-line/load-line';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { Quantity } from '../../ui/quantity/quantity';
+import { RangeFlags } from '../../ui/range-flags/range-flags';
 import { Skeleton } from '../../ui/skeleton/skeleton';
 import { StateChip, type Tone } from '../../ui/state-chip/state-chip';
 import { formatDay } from '../../ui/words/dates';
+import { LiveChanges } from '../../core/live-changes';
 import { PatientChart } from '../patient-chart';
 import { PatientsClient } from '../patients-client';
 import { failureOf, valueOf } from '../../core/resource-state';
@@ -32,6 +34,7 @@ interface Standing {
     MatButton,
     ProblemMessage,
     Quantity,
+    RangeFlags,
     RouterLink,
     Skeleton,
     StateChip,
@@ -57,16 +60,26 @@ export class RangesSection {
   protected readonly active = computed(() =>
     this.items()?.find(({ status }) => status === 'active'),
   );
-  /** What was entered since took the range out of force: effort leads, the ceiling stays. */
-  protected readonly withdrawn = computed(() =>
-    (valueOf(this.#chart.patient)?.clinical?.withdrawn ?? []).map(
-      (reason) => withdrawalWords[reason],
-    ),
+  protected readonly flags = computed(
+    () => valueOf(this.#chart.patient)?.clinical?.rangeFlags ?? [],
   );
-  readonly #timeZone = computed(() => valueOf(this.#chart.patient)?.site.timeZone ?? 'UTC');
+  /** What was entered since took the lead from the rate: effort leads, the ceiling stays. */
+  protected readonly effortLeads = computed(() =>
+    this.flags().some(({ effect }) => effect === 'withdrawn' || effect === 'effort-today'),
+  );
+  protected readonly timeZone = computed(
+    () => valueOf(this.#chart.patient)?.site.timeZone ?? 'UTC',
+  );
+
+  constructor() {
+    inject(LiveChanges)
+      .of(['range'], this.id)
+      .pipe(takeUntilDestroyed())
+      .subscribe(() => this.#resource.reload());
+  }
 
   protected readonly day = (instant: string | null) =>
-    instant === null ? null : formatDay(instant, this.#timeZone());
+    instant === null ? null : formatDay(instant, this.timeZone());
 
   protected target({ result }: Prescription): string | null {
     return result.target && `${Number(result.target.lower)}–${Number(result.target.upper)}`;

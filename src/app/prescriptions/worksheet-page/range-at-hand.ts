@@ -1,6 +1,8 @@
-import { computed, signal, type Signal } from '@angular/core';
+import { computed, linkedSignal, signal, type Signal } from '@angular/core';
+import { firstValueFrom } from 'rxjs';
 import type { Prescription } from '@shared/contracts/prescription-record-contract';
 import { failureOf, valueOf } from '../../core/resource-state';
+import type { Worksheet } from '@shared/contracts/prescriptions-worksheet-contract';
 import type { PrescriptionsClient } from '../prescriptions-client';
 
 /** The range on the worksheet as the server has it, with the record that it rests on and the versions beside it. */
@@ -10,6 +12,7 @@ export class RangeAtHand {
   readonly #read;
   readonly #worksheet;
   readonly #history;
+  readonly #client: PrescriptionsClient;
   readonly #written = signal<Prescription | null>(null);
 
   /**
@@ -22,6 +25,7 @@ export class RangeAtHand {
     patientId: Signal<string | undefined>,
     prescriptionId: Signal<string | undefined>,
   ) {
+    this.#client = client;
     this.#patientId = patientId;
     this.#prescriptionId = prescriptionId;
     this.#read = client.prescription(prescriptionId);
@@ -37,6 +41,10 @@ export class RangeAtHand {
     return id === undefined ? null : (valueOf(this.#read) ?? null);
   });
   readonly worksheet = computed(() => valueOf(this.#worksheet));
+  /** The range in force as it stands now, also where the fields still rest on an earlier record. */
+  readonly inForce = linkedSignal<Worksheet['inForce']>(() => this.worksheet()?.inForce ?? null);
+  /** The record changed under what was typed. */
+  readonly outdated = linkedSignal(() => this.worksheet() === undefined);
   readonly history = computed(() => valueOf(this.#history) ?? []);
   readonly failure = computed(
     () => failureOf(this.#read) ?? failureOf(this.#worksheet) ?? failureOf(this.#history),
@@ -59,6 +67,17 @@ export class RangeAtHand {
   /** Takes over what the server answered to a write. */
   wrote(prescription: Prescription): void {
     this.#written.set(prescription);
+  }
+
+  /** Somebody changed the record: read anew, but what was typed here is kept. */
+  async recordChanged(typed: boolean): Promise<void> {
+    const patientId = this.worksheet()?.patient.id;
+    if (patientId === undefined) return;
+    if (!typed) return this.reload();
+    const { inForce } = await firstValueFrom(this.#client.worksheetNow(patientId));
+    this.inForce.set(inForce);
+    this.outdated.set(true);
+    this.reloadHistory();
   }
 
   reloadHistory(): void {

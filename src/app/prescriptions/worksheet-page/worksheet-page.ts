@@ -8,6 +8,7 @@ import {
   signal,
   untracked,
 } from '@angular/core';
+import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { MatButton } from '@angular/material/button';
 import { ErrorStateMatcher } from '@angular/material/core';
 import { Router, RouterLink } from '@angular/router';
@@ -16,6 +17,7 @@ import { engineVersion } from '@shared/clinical/prescribing';
 import type { Candidate } from '@shared/clinical/prescribing/answer';
 import type { Prescription } from '@shared/contracts/prescription-record-contract';
 import { firstValueFrom } from 'rxjs';
+import { LiveChanges } from '../../core/live-changes';
 import { Notices } from '../../core/notices';
 import { type Problem, toProblem } from '../../core/problem';
 import { Session } from '../../core/session';
@@ -26,6 +28,7 @@ import { showFieldErrors } from '../../ui/field-error/zod-validator';
 import { LoadLine } from '../../ui/load-line/load-line';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
+import { RangeFlags } from '../../ui/range-flags/range-flags';
 import { Skeleton } from '../../ui/skeleton/skeleton';
 import { StateChip } from '../../ui/state-chip/state-chip';
 import { formatDay, formatTime } from '../../ui/words/dates';
@@ -38,7 +41,7 @@ import { ResultPanel } from '../result-panel/result-panel';
 import { WaysTable } from '../ways-table/ways-table';
 import { WorkloadsTable } from '../workloads-table/workloads-table';
 import { WorksheetState } from '../worksheet/worksheet-state';
-import { detailText, withdrawnText } from './head-words';
+import { detailText } from './head-words';
 import { loadLineFacts } from './load-line-facts';
 import { RangeAtHand } from './range-at-hand';
 import { causesText, signingQuestion } from './signing-words';
@@ -58,6 +61,7 @@ import { causesText, signingQuestion } from './signing-words';
     MatButton,
     PageHeader,
     ProblemMessage,
+    RangeFlags,
     RestsOn,
     ResultPanel,
     RouterLink,
@@ -151,10 +155,7 @@ export class WorksheetPage {
     const inputs = this.range.fixed()?.inputs ?? this.state.request();
     return worksheet ? detailText(worksheet, inputs?.risk) : null;
   });
-  protected readonly withdrawn = computed(() => {
-    const worksheet = this.range.worksheet();
-    return worksheet ? withdrawnText(worksheet) : null;
-  });
+  protected readonly flags = computed(() => this.range.inForce()?.flags ?? []);
   protected readonly standing = computed(() => {
     const stored = this.range.stored();
     return stored && standingOf(stored);
@@ -166,6 +167,12 @@ export class WorksheetPage {
   });
 
   constructor() {
+    inject(LiveChanges)
+      .of(['range'], () => this.range.worksheet()?.patient.id)
+      .pipe(takeUntilDestroyed())
+      .subscribe(() => {
+        if (!this.busy()) void this.range.recordChanged(this.state.changed());
+      });
     effect(() => {
       const worksheet = this.range.worksheet();
       const inputs = this.range.inputs();

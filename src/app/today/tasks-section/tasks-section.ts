@@ -1,8 +1,10 @@
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
+import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { MatButton } from '@angular/material/button';
 import { RouterLink } from '@angular/router';
-import { withdrawalWords } from '@shared/clinical/withdrawal';
+import { type RangeFlag, factWords } from '@shared/clinical/range-flags';
 import type { PrescribingTask, TaskKind } from '@shared/contracts/prescriptions-waiting-contract';
+import { LiveChanges } from '../../core/live-changes';
 import { failureOf, valueOf } from '../../core/resource-state';
 import { EmptyState } from '../../ui/empty-state/empty-state';
 import { Icon } from '../../ui/icon/icon';
@@ -59,11 +61,19 @@ const kinds: Readonly<Record<TaskKind, Kind>> = {
   },
 };
 
-function detailOf(kind: TaskKind, { since, by, withdrawn, patient }: PrescribingTask): string {
+const reasonsOf = (flags: readonly RangeFlag[], wanted: RangeFlag['effect']): string =>
+  flags
+    .filter(({ effect }) => effect === wanted)
+    .map(({ fact, detail }) =>
+      detail === null ? factWords[fact] : `${factWords[fact]}: ${detail}`,
+    )
+    .join('; ');
+
+function detailOf(kind: TaskKind, { since, by, flags, patient }: PrescribingTask): string {
   const day = since === null ? '' : formatDay(since, patient.site.timeZone);
   switch (kind) {
     case 'withdrawn':
-      return withdrawn.map((reason) => withdrawalWords[reason]).join('; ');
+      return reasonsOf(flags, 'withdrawn');
     case 'without-range':
       return patient.site.name;
     case 'unsigned':
@@ -71,7 +81,7 @@ function detailOf(kind: TaskKind, { since, by, withdrawn, patient }: Prescribing
     case 'awaiting-physician':
       return `signed by ${by ?? ''}, ${day}`;
     case 'review-due':
-      return `in force since ${day}`;
+      return `${reasonsOf(flags, 'review-due')}; in force since ${day}`;
   }
 }
 
@@ -104,6 +114,13 @@ export class TasksSection {
         })),
       })),
   );
+
+  constructor() {
+    inject(LiveChanges)
+      .of(['range', 'visit'])
+      .pipe(takeUntilDestroyed())
+      .subscribe(() => this.reload());
+  }
 
   protected reload(): void {
     this.#resource.reload();
