@@ -27,6 +27,7 @@ import { scheduleRoutes } from './schedule/schedule-routes';
 import { myProgressRoutes } from './patients/my-progress-routes';
 import { patientsRoutes } from './patients/patients-routes';
 import { sitesRoutes } from './settings/sites-routes';
+import { deskRoutes } from './today/desk-routes';
 
 /** Who acts when a place is taken or given back, inside that transaction and in this order. */
 const appointmentListeners: readonly AppointmentListener[] = [
@@ -55,6 +56,7 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...messagesRoutes,
     ...preferencesRoutes,
     ...reportsRoutes,
+    ...deskRoutes,
   ];
   return routes;
 }

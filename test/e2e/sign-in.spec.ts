@@ -7,7 +7,7 @@ const firstPages: readonly [Who, RegExp][] = [
   ['physiologist', /\/today/],
   ['physician', /\/today/],
   ['nurse', /\/floor/],
-  ['frontdesk', /\/schedule/],
+  ['frontdesk', /\/today/],
   ['director', /\/reports/],
   ['patient', /\/my\/sessions/],
 ];

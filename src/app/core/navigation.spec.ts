@@ -8,7 +8,7 @@ describe('landingFor', () => {
     ['nurse', '/floor'],
     ['exercise-physiologist', '/today'],
     ['physician', '/today'],
-    ['front-desk', '/schedule'],
+    ['front-desk', '/today'],
     ['director', '/reports'],
     ['administrator', '/settings'],
     ['patient', '/my/sessions'],

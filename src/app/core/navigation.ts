@@ -27,7 +27,7 @@ export const areas = [
     path: 'today',
     label: 'Today',
     icon: 'event-available',
-    roles: ['exercise-physiologist', 'physician', 'nurse'],
+    roles: ['exercise-physiologist', 'physician', 'nurse', 'front-desk'],
   },
   {
     path: 'patients',
@@ -81,7 +81,7 @@ const firstTasks: readonly (readonly [Role, AreaPath])[] = [
   ['nurse', 'floor'],
   ['exercise-physiologist', 'today'],
   ['physician', 'today'],
-  ['front-desk', 'schedule'],
+  ['front-desk', 'today'],
   ['director', 'reports'],
   ['administrator', 'settings'],
   ['patient', 'my/sessions'],

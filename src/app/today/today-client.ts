@@ -1,5 +1,6 @@
 import { HttpClient, type HttpResourceRef, httpResource } from '@angular/common/http';
 import { Injectable, inject } from '@angular/core';
+import { type DeskToday, deskTodaySchema } from '@shared/contracts/desk-contract';
 import {
   type Prescription,
   prescriptionSchema,
@@ -18,6 +19,13 @@ export type AwaitingList = z.infer<typeof awaitingListSchema>;
 @Injectable({ providedIn: 'root' })
 export class TodayClient {
   readonly #http = inject(HttpClient);
+
+  /** The front desk's day at the sites of who asks. */
+  desk(): HttpResourceRef<DeskToday | undefined> {
+    return httpResource(() => '/api/desk/today', {
+      parse: (answer) => deskTodaySchema.parse(answer),
+    });
+  }
 
   awaiting(): HttpResourceRef<AwaitingList | undefined> {
     return httpResource(() => '/api/prescriptions/awaiting-signature', {

@@ -5,6 +5,7 @@ import {
   Injector,
   afterNextRender,
   computed,
+  effect,
   inject,
   input,
   linkedSignal,
@@ -57,6 +58,8 @@ export class SchedulePage {
   protected readonly choice = inject(SiteChoice);
   protected readonly access = inject(BookingAccess);
 
+  /** A site to show, from the address; the one chosen last without. */
+  readonly site = input<string>();
   /** A date of the week to show, from the address; this week without. */
   readonly day = input<string>();
   /** The class date that is open, from the address. */
@@ -89,6 +92,13 @@ export class SchedulePage {
   protected readonly view = linkedSignal<'grid' | 'list'>(() =>
     this.#media.matchMedia('(min-width: 900px)').matches ? 'grid' : 'list',
   );
+
+  constructor() {
+    effect(() => {
+      const site = this.site();
+      if (site !== undefined) this.choice.choose(site);
+    });
+  }
 
   protected reload(): void {
     this.#dates.reload();
