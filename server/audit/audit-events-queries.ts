@@ -18,6 +18,8 @@ const PAGE = `
        AND ($2::uuid IS NULL OR e.actor_id = $2)
        AND ($3::uuid IS NULL OR e.patient_id = $3)
        AND ($4::text IS NULL OR starts_with(e.action, $4))
+       AND ($6::timestamptz IS NULL OR e.at >= $6)
+       AND ($7::timestamptz IS NULL OR e.at < $7)
      ORDER BY e.sequence DESC LIMIT $5)
   SELECT page.sequence, page.id, page.at, page.action, page.outcome, page.ip, page.details,
          page.object_type AS "objectType", page.object_id AS "objectId",
@@ -39,6 +41,12 @@ function present(row: EventRow): ListedEvent {
   };
 }
 
+/** Instants, the first inclusive, the second exclusive; null where the span is open. */
+export interface AuditSpan {
+  readonly from: Date | null;
+  readonly to: Date | null;
+}
+
 /**
  * Events of the audit, the newest first.
  * @param before the sequence to go on below, null from the newest
@@ -46,7 +54,11 @@ function present(row: EventRow): ListedEvent {
 export async function listAuditEvents(
   client: Pick<PoolClient, 'query'>,
   { actorId, patientId, action }: Pick<AuditQuery, 'actorId' | 'patientId' | 'action'>,
-  { limit, before }: { readonly limit: number; readonly before: number | null },
+  {
+    limit,
+    before,
+    span,
+  }: { readonly limit: number; readonly before: number | null; readonly span: AuditSpan },
 ): Promise<ListedEvent[]> {
   const { rows } = await client.query<EventRow>(PAGE, [
     before,
@@ -54,6 +66,8 @@ export async function listAuditEvents(
     patientId ?? null,
     action ?? null,
     limit,
+    span.from,
+    span.to,
   ]);
   return rows.map(present);
 }

@@ -1,33 +1,23 @@
-import { asc, eq } from 'drizzle-orm';
+import { eq } from 'drizzle-orm';
 import type { NewSite, Site, SiteChange, SiteDetails } from '@shared/contracts/sites-contract';
-import type { Queryable, Transaction } from '../database/client';
+import type { Transaction } from '../database/client';
 import { sites } from '../database/schema';
-
-const site = { id: sites.id, name: sites.name, timeZone: sites.timeZone };
-
-const details = {
-  ...site,
-  address: sites.address,
-  phone: sites.phone,
-  version: sites.version,
-};
-
-export const listSites = (db: Queryable): Promise<Site[]> =>
-  db.select(site).from(sites).orderBy(asc(sites.name));
-
-export const listSiteDetails = (db: Queryable): Promise<SiteDetails[]> =>
-  db.select(details).from(sites).orderBy(asc(sites.name));
+import { siteColumns, siteDetailColumns } from './sites-queries';
 
 /** @throws on constraint `sites_name_unique` */
 export async function insertSite(tx: Transaction, given: NewSite): Promise<Site> {
-  const [made] = await tx.insert(sites).values(given).returning(site);
+  const [made] = await tx.insert(sites).values(given).returning(siteColumns);
   if (!made) throw new Error('A site was not made');
   return made;
 }
 
 /** The site, locked as every planner of its classes locks it; undefined when there is none. */
 export async function lockSite(tx: Transaction, id: string): Promise<SiteDetails | undefined> {
-  const [row] = await tx.select(details).from(sites).where(eq(sites.id, id)).for('no key update');
+  const [row] = await tx
+    .select(siteDetailColumns)
+    .from(sites)
+    .where(eq(sites.id, id))
+    .for('no key update');
   return row;
 }
 
@@ -41,7 +31,7 @@ export async function updateSite(
     .update(sites)
     .set({ ...change, version: version + 1 })
     .where(eq(sites.id, id))
-    .returning(details);
+    .returning(siteDetailColumns);
   if (!row) throw new Error('A site that was locked is gone');
   return row;
 }

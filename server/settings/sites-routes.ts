@@ -11,7 +11,8 @@ import { created, ok } from '../http/answers';
 import { Failure } from '../http/failure';
 import { route } from '../http/route';
 import { changeSite } from './sites-service';
-import { insertSite, listSiteDetails, listSites } from './sites-repository';
+import { listSiteDetails, listSites } from './sites-queries';
+import { insertSite } from './sites-repository';
 
 export const sitesRoutes = [
   route({

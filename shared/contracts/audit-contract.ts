@@ -1,21 +1,38 @@
 import * as z from 'zod';
 import './zod';
-import { cursorField, pageOf } from './fields';
+import { cursorField, localDateField, pageOf } from './fields';
 
 /** `GET /api/audit`, the newest first. */
-export const auditQuerySchema = z.strictObject({
-  cursor: cursorField.optional(),
-  limit: z.coerce.number().int().min(1).max(100).default(50),
-  /** Who did it. */
-  actorId: z.uuid().optional(),
-  /** Whose record it concerns. */
-  patientId: z.uuid().optional(),
-  /** The beginning of an action, as in `prescription.` or `sign-in`. */
-  action: z
-    .string()
-    .regex(/^[a-z][a-z.-]{0,79}$/, 'Use small letters, dots and hyphens, as in prescription.signed')
-    .optional(),
-});
+export const auditQuerySchema = z
+  .strictObject({
+    cursor: cursorField.optional(),
+    limit: z.coerce.number().int().min(1).max(100).default(50),
+    /** Who did it. */
+    actorId: z.uuid().optional(),
+    /** Whose record it concerns. */
+    patientId: z.uuid().optional(),
+    /** The beginning of an action, as in `prescription.` or `sign-in`. */
+    action: z
+      .string()
+      .regex(
+        /^[a-z][a-z.-]{0,79}$/,
+        'Use small letters, dots and hyphens, as in prescription.signed',
+      )
+      .optional(),
+    /** The site whose calendar `from` and `to` are of. */
+    siteId: z.uuid().optional(),
+    /** Days of the site: `from` counts, `to` does not. */
+    from: localDateField.optional(),
+    to: localDateField.optional(),
+  })
+  .refine(({ siteId, from, to }) => siteId !== undefined || (from ?? to) === undefined, {
+    path: ['siteId'],
+    message: 'Choose the site whose days are meant',
+  })
+  .refine(({ from, to }) => from === undefined || to === undefined || from < to, {
+    path: ['to'],
+    message: '“To” must be after “from”; the last day is left out.',
+  });
 export type AuditQuery = z.infer<typeof auditQuerySchema>;
 
 export const auditEventSchema = z.object({

@@ -67,6 +67,37 @@ describe('the list of the audit', () => {
     await agent.get('/api/audit?cursor=abc').expect(422);
   });
 
+  it('lists by days of a site, the first inclusive and the last exclusive', async () => {
+    const { database } = house.context;
+    const auckland = await buildSite(database, { timeZone: 'Pacific/Auckland' });
+    // Midnight of December 2 in Auckland is 11:00 of December 1 in UTC.
+    await inTransaction(database, async (tx) => {
+      for (const at of [
+        '2026-12-01T10:59:59.999Z',
+        '2026-12-01T11:00:00Z',
+        '2026-12-02T10:59:59Z',
+        '2026-12-02T11:00:00Z',
+      ]) {
+        await recordAudit(tx, jobSource(new Date(at)), [
+          { action: 'day.told', objectType: 'day', objectId: at },
+        ]);
+      }
+    });
+    const days = async (span: string) =>
+      (await read(`action=day.told&siteId=${auckland.id}&${span}`)).items.map(
+        ({ objectId }) => objectId,
+      );
+    expect(await days('from=2026-12-02&to=2026-12-03')).toEqual([
+      '2026-12-02T10:59:59Z',
+      '2026-12-01T11:00:00Z',
+    ]);
+    expect(await days('to=2026-12-02')).toEqual(['2026-12-01T10:59:59.999Z']);
+    expect(await days('from=2026-12-03')).toEqual(['2026-12-02T11:00:00Z']);
+    await agent.get('/api/audit?from=2026-12-02').expect(422);
+    await agent.get(`/api/audit?siteId=${auckland.id}&from=2026-12-02&to=2026-12-02`).expect(422);
+    await agent.get(`/api/audit?siteId=${nurse.id}&from=2026-12-02`).expect(422);
+  });
+
   it('goes on page by page, each event once, the newest first', async () => {
     const ids: string[] = [];
     let cursor: string | null = null;

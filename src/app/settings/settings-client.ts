@@ -31,7 +31,7 @@ import {
 } from '@shared/contracts/sites-contract';
 import { type Observable, map } from 'rxjs';
 
-export type AuditFilter = Pick<AuditQuery, 'actorId' | 'patientId' | 'action'>;
+export type AuditFilter = Omit<AuditQuery, 'cursor' | 'limit'>;
 
 @Injectable({ providedIn: 'root' })
 export class SettingsClient {

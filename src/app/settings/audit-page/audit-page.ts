@@ -1,4 +1,3 @@
-import { DatePipe } from '@angular/common';
 import {
   ChangeDetectionStrategy,
   Component,
@@ -18,6 +17,7 @@ import { type AuditEvent, auditQuerySchema } from '@shared/contracts/audit-contr
 import { firstValueFrom } from 'rxjs';
 import { PagedList } from '../../core/paged-list';
 import { type Problem, toProblem } from '../../core/problem';
+import { valueOf } from '../../core/resource-state';
 import { EmptyState } from '../../ui/empty-state/empty-state';
 import { FieldError } from '../../ui/field-error/field-error';
 import { zodValidator } from '../../ui/field-error/zod-validator';
@@ -39,7 +39,6 @@ const text = () => new FormControl('', { nonNullable: true });
 @Component({
   selector: 'app-audit-page',
   imports: [
-    DatePipe,
     EmptyState,
     FieldError,
     MatButton,
@@ -66,8 +65,28 @@ export class AuditPage implements OnInit {
   #filter: AuditFilter = {};
 
   protected readonly people = signal<readonly Person[]>([]);
-  protected readonly zone = Intl.DateTimeFormat().resolvedOptions().timeZone;
+  readonly #sites = this.#client.sites();
+  protected readonly sites = computed(() => valueOf(this.#sites) ?? []);
+  readonly #siteId = signal('');
+  /** By whose clock times are shown, and whose days are filtered by. */
+  protected readonly site = computed(
+    () => this.sites().find(({ id }) => id === this.#siteId()) ?? this.sites()[0],
+  );
+  protected readonly clock = computed(() => {
+    const site = this.site();
+    return site ? `the clock of ${site.name}` : Intl.DateTimeFormat().resolvedOptions().timeZone;
+  });
+  readonly #format = computed(() => {
+    const timeZone = this.site()?.timeZone;
+    return new Intl.DateTimeFormat('en-US', {
+      dateStyle: 'medium',
+      timeStyle: 'medium',
+      ...(timeZone !== undefined && { timeZone }),
+    });
+  });
   protected readonly filters = new FormGroup({
+    from: text(),
+    to: text(),
     actorId: text(),
     recordNumber: text(),
     action: new FormControl('', {
@@ -82,7 +101,13 @@ export class AuditPage implements OnInit {
   );
   protected readonly problem = computed(() => this.#refused() ?? this.list.problem());
   protected readonly rows = computed(() =>
-    this.list.items()?.map((event) => ({ ...event, words: detailWords(event) })),
+    this.list.items()?.map((event) => ({
+      ...event,
+      words: detailWords(event),
+      when: this.#format()
+        .format(new Date(event.at))
+        .replace(/\u202f/g, ' '),
+    })),
   );
 
   ngOnInit(): void {
@@ -104,7 +129,8 @@ export class AuditPage implements OnInit {
   protected async look(): Promise<void> {
     this.filters.markAllAsTouched();
     const { actorId, action } = this.filters.getRawValue();
-    if (this.filters.controls.action.invalid) return;
+    const days = this.#days();
+    if (days === null || this.filters.controls.action.invalid) return;
     this.#refused.set(null);
     try {
       const patientId = await this.#patientOf(this.filters.controls.recordNumber.value.trim());
@@ -113,10 +139,29 @@ export class AuditPage implements OnInit {
         ...(actorId !== '' && { actorId }),
         ...(patientId !== null && { patientId }),
         ...(action !== '' && { action }),
+        ...days,
       });
     } catch (error) {
       this.#refused.set(toProblem(error));
     }
+  }
+
+  protected chooseSite(id: string): void {
+    this.#siteId.set(id);
+  }
+
+  /** The chosen days; null when they run backwards, which is then told at the field. */
+  #days(): Pick<AuditFilter, 'siteId' | 'from' | 'to'> | null {
+    const { from, to } = this.filters.getRawValue();
+    if (from !== '' && to !== '' && from >= to) {
+      this.filters.controls.to.setErrors({
+        server: 'Choose a day after the first; it is left out',
+      });
+      return null;
+    }
+    const site = this.site();
+    if (!site || (from === '' && to === '')) return {};
+    return { siteId: site.id, ...(from !== '' && { from }), ...(to !== '' && { to }) };
   }
 
   protected ofPerson(person: Person): void {
