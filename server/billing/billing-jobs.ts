@@ -4,19 +4,16 @@ import { payments } from '../database/schema';
 import { inTransaction } from '../database/transaction';
 import { job, type JobDefinition } from '../jobs/job';
 import { note, resolveAttempt } from './checkout-service';
-import { sendRefund } from './refunds-service';
+import { resolvePendingRefunds, sendRefund } from './refunds-service';
 import { expire } from './settling-service';
 
 /** Long enough for a payer's own return and the service's event to come first. */
 const UNDECIDED_MS = 5 * 60_000;
 
-const undecided = (now: Date) =>
-  and(
-    inArray(payments.status, ['preparing', 'pending']),
-    lt(payments.createdAt, new Date(now.getTime() - UNDECIDED_MS)),
-  );
+const undecided = (before: Date) =>
+  and(inArray(payments.status, ['preparing', 'pending']), lt(payments.createdAt, before));
 
-/** Asks the service about attempts that nobody told the end of, so that a lost event loses no payment. */
+/** Asks the service about attempts and refunds that nobody told the end of, so that a lost event loses no money. */
 const reconcilePayments = job({
   name: 'reconcile-payments',
   payload: z.object({}),
@@ -25,9 +22,10 @@ const reconcilePayments = job({
   run: async (_, context) => {
     const { payments: service, database } = context;
     if (!service) return;
-    const since = undecided(context.clock.now());
-    const rows = await database.select().from(payments).where(since).limit(200);
+    const before = new Date(context.clock.now().getTime() - UNDECIDED_MS);
+    const rows = await database.select().from(payments).where(undecided(before)).limit(200);
     for (const attempt of rows) await resolveAttempt(context, service, attempt);
+    await resolvePendingRefunds(context, before);
   },
 });
 

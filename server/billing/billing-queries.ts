@@ -3,6 +3,7 @@ import type { Charge, StaffCharge } from '@shared/contracts/billing-contract';
 import { atOwnSites } from '../accounts/access-policy';
 import type { Actor } from '../accounts/actor';
 import type { Queryable } from '../database/client';
+import { matchesSearch } from '../patients/patient-search-queries';
 import {
   appointments,
   charges,
@@ -86,6 +87,12 @@ function present(row: ChargeRow): Charge {
   };
 }
 
+const presentForStaff = (row: ChargeRow): StaffCharge => ({
+  ...present(row),
+  displayName: `${row.givenName} ${row.familyName}`,
+  recordNumber: row.recordNumber,
+});
+
 /** A patient's charges, newest first. */
 export async function chargesOf(tx: Queryable, patientId: string): Promise<Charge[]> {
   const rows = await selectCharges(tx)
@@ -103,6 +110,8 @@ export async function findCharge(tx: Queryable, id: string): Promise<Charge | un
 export interface ChargeFilter {
   readonly status?: Charge['status'] | undefined;
   readonly siteId?: string | undefined;
+  /** Nothing but blanks searches for nothing. */
+  readonly q?: string | undefined;
   readonly after?: readonly [createdAt: string, id: string] | undefined;
   readonly limit: number;
 }
@@ -116,7 +125,7 @@ const olderThan = ([createdAt, id]: readonly [string, string]): SQL | undefined 
 export async function staffCharges(
   tx: Queryable,
   actor: Actor,
-  { status, siteId, after, limit }: ChargeFilter,
+  { status, siteId, q, after, limit }: ChargeFilter,
 ): Promise<StaffCharge[]> {
   const rows = await selectCharges(tx)
     .where(
@@ -124,14 +133,17 @@ export async function staffCharges(
         atOwnSites(actor, patients.siteId),
         status && inArray(charges.status, [status]),
         siteId === undefined ? undefined : eq(patients.siteId, siteId),
+        q?.trim() ? matchesSearch(q) : undefined,
         after && olderThan(after),
       ),
     )
     .orderBy(desc(charges.createdAt), desc(charges.id))
     .limit(limit + 1);
-  return rows.map((row) => ({
-    ...present(row),
-    displayName: `${row.givenName} ${row.familyName}`,
-    recordNumber: row.recordNumber,
-  }));
+  return rows.map(presentForStaff);
+}
+
+/** One charge with whom it is for; undefined when there is none. */
+export async function findStaffCharge(tx: Queryable, id: string): Promise<StaffCharge | undefined> {
+  const [row] = await selectCharges(tx).where(eq(charges.id, id));
+  return row && presentForStaff(row);
 }

@@ -1,5 +1,6 @@
 import * as z from 'zod';
 import {
+  chargeHistorySchema,
   chargeSchema,
   chargesQuerySchema,
   chargesResponseSchema,
@@ -20,7 +21,8 @@ import { decodeCursor, pageOf } from '../http/cursor';
 import { fail, Failure } from '../http/failure';
 import { route, type RouteDefinition } from '../http/route';
 import { billingRoles, checkoutRoles } from './billing-policy';
-import { chargesOf, findCharge, staffCharges } from './billing-queries';
+import { chargesOf, findCharge, findStaffCharge, staffCharges } from './billing-queries';
+import { paymentsOf } from './charge-history-queries';
 import { checkOut } from './checkout-service';
 import { takeEvent } from './webhook-service';
 
@@ -133,4 +135,25 @@ const staffList = route({
   },
 });
 
-export const billingRoutes: RouteDefinition[] = [list, read, checkout, webhook, staffList];
+const history = route({
+  method: 'get',
+  path: '/api/billing/charges/:id',
+  summary: 'One charge with every attempt to pay it and what went back, by whom and when',
+  access: { roles: billingRoles },
+  audit: {
+    action: 'charge.read',
+    objectType: 'charge',
+    objectId: ({ input }) => input.params.id,
+    patientId: ({ result }) => result.body.charge.patientId,
+  },
+  request: { params: idParams },
+  response: { 200: chargeHistorySchema },
+  handler: async ({ tx, actor, input }) => {
+    const charge = await findStaffCharge(tx, input.params.id);
+    if (!charge) return fail('not-found');
+    await requirePatientAccess(tx, actor, charge.patientId);
+    return ok({ charge, payments: await paymentsOf(tx, charge.id) });
+  },
+});
+
+export const billingRoutes: RouteDefinition[] = [list, read, checkout, webhook, staffList, history];

@@ -1,11 +1,13 @@
-import { and, eq } from 'drizzle-orm';
+import { and, asc, eq, lt } from 'drizzle-orm';
 import * as z from 'zod';
+import type { RefundReason } from '@shared/contracts/billing-contract';
 import type { AppContext } from '../app-context';
 import { recordAudit, type AuditSource } from '../audit/audit-service';
 import type { Transaction } from '../database/client';
 import { payments, refunds } from '../database/schema';
 import { inTransaction } from '../database/transaction';
 import { addJob, job } from '../jobs/job';
+import type { Payments, PaymentsFailure, Refund } from '../payments/payments';
 import {
   insertRefund,
   lockCharge,
@@ -21,8 +23,6 @@ export const byNobody = (at: Date): AuditSource => ({
   sessionHash: null,
   at,
 });
-
-export type RefundReason = 'cancelled' | 'paid-after-cancelling' | 'paid-twice';
 
 /** Gives a payment back once: the row is committed before the service is asked, and its id is the idempotency key. */
 export async function requestRefund(
@@ -94,25 +94,64 @@ async function refuse(context: AppContext, { refund }: Given, code: string): Pro
   });
 }
 
+/** As the service has it: one that it took in is read, another is asked for with the same id as before. */
+async function refundAtService(
+  payments: Payments,
+  { refund, payment }: Given,
+  paymentIntentId: string,
+): Promise<Refund | PaymentsFailure> {
+  const { id: refundId, amountMinor, serviceRefundId } = refund;
+  if (serviceRefundId !== null) return payments.retrieveRefund(serviceRefundId);
+  const { chargeId } = payment;
+  return payments.createRefund({ refundId, chargeId, paymentIntentId, amountMinor });
+}
+
+/**
+ * Asks the payment service how a refund stands, or for it where it does not know it yet, and writes down the answer.
+ * @throws Error when the service does not answer, or there is none
+ */
+async function resolveRefund(context: AppContext, refundId: string): Promise<void> {
+  const given = await readRefund(context, refundId);
+  const paymentIntentId = given?.payment.servicePaymentId ?? null;
+  if (!given || given.refund.status !== 'pending' || paymentIntentId === null) return;
+  if (!context.payments) throw new Error('No payment service is configured');
+  const answer = await refundAtService(context.payments, given, paymentIntentId);
+  const settle = (serviceRefundId: string | null) =>
+    inTransaction(context.database, (tx) =>
+      settleRefund(tx, given, { serviceRefundId, now: context.clock.now() }),
+    );
+  if (answer.outcome === 'unavailable') throw new Error('The payment service did not answer');
+  if (answer.outcome !== 'refund') {
+    // The money is back already: by our own earlier call, or by hand on the service's pages.
+    if (answer.code === 'charge_already_refunded') return settle(null);
+    return refuse(context, given, answer.code ?? answer.outcome);
+  }
+  const { status, serviceRefundId } = answer;
+  if (status === 'failed') return refuse(context, given, 'failed');
+  if (status === 'succeeded') return settle(serviceRefundId);
+  await context.database.update(refunds).set({ serviceRefundId }).where(eq(refunds.id, refundId));
+}
+
 /** Asks the payment service to give the money back, and asks again with the same id until it has answered. */
 export const sendRefund = job({
   name: 'send-refund',
   payload: z.object({ refundId: z.uuid() }),
-  run: async ({ refundId }, context) => {
-    const given = await readRefund(context, refundId);
-    const paymentIntentId = given?.payment.servicePaymentId ?? null;
-    if (!given || given.refund.status !== 'pending' || paymentIntentId === null) return;
-    if (!context.payments) throw new Error('No payment service is configured');
-    const { chargeId } = given.payment;
-    const { amountMinor } = given.refund;
-    const asked = { refundId, chargeId, paymentIntentId, amountMinor };
-    const answer = await context.payments.createRefund(asked);
-    if (answer.outcome === 'unavailable') throw new Error('The payment service did not answer');
-    if (answer.outcome !== 'refund') return refuse(context, given, answer.code ?? answer.outcome);
-    if (answer.status === 'failed') return refuse(context, given, 'failed');
-    // A pending one is settled by the service's own event.
-    if (answer.status === 'pending') return;
-    const settled = { serviceRefundId: answer.serviceRefundId, now: context.clock.now() };
-    await inTransaction(context.database, (tx) => settleRefund(tx, given, settled));
-  },
+  run: ({ refundId }, context) => resolveRefund(context, refundId),
 });
+
+/** Asks about refunds that stay pending, so that one whose event was lost, or whose asking died, is settled all the same. */
+export async function resolvePendingRefunds(context: AppContext, before: Date): Promise<void> {
+  const rows = await context.database
+    .select({ id: refunds.id })
+    .from(refunds)
+    .where(and(eq(refunds.status, 'pending'), lt(refunds.createdAt, before)))
+    .orderBy(asc(refunds.createdAt))
+    .limit(200);
+  for (const { id } of rows) {
+    try {
+      await resolveRefund(context, id);
+    } catch (error) {
+      context.log.warn({ err: error, refundId: id }, 'refund undecided');
+    }
+  }
+}

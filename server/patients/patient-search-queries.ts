@@ -21,7 +21,12 @@ interface FoundRow {
   readonly planned: number;
 }
 
-const matches = sql`${patients.searchTerms} @@ patient_search_query(${sql.placeholder('q')})`;
+const found = (q: unknown): SQL => sql`${patients.searchTerms} @@ patient_search_query(${q})`;
+const matches = found(sql.placeholder('q'));
+
+/** Whether a patient is found by words of a name, a record number or a birth date: a condition for other lists of patients. */
+export const matchesSearch = (q: string): SQL => found(q);
+
 const isAfter = sql`(${patients.familyName}, ${patients.givenName}, ${patients.id}) >
   (${sql.placeholder('familyName')}, ${sql.placeholder('givenName')}, ${sql.placeholder('id')}::uuid)`;
 

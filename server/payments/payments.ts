@@ -15,6 +15,8 @@ export interface Payments {
   expireSession(sessionId: string): Promise<CheckoutSession | PaymentsFailure>;
   /** Gives back all or part of a payment; the same `refundId` never gives back twice. */
   createRefund(request: RefundRequest): Promise<Refund | PaymentsFailure>;
+  /** Reads a refund as it stands now: one may stay pending for days. */
+  retrieveRefund(serviceRefundId: string): Promise<Refund | PaymentsFailure>;
   /**
    * Verifies a webhook's signature over the body exactly as received, at most 300 s old, by any of
    * the configured secrets.

@@ -17,6 +17,25 @@ beforeEach(async () => {
 
 afterEach(() => desk.close());
 
+describe('a refund', () => {
+  it('is read as it stands, and one that there is not is not found', async () => {
+    const session = await desk.open();
+    await desk.pay(session);
+    const { paymentIntentId } = (await desk.payments.retrieveSession(
+      session.sessionId,
+    )) as typeof session;
+    const made = await desk.payments.createRefund({
+      refundId: '0193f0aa-0000-7000-8000-0000000000b1',
+      chargeId: checkoutRequest.chargeId,
+      paymentIntentId: paymentIntentId ?? '',
+      amountMinor: 2500,
+    });
+    if (made.outcome !== 'refund') throw new Error(made.outcome);
+    expect(await desk.payments.retrieveRefund(made.serviceRefundId)).toEqual(made);
+    expect(await desk.payments.retrieveRefund('re_none')).toMatchObject({ outcome: 'not-found' });
+  });
+});
+
 describe('one payment', () => {
   it('goes from session over pay page to signed webhooks', async () => {
     const session = await desk.open();

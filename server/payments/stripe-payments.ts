@@ -36,6 +36,7 @@ export function createPayments(config: PaymentConfig, timeoutMs = longestTimeout
     expireSession: (id) =>
       settled(async () => readSession(await stripe.checkout.sessions.expire(id))),
     createRefund: (request) => refund(stripe, request),
+    retrieveRefund: (id) => settled(async () => readRefund(await stripe.refunds.retrieve(id))),
     readWebhook: createWebhookReader(config.webhookSecrets),
   };
 }
@@ -84,15 +85,17 @@ function refund(stripe: Stripe, request: RefundRequest): Promise<Refund | Paymen
       },
       { idempotencyKey: request.refundId },
     );
-    return {
-      outcome: 'refund',
-      serviceRefundId: made.id,
-      status: refundStatus(made.status),
-      amountMinor: made.amount,
-      currency: made.currency,
-    };
+    return readRefund(made);
   });
 }
+
+const readRefund = ({ id, status, amount, currency }: Stripe.Refund): Refund => ({
+  outcome: 'refund',
+  serviceRefundId: id,
+  status: refundStatus(status),
+  amountMinor: amount,
+  currency,
+});
 
 function refundStatus(status: string | null): Refund['status'] {
   if (status === 'succeeded') return 'succeeded';

@@ -1,5 +1,5 @@
 import * as z from 'zod';
-import { cursorField } from './fields';
+import { cursorField, searchField } from './fields';
 
 // What a patient pays themselves. Money is an integer of minor units beside its ISO 4217 code.
 
@@ -55,6 +55,8 @@ export type StaffCharge = z.infer<typeof staffChargeSchema>;
 export const staffChargesRequestSchema = z.strictObject({
   status: z.enum(chargeStatuses).optional(),
   siteId: z.uuid().optional(),
+  /** A name or a record number, as in the search of patients. */
+  q: searchField(100).optional(),
   cursor: cursorField.nullish(),
   limit: z.int().min(1).max(100).default(25),
 });
@@ -62,6 +64,39 @@ export const staffChargesResponseSchema = z.object({
   items: z.array(staffChargeSchema),
   nextCursor: z.string().nullable(),
 });
+
+/** Who did it; null for Plimsoll itself, as when a class was closed or a charge was paid twice. */
+const person = z.object({ displayName: z.string(), isPatient: z.boolean() }).nullable();
+
+export const refundReasons = ['cancelled', 'paid-after-cancelling', 'paid-twice'] as const;
+export type RefundReason = (typeof refundReasons)[number];
+
+/** A charge as the desk answers for it: each attempt to pay, and what went back, with who and when. */
+export const chargeHistorySchema = z.object({
+  charge: staffChargeSchema,
+  payments: z.array(
+    z.object({
+      id: z.uuid(),
+      amountMinor: z.int(),
+      currency: z.string(),
+      status: z.enum(paymentStatuses),
+      /** Who opened the pay page. */
+      by: person,
+      at: instant,
+      settledAt: instant.nullable(),
+      refund: z
+        .object({
+          status: z.enum(refundStatuses),
+          reason: z.enum(refundReasons),
+          by: person,
+          at: instant,
+          settledAt: instant.nullable(),
+        })
+        .nullable(),
+    }),
+  ),
+});
+export type ChargeHistory = z.infer<typeof chargeHistorySchema>;
 
 export const webhookHeadersSchema = z.object({ 'stripe-signature': z.string().optional() });
 export const webhookResponseSchema = z.object({ received: z.literal(true) });

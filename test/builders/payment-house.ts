@@ -1,6 +1,7 @@
 import { randomUUID } from 'node:crypto';
 import request, { type Test } from 'supertest';
 import { featureJobs } from '../../server/features';
+import type { Payments } from '../../server/payments/payments';
 import { agentFor, type Agent } from './agent';
 import { buildPrice } from './money';
 import { openPaymentDesk, type PaymentDesk } from './payment-desk';
@@ -46,11 +47,16 @@ export const COMPLETED = 'checkout.session.completed';
 
 export const shown = { amountMinor: 2500, currency: 'USD' };
 
-/** The server with a payment service beside it; its clock starts at the present. */
-export async function openPaymentHouse(): Promise<PaymentHouse> {
+/**
+ * The server with a payment service beside it; its clock starts at the present.
+ * @param through what stands between the two
+ */
+export async function openPaymentHouse(
+  through: (payments: Payments) => Payments = (payments) => payments,
+): Promise<PaymentHouse> {
   const service = await openPaymentDesk();
   const clock = testClock(new Date().toISOString());
-  const testApp = await createTestApp({ payments: service.payments, clock });
+  const testApp = await createTestApp({ payments: through(service.payments), clock });
   const { database } = testApp.context;
   const site = await buildSite(database, { timeZone: 'UTC' });
   const price = await buildPrice(database);

@@ -290,6 +290,11 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
     who: ['front-desk', 'patient'],
     record: ({ chargeId }) => ({ id: chargeId, body: { amountMinor: 2500, currency: 'USD' } }),
   },
+  'GET /api/desk/today': { who: ['front-desk'], strangers: 200, record: () => ({}) },
+  'GET /api/billing/charges/:id': {
+    who: takingPayments,
+    record: ({ chargeId }) => ({ id: chargeId }),
+  },
   'POST /api/billing/charges': {
     who: takingPayments,
     strangers: 200,

@@ -1,9 +1,11 @@
-import { HttpClient } from '@angular/common/http';
-import { Injectable, inject } from '@angular/core';
+import { HttpClient, httpResource, type HttpResourceRef } from '@angular/common/http';
+import { Injectable, inject, type Signal } from '@angular/core';
 import {
+  chargeHistorySchema,
   checkoutResponseSchema,
   staffChargesResponseSchema,
   type Charge,
+  type ChargeHistory,
   type StaffCharge,
 } from '@shared/contracts/billing-contract';
 import { undeliveredResponseSchema, type Undelivered } from '@shared/contracts/messages-contract';
@@ -17,6 +19,8 @@ interface Page<T> {
 export interface ChargesAsk {
   /** Null lists every charge. */
   readonly status: Charge['status'] | null;
+  /** A name or a record number; '' for everybody. It travels in the body. */
+  readonly q: string;
   readonly cursor: string | null;
 }
 
@@ -25,10 +29,18 @@ export class BillingClient {
   readonly #http = inject(HttpClient);
 
   /** Charges of one's sites, newest first. */
-  charges({ status, cursor }: ChargesAsk): Observable<Page<StaffCharge>> {
+  charges({ status, q, cursor }: ChargesAsk): Observable<Page<StaffCharge>> {
+    const asked = { ...(status && { status }), ...(q !== '' && { q }), cursor };
     return this.#http
-      .post<unknown>('/api/billing/charges', { ...(status && { status }), cursor })
+      .post<unknown>('/api/billing/charges', asked)
       .pipe(map((answer) => staffChargesResponseSchema.parse(answer)));
+  }
+
+  /** One charge with every attempt to pay it and what went back. */
+  history(id: Signal<string>): HttpResourceRef<ChargeHistory | undefined> {
+    return httpResource(() => `/api/billing/charges/${id()}`, {
+      parse: (answer) => chargeHistorySchema.parse(answer),
+    });
   }
 
   /** Messages that reached nobody, newest first. */

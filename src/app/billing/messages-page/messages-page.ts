@@ -2,7 +2,9 @@ import { ChangeDetectionStrategy, Component, DestroyRef, inject } from '@angular
 import { MatButton } from '@angular/material/button';
 import { RouterLink } from '@angular/router';
 import type { Undelivered } from '@shared/contracts/messages-contract';
+import { areaOf, mayOpen } from '../../core/navigation';
 import { PagedList } from '../../core/paged-list';
+import { Session } from '../../core/session';
 import { EmptyState } from '../../ui/empty-state/empty-state';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
@@ -37,10 +39,11 @@ const reasons: Readonly<Record<Undelivered['reason'], string>> = {
 export class MessagesPage {
   readonly #client = inject(BillingClient);
 
-  protected readonly list = new PagedList(
+  protected readonly list = new PagedList<Undelivered>(
     (cursor) => this.#client.undelivered(cursor),
     inject(DestroyRef),
   );
+  protected readonly mayOpenPatients = mayOpen(areaOf('patients'), inject(Session).roles());
   protected readonly kinds = kinds;
   protected readonly reasons = reasons;
 

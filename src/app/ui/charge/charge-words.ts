@@ -33,6 +33,17 @@ export function dayOf(instant: string, { appointment }: Pick<Charge, 'appointmen
   }).format(new Date(instant));
 }
 
+/** `Dec 7, 2026, 9:00 AM`, in the class's zone, else in the reader's own. */
+export function momentOf(instant: string, { appointment }: Pick<Charge, 'appointment'>): string {
+  const format = new Intl.DateTimeFormat('en-US', {
+    dateStyle: 'medium',
+    timeStyle: 'short',
+    ...(appointment && { timeZone: appointment.timeZone }),
+  });
+  // Newer runtimes put a narrow no-break space before AM and PM, which our font does not hold.
+  return format.format(new Date(instant)).replace(/\u202f/g, ' ');
+}
+
 const refundStates: Readonly<Record<NonNullable<Charge['refund']>, ChargeState>> = {
   pending: { words: 'Being paid back', tone: 'due' },
   settled: { words: 'Paid back', tone: 'plain' },
