@@ -4,7 +4,7 @@ import { formExpand, missing, readParameters } from './api-error';
 import { onShelf } from './book';
 import type { Desk } from './desk';
 import { endpoint, type Call } from './endpoint';
-import { paymentIntent } from './known-payments';
+import { paymentIntent } from './payment-intent';
 import { listParameters, page } from './lists';
 
 /** What is only read: payments, charges, events and movements of money. */

@@ -13,7 +13,7 @@ import {
 import { onShelf } from './book';
 import type { Desk } from './desk';
 import { endpoint, type Call } from './endpoint';
-import { paymentIntent } from './known-payments';
+import { paymentIntent } from './payment-intent';
 import { listParameters, page } from './lists';
 import { makeId, type Charge, type Refund } from './objects';
 import { enterBalance } from './paying';
