@@ -90,6 +90,8 @@ export class MonthGrid {
   #label(cell: HTMLElement, localDate: string, known = this.#byDate()): void {
     const link = cell.querySelector('.fc-daygrid-day-number');
     const day = known.get(localDate) ?? { localDate, free: 0, booked: false };
+    // The calendar makes it an anchor that leads nowhere and takes Enter and Space: a button.
+    link?.setAttribute('role', 'button');
     link?.setAttribute('aria-label', dayInWords(day));
     link?.removeAttribute('title');
   }
