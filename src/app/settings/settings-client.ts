@@ -15,6 +15,14 @@ import {
 } from '@shared/contracts/audit-contract';
 import { patientSearchResponseSchema } from '@shared/contracts/patients-contract';
 import {
+  type PolicyPreview,
+  type PolicyPreviewRequest,
+  type PolicyPublishRequest,
+  type PolicyVersions,
+  policyPreviewSchema,
+  policyVersionsSchema,
+} from '@shared/contracts/policy-change-contract';
+import {
   type PolicyInForce,
   policyInForceSchema,
 } from '@shared/contracts/policy-in-force-contract';
@@ -94,6 +102,24 @@ export class SettingsClient {
     return httpResource(() => '/api/policy', {
       parse: (answer) => policyInForceSchema.parse(answer),
     });
+  }
+
+  policyVersions(): HttpResourceRef<PolicyVersions | undefined> {
+    return httpResource(() => '/api/policy/versions', {
+      parse: (answer) => policyVersionsSchema.parse(answer),
+    });
+  }
+
+  previewPolicy(request: PolicyPreviewRequest): Observable<PolicyPreview> {
+    return this.#http
+      .post('/api/policy/preview', request)
+      .pipe(map((answer) => policyPreviewSchema.parse(answer)));
+  }
+
+  publishPolicy(request: PolicyPublishRequest): Observable<PolicyInForce> {
+    return this.#http
+      .post('/api/policy/versions', request)
+      .pipe(map((answer) => policyInForceSchema.parse(answer)));
   }
 
   audit(filter: AuditFilter, cursor: string | null): Observable<AuditResponse> {

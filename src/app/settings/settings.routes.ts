@@ -1,7 +1,7 @@
 import type { Routes } from '@angular/router';
 import { allow } from '../core/access-guard';
 
-/** For administrators alone; the others of this area read the policy. */
+/** For administrators alone; the others of this area read the policy, and the medical director changes it. */
 const kept: Routes = [
   ...['people', 'people/patients'].map((path) => ({
     path,
@@ -51,6 +51,19 @@ export const settingsRoutes: Routes = [
     path: 'policy',
     title: 'Prescribing policy',
     loadComponent: async () => (await import('./policy-page/policy-page')).PolicyPage,
+  },
+  {
+    path: 'policy/history',
+    title: 'Versions of the policy',
+    loadComponent: async () =>
+      (await import('./policy-history-page/policy-history-page')).PolicyHistoryPage,
+  },
+  {
+    path: 'policy/change',
+    title: 'Change the policy',
+    canMatch: [allow({ roles: ['administrator', 'physician'] })],
+    loadComponent: async () =>
+      (await import('./change-policy-page/change-policy-page')).ChangePolicyPage,
   },
   ...kept.map((page) => ({ ...page, canMatch: [allow({ roles: ['administrator'] })] })),
 ];

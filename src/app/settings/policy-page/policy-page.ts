@@ -2,6 +2,7 @@ import { DatePipe } from '@angular/common';
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
 import { MatButton } from '@angular/material/button';
 import { RouterLink } from '@angular/router';
+import type { PolicyItem } from '@shared/contracts/policy-in-force-contract';
 import { failureOf, valueOf } from '../../core/resource-state';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
@@ -10,7 +11,15 @@ import { StateChip } from '../../ui/state-chip/state-chip';
 import { SettingsClient } from '../settings-client';
 import { policyNumber } from './policy-number';
 
-/** The numbers that ranges are worked out by; to read, not to change. */
+const shown = (item: PolicyItem) => ({
+  ...item,
+  shown: policyNumber(item.value, item),
+  shownDefault: policyNumber(item.default, item),
+  bounds: `${policyNumber(item.lowest, item)} to ${policyNumber(item.highest, item)}`,
+  changed: item.value !== item.default,
+});
+
+/** The policy in force: every number, where it comes from and since when it is what it is. */
 @Component({
   selector: 'app-policy-page',
   imports: [DatePipe, MatButton, PageHeader, ProblemMessage, RouterLink, Skeleton, StateChip],
@@ -22,13 +31,11 @@ export class PolicyPage {
   protected readonly read = inject(SettingsClient).policy();
   protected readonly problem = computed(() => failureOf(this.read));
   protected readonly policy = computed(() => valueOf(this.read));
-  protected readonly rows = computed(() =>
-    this.policy()?.items.map((item) => ({
-      ...item,
-      shown: policyNumber(item.value, item),
-      shownDefault: policyNumber(item.default, item),
-      bounds: `${policyNumber(item.lowest, item)} to ${policyNumber(item.highest, item)}`,
-      changed: item.value !== item.default,
-    })),
-  );
+  protected readonly chapters = computed(() => {
+    const items = this.policy()?.items ?? [];
+    return [...new Set(items.map(({ subject }) => subject))].map((title) => ({
+      title,
+      rows: items.filter(({ subject }) => subject === title).map(shown),
+    }));
+  });
 }
