@@ -22,6 +22,8 @@ export interface AppSettings {
   readonly demoAccounts: readonly DemoAccount[];
   /** Where `ng build` put the client; null: this process serves the API alone. */
   readonly clientFolder: string | null;
+  /** The program's name, as patients know it. */
+  readonly programName: string;
   readonly version: string;
   /** In tests every answer is held against its contract. */
   readonly checkResponses: boolean;

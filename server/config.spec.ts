@@ -43,6 +43,7 @@ describe('settings that are right', () => {
       smtp: { url: null },
       sessionSecret: SECRET,
       trustProxyHops: 0,
+      programName: 'Harbor Lane',
     });
   });
 

@@ -34,10 +34,15 @@ export interface Config {
   readonly stripe: PaymentConfig | null;
   /** `url` null: messages wait in the outbox until it is set. */
   readonly smtp: { readonly url: string | null; readonly from: string };
+  /** What patients know the program by. */
+  readonly programName: string;
   readonly logLevel: Settings['LOG_LEVEL'];
   /** How many proxies stand before the server and may tell the caller's address. */
   readonly trustProxyHops: number;
 }
+
+/** "Harbor Lane <desk@harborlane.example>" is Harbor Lane; an address alone stands for itself. */
+const senderName = (from: string): string => from.split('<')[0]?.trim() || from;
 
 /** One or more settings are wrong; the message names each and what is expected. */
 export class ConfigError extends Error {
@@ -170,6 +175,7 @@ export function loadConfig(env: Environment): Config {
     csrfSecret: readSecret('PLIMSOLL_CSRF_SECRET', all.PLIMSOLL_CSRF_SECRET, secretFile('csrf')),
     stripe: paymentConfig(all),
     smtp: { url: all.SMTP_URL ?? null, from: all.PLIMSOLL_MAIL_FROM },
+    programName: all.PLIMSOLL_PROGRAM ?? senderName(all.PLIMSOLL_MAIL_FROM),
     logLevel: all.LOG_LEVEL,
     trustProxyHops: all.PLIMSOLL_TRUST_PROXY,
   };

@@ -75,6 +75,8 @@ export const settings = z.object({
       'expected an address like Program <desk@rehab.example>',
     )
     .default('Harbor Lane <no-reply@harborlane.example>'),
+  /** Stands on what patients are handed. */
+  PLIMSOLL_PROGRAM: z.string().trim().min(1, 'expected the name of the program').max(80).optional(),
   DATABASE_URL: postgresUrl,
   DATABASE_OWNER_URL: postgresUrl.optional(),
   DATABASE_REPLICA_URL: postgresUrl.optional(),

@@ -19,6 +19,7 @@ import { remindOfAppointments } from './messages/reminder-listener';
 import type { AppointmentListener } from './schedule/appointment-events';
 import { messageOfAppointments } from './schedule/appointment-messages';
 import { floorRoutes } from './floor/floor-routes';
+import { myRangeRoutes } from './prescriptions/my-range-routes';
 import { policyRoutes } from './prescriptions/policy-routes';
 import { prescriptionsRoutes } from './prescriptions/prescriptions-routes';
 import { reportsRoutes } from './reports/reports-routes';
@@ -47,6 +48,7 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...liveRoutes,
     ...policyRoutes,
     ...prescriptionsRoutes,
+    ...myRangeRoutes,
     ...scheduleRoutes(appointmentListeners),
     ...floorRoutes,
     ...patientsRoutes,

@@ -25,6 +25,7 @@ const settingsOf = (config: Config): AppSettings => ({
   sessionSecret: config.sessionSecret,
   csrfSecret: config.csrfSecret,
   trustProxyHops: config.trustProxyHops,
+  programName: config.programName,
   demo: config.demo,
   demoAccounts: config.demo ? demoAccounts : [],
   clientFolder: existsSync(CLIENT_FOLDER) ? CLIENT_FOLDER : null,

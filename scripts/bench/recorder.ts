@@ -35,6 +35,7 @@ function contextOf(product: Product): AppContext {
       sessionSecret: product.secrets.session,
       csrfSecret: product.secrets.csrf,
       trustProxyHops: 0,
+      programName: 'Harbor Lane',
       demo: true,
       demoAccounts: [],
       clientFolder: null,

@@ -78,6 +78,8 @@ function send(route: RouteDefinition, response: Response, answer: AnyAnswer): vo
     (answer.body as (response: Response) => void)(response);
   } else if (kind && 'text' in kind) {
     response.type(kind.text).send(answer.body);
+  } else if (kind && 'file' in kind) {
+    response.type(kind.file).send(answer.body);
   } else if (answer.body === undefined || answer.body === null) {
     response.end();
   } else {

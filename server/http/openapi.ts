@@ -33,6 +33,9 @@ function requestBody({ body }: RequestShape): Json | undefined {
 function contentOf(answer: RouteDefinition['response'][number]): Json | undefined {
   if (answer === null || answer === undefined) return undefined;
   if ('stream' in answer) return { [answer.stream]: { schema: { type: 'string' } } };
+  if ('file' in answer) {
+    return { [answer.file]: { schema: { type: 'string', contentEncoding: 'binary' } } };
+  }
   if ('text' in answer) return { [answer.text]: { schema: { type: 'string' } } };
   return { 'application/json': { schema: schemaOf(answer, 'output') } };
 }

@@ -38,19 +38,28 @@ export interface TextAnswer {
 export interface StreamAnswer {
   readonly stream: string;
 }
+/** An answer of bytes, such as a PDF. */
+export interface FileAnswer {
+  readonly file: string;
+}
+export const fileAnswer = (contentType: string): FileAnswer => ({ file: contentType });
 export const textAnswer = (contentType: string): TextAnswer => ({ text: contentType });
 export const eventStream: StreamAnswer = { stream: 'text/event-stream' };
 
 /** What a route answers by status; null is no body. Failures need not be listed. */
-export type Answers = Readonly<Record<number, z.ZodType | TextAnswer | StreamAnswer | null>>;
+export type Answers = Readonly<
+  Record<number, z.ZodType | TextAnswer | FileAnswer | StreamAnswer | null>
+>;
 
 type BodyOf<S> = S extends z.ZodType
   ? { readonly body: z.input<S> }
   : S extends TextAnswer
     ? { readonly body: string }
-    : S extends StreamAnswer
-      ? { readonly body: (response: Response) => void }
-      : { readonly body?: undefined };
+    : S extends FileAnswer
+      ? { readonly body: Buffer }
+      : S extends StreamAnswer
+        ? { readonly body: (response: Response) => void }
+        : { readonly body?: undefined };
 
 export type Success<A extends Answers> = {
   [S in keyof A & number]: {

@@ -1,11 +1,8 @@
 import * as z from 'zod';
-import { myRangeSchema } from '@shared/contracts/my-range-contract';
 import { awaitingListSchema, tasksSchema } from '@shared/contracts/prescriptions-waiting-contract';
 import { worksheetSchema } from '@shared/contracts/prescriptions-worksheet-contract';
 import { ok } from '../http/answers';
-import { fail } from '../http/failure';
 import { route } from '../http/route';
-import { myRange } from './my-range-queries';
 import { policyInForce } from './policy-queries';
 import { presentAwaiting, presentTasks } from './present-prescription';
 import { prescribingRoles } from './prescriptions-policy';
@@ -13,7 +10,7 @@ import { rangesOf } from './range-in-force-queries';
 import { awaitingPhysician, prescribingTasks } from './waiting-queries';
 import { worksheetOf } from './worksheet-queries';
 
-/** What pages of ranges begin with: the worksheet, what waits for somebody, and the patient's own range. */
+/** What pages of ranges begin with: the worksheet, and what waits for somebody. */
 export const waitingRoutes = [
   route({
     method: 'get',
@@ -77,23 +74,5 @@ export const waitingRoutes = [
       const now = context.clock.now();
       return ok(presentTasks(await prescribingTasks(tx, actor.siteIds, now), now));
     },
-  }),
-  route({
-    method: 'get',
-    path: '/api/my/range',
-    summary: 'What a patient is told of the own range',
-    access: { roles: ['patient'] },
-    audit: {
-      action: 'my-range.read',
-      objectType: 'patient',
-      objectId: ({ actor }) => actor?.patientId ?? null,
-      patientId: ({ actor }) => actor?.patientId ?? null,
-    },
-    request: {},
-    response: { 200: myRangeSchema },
-    handler: async ({ tx, actor, context }) =>
-      actor.patientId === null
-        ? fail('not-found')
-        : ok(await myRange(tx, actor.patientId, context.clock.now())),
   }),
 ];

@@ -37,6 +37,7 @@ const testSettings: AppSettings = {
   sessionSecret: 'a secret of the specs alone, and a long one',
   csrfSecret: 'another secret of the specs alone, as long',
   trustProxyHops: 0,
+  programName: 'Harbor Lane',
   demo: false,
   demoAccounts: [],
   clientFolder: null,

@@ -188,6 +188,8 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
   },
   'GET /api/prescriptions/tasks': { who: prescribing, strangers: 200, record: () => ({}) },
   'GET /api/my/range': { who: ['patient'], none: 'one’s own range alone' },
+  'GET /api/my/range.pdf': { who: ['patient'], none: 'one’s own range alone' },
+  'GET /api/patients/:id/range.pdf': { who: chart, guarded: true },
   'GET /api/my/progress': { who: ['patient'], none: 'one’s own course alone' },
 
   'GET /api/reports/completion': {
