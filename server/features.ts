@@ -25,6 +25,7 @@ import { prescriptionsRoutes } from './prescriptions/prescriptions-routes';
 import { reportsRoutes } from './reports/reports-routes';
 import { scheduleJobs } from './schedule/schedule-jobs';
 import { scheduleRoutes } from './schedule/schedule-routes';
+import { progressionRoutes } from './progression/progression-routes';
 import { myProgressRoutes } from './patients/my-progress-routes';
 import { patientsRoutes } from './patients/patients-routes';
 import { sitesRoutes } from './settings/sites-routes';
@@ -52,6 +53,7 @@ export function featureRoutes(context: AppContext): RouteDefinition[] {
     ...scheduleRoutes(appointmentListeners),
     ...floorRoutes,
     ...patientsRoutes,
+    ...progressionRoutes,
     ...myProgressRoutes,
     ...billingRoutes,
     ...calendarRoutes,

@@ -10,6 +10,7 @@ import type { RangeFlag } from '@shared/clinical/range-flags';
 import type { AppointmentStatus } from '@shared/contracts/schedule-contract';
 import type { Transaction } from '../database/client';
 import { floorRanges, type FloorRange } from '../prescriptions/floor-ranges-queries';
+import { nextStarts } from '../progression/progression-queries';
 import { RANGE_WITHDRAWN, READING_COLUMNS, type ReadingRow } from './floor-repository';
 
 /** A reading as it is answered. */
@@ -53,6 +54,7 @@ interface VisitRow {
   readonly pacemaker: boolean | null;
   readonly insulin: boolean;
   readonly readings: ReadingRow[] | null;
+  readonly work: RosterItem['work'];
 }
 
 const VISITS = `
@@ -67,7 +69,10 @@ const VISITS = `
          EXISTS (SELECT FROM medications m
                   WHERE m.patient_id = p.id AND m.name ILIKE '%insulin%' AND m.entered_in_error_at IS NULL
                     AND (m.stopped_on IS NULL OR m.stopped_on > a.local_date)) AS insulin,
-         vitals.readings
+         vitals.readings,
+         (SELECT json_build_object('setting', b.setting, 'minutes', b.minutes, 'shortBouts', b.short_bouts)
+            FROM exercise_bouts b WHERE b.session_record_id = r.id
+           ORDER BY b.received_at DESC, b.id DESC LIMIT 1) AS work
     FROM appointments a
     JOIN patients p ON p.id = a.patient_id
     LEFT JOIN session_records r ON r.appointment_id = a.id
@@ -107,6 +112,13 @@ function rangeOf(row: VisitRow, ranges: readonly FloorRange[]): VisitRange {
   return { range, withdrawn: row.rangeWithdrawn, flags, changed };
 }
 
+/** The range in force, while nothing has withdrawn it. */
+function leadingRangeOf({ patientId }: VisitRow, ranges: readonly FloorRange[]): string | null {
+  const active = ranges.find((range) => range.active && range.patientId === patientId);
+  const isWithdrawn = active?.flags.some(({ effect }) => effect === 'withdrawn') ?? true;
+  return isWithdrawn ? null : (active?.id ?? null);
+}
+
 const irregular: readonly string[] = ['atrial-fibrillation', 'atrial-flutter', 'frequent-ectopy'];
 
 function flagsOf(row: VisitRow, { range, changed }: VisitRange): FloorFlag[] {
@@ -139,7 +151,11 @@ function presentRange({ range, withdrawn, flags }: VisitRange) {
   };
 }
 
-function presentVisit(row: VisitRow, ranges: readonly FloorRange[]): RosterItem {
+function presentVisit(
+  row: VisitRow,
+  ranges: readonly FloorRange[],
+  startOf: Awaited<ReturnType<typeof nextStarts>>,
+): RosterItem {
   const visitRange = rangeOf(row, ranges);
   const { appointmentId, patientId, displayName, familyName, recordNumber, birthDate } = row;
   return {
@@ -152,6 +168,8 @@ function presentVisit(row: VisitRow, ranges: readonly FloorRange[]): RosterItem 
     ...presentRange(visitRange),
     icd: { status: row.icdStatus ?? 'unknown', lowestRate: row.icdLowest },
     flags: flagsOf(row, visitRange),
+    nextStart: startOf(row.patientId, leadingRangeOf(row, ranges)),
+    work: row.work,
     record: row.recordId === null ? null : { id: row.recordId, ...presentRecordFacts(row) },
     readings: (row.readings ?? []).map(presentReading),
   };
@@ -171,7 +189,7 @@ const presentRecordFacts = (row: RecordFacts) => ({
 });
 
 /**
- * The roster of a class date in the order of its places, in two statements whatever its size; null when there is no
+ * The roster of a class date in the order of its places, in three statements whatever its size; null when there is no
  * such class date.
  * @param siteIds the sites whose patients the caller may see
  */
@@ -187,16 +205,18 @@ export async function classRoster(
     values: [classDateId],
   });
   const visible = rows.filter(({ siteId }) => siteIds.includes(siteId));
+  const patientIds = visible.map(({ patientId }) => patientId);
+  const startOf = await nextStarts(tx, patientIds);
   const ranges = await floorRanges(
     tx,
     {
-      patientIds: visible.map(({ patientId }) => patientId),
+      patientIds,
       rangeIds: visible.flatMap(({ rangeId }) => rangeId ?? []),
     },
     now,
   );
   return {
-    items: visible.map((row) => presentVisit(row, ranges)),
+    items: visible.map((row) => presentVisit(row, ranges, startOf)),
     notShown: rows.length - visible.length,
   };
 }
@@ -207,11 +227,12 @@ export async function rosterStamp(tx: Transaction, classDateId: string): Promise
     name: 'floor-roster-stamp',
     text: `
       SELECT concat_ws('.', count(*), sum(a.version), count(r.id), count(r.signed_at), sum(vitals.count),
-                       extract(epoch FROM max(vitals.latest))) AS stamp
+                       extract(epoch FROM max(vitals.latest)), sum(work.count)) AS stamp
         FROM appointments a
         LEFT JOIN session_records r ON r.appointment_id = a.id
         LEFT JOIN LATERAL (
           SELECT count(*), max(v.received_at) AS latest FROM vital_signs v WHERE v.session_record_id = r.id) vitals ON true
+        LEFT JOIN LATERAL (SELECT count(*) FROM exercise_bouts b WHERE b.session_record_id = r.id) work ON true
        WHERE a.class_date_id = $1`,
     values: [classDateId],
   });

@@ -11,11 +11,13 @@ import {
   signRecordRequestSchema,
   type SessionRecord,
 } from '@shared/contracts/floor-contract';
+import { boutRequestSchema, boutSchema } from '@shared/contracts/progression-contract';
 import { requirePatientAccess } from '../accounts/access-service';
 import { created, noContent, ok } from '../http/answers';
 import { fail, Failure } from '../http/failure';
 import { route, type Call, type RouteDefinition } from '../http/route';
 import { findClassDate } from '../schedule/class-dates-queries';
+import { presentBout, recordBout } from './bouts-service';
 import { floorReaders, floorWriters } from './floor-policy';
 import { classRoster, presentReading, rosterStamp, sessionRecord } from './floor-queries';
 import type { ReadingRow } from './floor-repository';
@@ -156,6 +158,26 @@ const recordVitals = route({
   },
 });
 
+const recordWork = route({
+  method: 'put',
+  path: '/api/exercise-bouts/:id',
+  summary: 'Stores how a machine was set during a visit; the same again answers the same',
+  access: writers,
+  audit: 'handler',
+  request: { params: idParams, body: boutRequestSchema },
+  response: { 200: boutSchema, 201: boutSchema },
+  handler: async (call) => {
+    const { params, body } = call.input;
+    const outcome = await recordBout(floorCall(call), params.id, body);
+    if (outcome instanceof Failure) return outcome;
+    const { first, row } = outcome;
+    const action = first ? 'exercise-bout.recorded' : 'exercise-bout.sent-again';
+    const { id, patientId } = row;
+    call.audit({ action, objectType: 'exercise-bout', objectId: id, patientId });
+    return first ? created(presentBout(row)) : ok(presentBout(row));
+  },
+});
+
 const amend = route({
   method: 'post',
   path: '/api/vital-signs/:id/amendments',
@@ -215,6 +237,7 @@ export const floorRoutes: RouteDefinition[] = [
   read,
   begin,
   recordVitals,
+  recordWork,
   amend,
   missedDose,
   sign,

@@ -8,6 +8,7 @@ import type { Actor } from '../accounts/actor';
 import type { Transaction } from '../database/client';
 import { fail, Failure } from '../http/failure';
 import { doseMissed, floorRangeAt } from '../prescriptions/floor-ranges-queries';
+import { proposeAfterSession } from '../progression/progression-service';
 import { fulfilAppointment } from '../schedule/transition-service';
 import { placementOf, sameReading, sameSet, statusOfEntry, type SentReading } from './floor-policy';
 import {
@@ -242,7 +243,7 @@ export async function amendReading(
 }
 
 /**
- * Signs a record and marks its visit as done; signing again changes nothing.
+ * Signs a record, marks its visit as done and works out the next step; signing again changes nothing.
  * @param exercised null: whether a reading at exercise is there
  * @returns whether this call signed, or `not-found`, `forbidden`, `not-checked-in`
  */
@@ -263,5 +264,7 @@ export async function signRecord(
   }
   const outcome = await writeSignature(tx, id, { userId: actor.id, now, exercised });
   const visit = await fulfilAppointment(tx, { actor, now }, appointmentId, outcome);
-  return visit instanceof Failure ? visit : { first: true, row: id, patientId };
+  if (visit instanceof Failure) return visit;
+  await proposeAfterSession(tx, { recordId: id, patientId, now });
+  return { first: true, row: id, patientId };
 }

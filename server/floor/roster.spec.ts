@@ -44,6 +44,8 @@ describe('the roster', () => {
         icd: { status: 'unknown', lowestRate: null },
         withdrawn: [],
         rangeFlags: [],
+        nextStart: null,
+        work: null,
         record: { id: recordId, signedAt: null },
         readings: [{ heartRate: 100, placement: 'in' }],
       },
@@ -92,8 +94,8 @@ describe('the roster', () => {
     };
     const one = await statements(1);
     expect(await statements(12)).toBe(one);
-    // Session, begin, two of the roster's own, audit, commit.
-    expect(one).toBe(6);
+    // Session, begin, three of the roster's own, audit, commit.
+    expect(one).toBe(7);
   });
 
   it('has a stamp that moves with every write', async () => {

@@ -4,6 +4,7 @@ import { leads, limitKinds } from '../clinical/prescribing';
 import { vitalPhases, vitalSignBounds } from '../clinical/vital-sign-bounds';
 import { instantField, noteField, textField, wholeNumberField } from './fields';
 import { appointmentStatusSchema } from './schedule-contract';
+import { boutSchema, nextStartSchema } from './progression-contract';
 import { rangeFlagSchema } from './range-flag';
 
 const instant = z.iso.datetime({ offset: true });
@@ -212,6 +213,10 @@ export const rosterItemSchema = z.object({
   withdrawn: z.array(z.string()),
   /** Each cause that touches the range in force now, the oldest first. */
   rangeFlags: z.array(rangeFlagSchema),
+  /** What this session starts with; null before the first. */
+  nextStart: nextStartSchema.nullable(),
+  /** The work of this visit as it was written down last. */
+  work: boutSchema.pick({ setting: true, minutes: true, shortBouts: true }).nullable(),
   icd: z.object({
     status: z.enum(['none', 'present', 'unknown']),
     /** The lowest rate, bpm, at which it acts or listens. */

@@ -1,7 +1,7 @@
 import { roles, type Role } from '@shared/contracts/accounts-contract';
 import { appointments } from '../../server/database/schema';
 import { agentFor, visitor, type Agent } from './agent';
-import { buildSessionRecord } from './floor';
+import { buildProposal, buildSessionRecord } from './floor';
 import { buildPatientWithAccount, buildSite, buildUser } from './people';
 import { workedExample } from './prescription-request';
 import { buildCharge } from './money';
@@ -20,6 +20,7 @@ export interface PatientRecord {
   readonly chargeId: string;
   readonly sessionRecordId: string;
   readonly readingId: string;
+  readonly proposalId: string;
 }
 
 type Site = Awaited<ReturnType<typeof buildSite>>;
@@ -80,17 +81,20 @@ async function buildRecord(house: TestApp, site: Site, clinician: Agent): Promis
     recordedBy: user.id,
   };
   const { record, reading } = await buildSessionRecord(database, visit);
+  const prescriptionId = (drafted.body as { id: string }).id;
+  const proposalId = await buildProposal(database, { ...visit, record: record.id, prescriptionId });
   return {
     agent: await agentFor(house, user),
     siteId: site.id,
     patientId: patient.id,
-    prescriptionId: (drafted.body as { id: string }).id,
+    prescriptionId,
     classDateId: classDate.id,
     classTemplateId: classDate.templateId,
     appointmentId: appointment?.id ?? '',
     chargeId: charge.id,
     sessionRecordId: record.id,
     readingId: reading.id,
+    proposalId,
   };
 }
 

@@ -1,7 +1,12 @@
 import { eq } from 'drizzle-orm';
 import { v7 as uuidv7 } from 'uuid';
 import type { Database } from '../../server/database/client';
-import { appointments, sessionRecords, vitalSigns } from '../../server/database/schema';
+import {
+  appointments,
+  progressionProposals,
+  sessionRecords,
+  vitalSigns,
+} from '../../server/database/schema';
 import { buildUser } from './people';
 import { buildPrescription } from './prescriptions';
 import { buildBookable } from './schedule';
@@ -22,21 +27,25 @@ export interface VisitOptions {
   readonly range?: boolean | Partial<Parameters<typeof buildPrescription>[1]>;
 }
 
-/** A patient in a class, checked in and with the worked example in force unless told otherwise. */
-export async function buildVisit(
+/** A place in a class for someone who is there already. */
+export async function buildAppointment(
   database: Database,
-  site: { readonly id: string; readonly timeZone: string },
-  classDate: DatedClass,
-  { status = 'checked-in', range = true }: VisitOptions = {},
+  {
+    classDate,
+    status = 'booked',
+    ...whose
+  }: {
+    readonly patientId: string;
+    readonly enrollmentId: string;
+    readonly classDate: DatedClass;
+    readonly status?: Status;
+  },
 ) {
-  const patient = await buildBookable(database, site);
   const staff = await buildUser(database, { roles: ['front-desk'] });
-  const { enrollmentId } = patient;
   const [appointment] = await database
     .insert(appointments)
     .values({
-      patientId: patient.id,
-      enrollmentId,
+      ...whose,
       classDateId: classDate.id,
       localDate: classDate.localDate,
       startsAt: classDate.startsAt,
@@ -49,6 +58,24 @@ export async function buildVisit(
   if (status !== 'booked') {
     await database.update(appointments).set({ status }).where(eq(appointments.id, appointment.id));
   }
+  return appointment;
+}
+
+/** A patient in a class, checked in and with the worked example in force unless told otherwise. */
+export async function buildVisit(
+  database: Database,
+  site: { readonly id: string; readonly timeZone: string },
+  classDate: DatedClass,
+  { status = 'checked-in', range = true }: VisitOptions = {},
+) {
+  const patient = await buildBookable(database, site);
+  const { enrollmentId } = patient;
+  const appointment = await buildAppointment(database, {
+    patientId: patient.id,
+    enrollmentId,
+    classDate,
+    status,
+  });
   const prescription = range
     ? await buildPrescription(database, {
         ...(typeof range === 'object' && range),
@@ -73,6 +100,34 @@ export const readingBody = (sessionRecordId: string, given: object = {}) => ({
   heartRate: 100,
   ...given,
 });
+
+/** How a treadmill was set, as a page would send it. */
+export const boutBody = (sessionRecordId: string, given: object = {}) => ({
+  sessionRecordId,
+  setting: { modality: 'treadmill-walk', speedMph: 2.8, gradePercent: 0 },
+  minutes: 30,
+  ...given,
+});
+
+/** A next step that nobody has decided on yet, made past the API. */
+export async function buildProposal(
+  database: Database,
+  of: { readonly record: string; readonly patientId: string; readonly prescriptionId: string },
+): Promise<string> {
+  const [made] = await database
+    .insert(progressionProposals)
+    .values({
+      sessionRecordId: of.record,
+      patientId: of.patientId,
+      prescriptionId: of.prescriptionId,
+      proposal: { action: 'hold', reasons: [], from: null, to: null },
+      policyVersion: 1,
+      engineVersion: '1.0.0',
+    })
+    .returning();
+  if (!made) throw new Error('A builder made no row');
+  return made.id;
+}
 
 /** A record with one reading, made past the API. */
 export async function buildSessionRecord(

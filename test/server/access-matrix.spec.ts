@@ -30,6 +30,7 @@ const unknown: Omit<PatientRecord, 'agent'> = {
   chargeId: randomUUID(),
   sessionRecordId: randomUUID(),
   readingId: randomUUID(),
+  proposalId: randomUUID(),
 };
 
 /** Done, or refused for a reason of the matter itself. */

@@ -2,7 +2,7 @@ import { v7 as uuidv7 } from 'uuid';
 import { staffRoles, type Role } from '@shared/contracts/accounts-contract';
 import { recordKinds } from '@shared/contracts/record-contract';
 import type { PatientRecord } from '../builders/access-world';
-import { readingBody, recordBody } from '../builders/floor';
+import { boutBody, readingBody, recordBody } from '../builders/floor';
 import { workedExample } from '../builders/prescription-request';
 
 /**
@@ -337,6 +337,18 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
   'PUT /api/appointments/:id/missed-dose': {
     who: floor,
     record: ({ appointmentId }) => ({ id: appointmentId, body: { missed: true } }),
+  },
+  'PUT /api/exercise-bouts/:id': {
+    who: floor,
+    record: ({ sessionRecordId }) => ({ id: uuidv7(), body: boutBody(sessionRecordId) }),
+  },
+  'GET /api/patients/:id/course-so-far': { who: chart, guarded: true },
+  'POST /api/progression-proposals/:id/decision': {
+    who: signing,
+    record: ({ proposalId }) => ({
+      id: proposalId,
+      body: { decision: 'dismissed', reason: 'Tired' },
+    }),
   },
   'PUT /api/vital-signs/:id': {
     who: floor,

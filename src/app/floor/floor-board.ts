@@ -25,6 +25,7 @@ function withReading(item: RosterItem, reading: Reading): RosterItem {
 function withSaved(item: RosterItem, saved: Saved): RosterItem {
   if (item.appointmentId !== saved.appointmentId) return item;
   if (saved.kind === 'reading') return withReading(item, saved.stored);
+  if (saved.kind === 'work') return { ...item, work: saved.stored };
   return { ...item, record: saved.stored };
 }
 

@@ -12,6 +12,7 @@ import {
   rosterStampSchema,
   sessionRecordSchema,
 } from '@shared/contracts/floor-contract';
+import { type Bout, type BoutRequest, boutSchema } from '@shared/contracts/progression-contract';
 import { firstValueFrom } from 'rxjs';
 
 /** Calls of the floor; each throws Problem when it fails. */
@@ -37,6 +38,11 @@ export class FloorClient {
   async record(id: string, body: ReadingRequest): Promise<Reading> {
     const answer = this.#http.put<unknown>(`/api/vital-signs/${id}`, body);
     return readingSchema.parse(await firstValueFrom(answer));
+  }
+
+  async work(id: string, body: BoutRequest): Promise<Bout> {
+    const answer = this.#http.put<unknown>(`/api/exercise-bouts/${id}`, body);
+    return boutSchema.parse(await firstValueFrom(answer));
   }
 
   async amend(originalId: string, body: AmendmentRequest): Promise<Reading> {

@@ -18,6 +18,13 @@ import {
   prescriptionListSchema,
 } from '@shared/contracts/prescription-record-contract';
 import {
+  type CourseSoFar,
+  type DecisionRequest,
+  type Proposal,
+  courseSoFarSchema,
+  proposalSchema,
+} from '@shared/contracts/progression-contract';
+import {
   type NewRecordEntryInput,
   type PatientRecord,
   type RecordKind,
@@ -55,6 +62,19 @@ export class PatientsClient {
     return httpResource(() => (id() === undefined ? undefined : `/api/patients/${id()}`), {
       parse: (answer) => patientSchema.parse(answer),
     });
+  }
+
+  courseSoFar(id: Signal<string | undefined>): HttpResourceRef<CourseSoFar | undefined> {
+    return httpResource(() => id() && `/api/patients/${id()}/course-so-far`, {
+      parse: (answer) => courseSoFarSchema.parse(answer),
+    });
+  }
+
+  /** Decides on the next step; once. */
+  decide(proposalId: string, request: DecisionRequest): Observable<Proposal> {
+    return this.#http
+      .post(`/api/progression-proposals/${proposalId}/decision`, request)
+      .pipe(map((answer) => proposalSchema.parse(answer)));
   }
 
   record(id: Signal<string | undefined>): HttpResourceRef<PatientRecord | undefined> {

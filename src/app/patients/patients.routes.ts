@@ -35,6 +35,11 @@ export const patientsRoutes: Routes = [
         path: 'ranges',
         loadComponent: async () => (await import('./ranges-section/ranges-section')).RangesSection,
       },
+      {
+        path: 'progress',
+        loadComponent: async () =>
+          (await import('./progress-section/progress-section')).ProgressSection,
+      },
       chart('medicines', ['medications']),
       chart('devices', ['devices']),
       chart('tests', ['exercise-tests', 'thresholds', 'walk-tests']),

@@ -1,5 +1,6 @@
 import { DOCUMENT, DestroyRef, Injectable, computed, inject, signal } from '@angular/core';
 import type { Reading, SessionRecord } from '@shared/contracts/floor-contract';
+import type { Bout } from '@shared/contracts/progression-contract';
 import { Subject } from 'rxjs';
 import { type Problem, toProblem } from '../../core/problem';
 import { Session } from '../../core/session';
@@ -9,7 +10,14 @@ import { type Entry, type NewEntry, type RecordEntry, mayPass, pauseAfter } from
 /** What the server stored of an entry. */
 export type Saved =
   | { readonly kind: 'record'; readonly appointmentId: string; readonly stored: SessionRecord }
-  | { readonly kind: 'reading'; readonly appointmentId: string; readonly stored: Reading };
+  | { readonly kind: 'reading'; readonly appointmentId: string; readonly stored: Reading }
+  | { readonly kind: 'work'; readonly appointmentId: string; readonly stored: Bout };
+
+/** An entry that waited for its record, now that the record's id is sure. */
+function inRecord(entry: Entry, sessionRecordId: string): Entry {
+  if (entry.kind === 'reading') return { ...entry, body: { ...entry.body, sessionRecordId } };
+  return entry.kind === 'work' ? { ...entry, body: { ...entry.body, sessionRecordId } } : entry;
+}
 
 /**
  * Entries that the server has not acknowledged yet. They keep their ids, go out one visit at a time in the order in
@@ -112,6 +120,10 @@ export class EntryQueue {
         const stored = await this.#client.record(entry.id, entry.body);
         return { kind: 'reading', appointmentId, stored };
       }
+      case 'work': {
+        const stored = await this.#client.work(entry.id, entry.body);
+        return { kind: 'work', appointmentId, stored };
+      }
       case 'amendment': {
         const stored = await this.#client.amend(entry.originalId, entry.body);
         return { kind: 'reading', appointmentId, stored };
@@ -141,8 +153,8 @@ export class EntryQueue {
       all
         .filter((entry) => entry.id !== id)
         .map((entry) =>
-          kind === 'record' && entry.kind === 'reading' && entry.appointmentId === appointmentId
-            ? { ...entry, body: { ...entry.body, sessionRecordId: recordId } }
+          kind === 'record' && entry.appointmentId === appointmentId
+            ? inRecord(entry, recordId)
             : entry,
         ),
     );

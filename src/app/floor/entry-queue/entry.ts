@@ -3,6 +3,7 @@ import type {
   BeginRecordRequest,
   ReadingRequest,
 } from '@shared/contracts/floor-contract';
+import type { BoutRequest } from '@shared/contracts/progression-contract';
 import type { Problem } from '../../core/problem';
 
 interface EntryBase {
@@ -34,11 +35,16 @@ export interface AmendmentEntry extends EntryBase {
   readonly body: AmendmentRequest & Pick<ReadingRequest, 'phase' | 'measuredAt'>;
 }
 
+export interface WorkEntry extends EntryBase {
+  readonly kind: 'work';
+  readonly body: BoutRequest;
+}
+
 /** A write of the floor on its way to the server. */
-export type Entry = RecordEntry | ReadingEntry | AmendmentEntry;
+export type Entry = RecordEntry | ReadingEntry | AmendmentEntry | WorkEntry;
 
 type New<E extends EntryBase> = Omit<E, 'state' | 'problem' | 'userId'>;
-export type NewEntry = New<RecordEntry> | New<ReadingEntry> | New<AmendmentEntry>;
+export type NewEntry = New<RecordEntry> | New<ReadingEntry> | New<AmendmentEntry> | New<WorkEntry>;
 
 const passing: readonly string[] = [
   'unreachable',

@@ -35,6 +35,7 @@ export class SignStep {
   protected readonly unsent = computed(
     () =>
       this.visit().recordEntry !== null ||
+      this.visit().workEntry !== null ||
       this.visit().readings.some(({ entry }) => entry !== null),
   );
   protected readonly exercised = computed(() =>

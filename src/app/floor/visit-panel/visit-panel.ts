@@ -20,6 +20,7 @@ import { IdentityStep } from '../identity-step/identity-step';
 import { ReadingStep } from '../reading-step/reading-step';
 import { ReadingsList } from '../readings-list/readings-list';
 import { SignStep } from '../sign-step/sign-step';
+import { WorkStep } from '../work-step/work-step';
 import { ceilingReason, flagWords, rangeText } from '../visit/floor-words';
 import type { Visit, VisitReading } from '../visit/visit';
 
@@ -38,6 +39,7 @@ type Step = 'arrival' | 'identity' | 'readings' | 'done';
     ReadingStep,
     ReadingsList,
     SignStep,
+    WorkStep,
   ],
   templateUrl: './visit-panel.html',
   styleUrl: './visit-panel.scss',

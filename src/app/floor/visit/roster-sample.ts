@@ -53,6 +53,8 @@ export function sampleItem(given: Partial<RosterItem> = {}): RosterItem {
     restingHeartRate: 62,
     withdrawn: [],
     rangeFlags: [],
+    nextStart: null,
+    work: null,
     icd: { status: 'none', lowestRate: null },
     flags: [],
     record: {

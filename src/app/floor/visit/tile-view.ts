@@ -154,8 +154,8 @@ function flagsOf(visit: Visit): string[] {
   ];
 }
 
-function unsentOf({ readings, recordEntry }: Visit): TileView['unsent'] {
-  const entries = [recordEntry, ...readings.map(({ entry }) => entry)];
+function unsentOf({ readings, recordEntry, workEntry }: Visit): TileView['unsent'] {
+  const entries = [recordEntry, workEntry, ...readings.map(({ entry }) => entry)];
   if (entries.some((entry) => entry?.state === 'refused')) return 'refused';
   return entries.some((entry) => entry !== null) ? 'sending' : 'none';
 }

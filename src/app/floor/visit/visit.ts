@@ -2,7 +2,7 @@ import type { Reading, RosterItem } from '@shared/contracts/floor-contract';
 import { type Marks, placeReading } from '@shared/clinical/placement';
 import type { VitalPhase } from '@shared/clinical/vital-sign-bounds';
 import { bpm } from '@shared/units';
-import type { AmendmentEntry, Entry, ReadingEntry } from '../entry-queue/entry';
+import type { AmendmentEntry, Entry, ReadingEntry, WorkEntry } from '../entry-queue/entry';
 
 /** A reading as the floor shows it, on the server or still on its way there. */
 export interface VisitReading extends Omit<
@@ -24,6 +24,8 @@ export interface Visit extends Omit<RosterItem, 'readings'> {
   /** The record's id, also while its beginning is on its way. */
   readonly recordId: string | null;
   readonly recordEntry: Entry | null;
+  /** Work that is on its way, null once it is stored. */
+  readonly workEntry: WorkEntry | null;
 }
 
 export const marksOf = ({ target, ceiling }: Pick<RosterItem, 'target' | 'ceiling'>): Marks => ({
@@ -72,7 +74,7 @@ function unsent(item: RosterItem, entry: ReadingEntry | AmendmentEntry): VisitRe
 }
 
 const isUnsentReading = (entry: Entry): entry is ReadingEntry | AmendmentEntry =>
-  entry.kind !== 'record';
+  entry.kind === 'reading' || entry.kind === 'amendment';
 
 /** A roster item together with the entries of its visit that are not acknowledged yet. */
 export function visitOf(item: RosterItem, entries: readonly Entry[]): Visit {
@@ -82,11 +84,14 @@ export function visitOf(item: RosterItem, entries: readonly Entry[]): Visit {
   const waiting = own.filter(isUnsentReading).filter(({ id }) => !known.has(id));
   const all = [...readings.map(stored), ...waiting.map((entry) => unsent(item, entry))];
   const recordEntry = own.find(({ kind }) => kind === 'record') ?? null;
+  const workEntry = own.filter((entry) => entry.kind === 'work').at(-1) ?? null;
   return {
     ...rest,
     readings: all.sort((a, b) => Date.parse(a.measuredAt) - Date.parse(b.measuredAt)),
     recordId: item.record?.id ?? recordEntry?.id ?? null,
     recordEntry,
+    work: workEntry?.body ?? item.work,
+    workEntry,
   };
 }
 

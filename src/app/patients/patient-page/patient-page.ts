@@ -25,6 +25,7 @@ interface Part {
 const parts: readonly Part[] = [
   { path: 'course', label: 'Course', chart: false },
   { path: 'ranges', label: 'Prescriptions', chart: true },
+  { path: 'progress', label: 'Progress', chart: true },
   { path: 'medicines', label: 'Medicines', chart: true },
   { path: 'devices', label: 'Devices', chart: true },
   { path: 'tests', label: 'Tests and limits', chart: true },
