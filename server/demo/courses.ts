@@ -4,6 +4,7 @@ import type { Day } from './days';
 import type { Fate } from './fates';
 import { leavingDay, outcomeOf, plain } from './outcomes';
 import type { Outcome, Seen } from './outcomes';
+import { dice } from './dice';
 import { bookingDays, classAt, classMinutes, maintenanceHour, siteOf } from './program';
 import type { DiagnosisKind } from './situations';
 import type { Slot } from './slots';
@@ -31,6 +32,8 @@ export interface Visit extends Outcome {
   readonly bookedAt: Date;
   /** Sessions attended before this one. */
   readonly attendedBefore: number;
+  /** Pays soon after booking: only who will keep the place, so that the story has nothing to give back. */
+  readonly paysAhead: boolean;
 }
 
 export interface Closing {
@@ -81,8 +84,10 @@ function visitOn(walk: Walk, day: Day, hour: number, bookedAt: Date, outcome: Ou
   const selfPay = hour === maintenanceHour && (plan.slot.selfPay || plan.extraClass);
   const startsAt = instantAt(day, hour * 60, zoneOf(walk));
   const endsAt = minutesLater(startsAt, classMinutes);
+  const key = `${plan.key} ${isoOf(day)} ${hour}`;
+  const keeps = outcome.cancelledAt === null && plan.fate.leaves === null && plan.fate.gap === null;
   return {
-    key: `${plan.key} ${isoOf(day)} ${hour}`,
+    key,
     classKey: classAt(plan.slot.site, hour, selfPay).key,
     selfPay,
     day,
@@ -90,6 +95,7 @@ function visitOn(walk: Walk, day: Day, hour: number, bookedAt: Date, outcome: Ou
     endsAt,
     bookedAt,
     attendedBefore: walk.seen.attended,
+    paysAhead: selfPay && keeps && dice(key, 'ahead').chance(0.4),
     ...soFar(walk, outcome, endsAt),
   };
 }

@@ -11,10 +11,11 @@ import type { PeopleRows } from './rows';
 const currency = selfPayPrice.currency;
 const amountMinor = selfPayPrice.amountMinor;
 
-/** When a class is paid: after the last moment to give the place back, or never so far. */
+/** When a class is paid: soon after booking, or after the last moment to give the place back, or never so far. */
 function paysAt(visit: Visit, owesLast: boolean): Date | null {
   if (owesLast) return minutesLater(visit.startsAt, -14 * 60);
   const draw = dice(visit.key, 'paid');
+  if (visit.paysAhead) return minutesLater(visit.bookedAt, draw.whole(4, 6 * 60));
   return draw.chance(0.12) ? null : minutesLater(visit.startsAt, draw.whole(-60, 4 * 24 * 60));
 }
 

@@ -138,6 +138,13 @@ describe('the payments of the story', () => {
     const told = await storyPayments(database);
     expect(told.length).toBe(await count(`payments WHERE status = 'settled'`));
     expect(told.length).toBeGreaterThan(100);
+    expect(
+      await count(
+        `payments p JOIN charges c ON c.id = p.charge_id JOIN appointments a ON a.id = c.appointment_id
+          WHERE a.status = 'booked' AND a.starts_at > $1`,
+        [new Date(firstStart.getTime() + 86_400_000)],
+      ),
+    ).toBeGreaterThan(3);
     for (const { id, amount, currency } of told) {
       expect([amount, currency]).toEqual([1800, 'usd']);
       expect(id).toMatch(/^pi_demo_[0-9a-f]{32}$/);

@@ -23,7 +23,7 @@ import { storyChanges, withoutPatients } from './story-changes';
 import type { StoryChanges } from './story-changes';
 
 /** Raise it when the same day would be told otherwise: rows of another version are left as they are. */
-export const storyVersion = '2';
+export const storyVersion = '3';
 
 const playLock = 736_201_128;
 const classesAheadDays = bookingDays + 14;
