@@ -52,9 +52,9 @@ describe('ProgressPage', () => {
       [...row.children].map((cell) => cell.textContent.trim()),
     );
     expect(rows).toEqual([
-      ['Nov 9, 2026', 'None', 'None', 'None'],
-      ['Nov 5, 2026', '108', '91–105', '14'],
-      ['Nov 2, 2026', '97', '91–105', '12'],
+      ['Mon, Nov 9', 'None', 'None', 'None'],
+      ['Thu, Nov 5', '108', '91–105', '14'],
+      ['Mon, Nov 2', '97', '91–105', '12'],
     ]);
   });
 

@@ -7,6 +7,7 @@ import { EmptyState } from '../../ui/empty-state/empty-state';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { Skeleton } from '../../ui/skeleton/skeleton';
+import { dateInWords } from '../../ui/site-time/site-time';
 import { formatLocalDate } from '../../ui/words/dates';
 import { rangeText } from '../../ui/words/prescription-words';
 import { MyProgressClient } from '../my-progress-client';
@@ -76,6 +77,8 @@ export class ProgressPage {
     () => `tel:${this.mine()?.site.phone.replaceAll(/[^+\d]/g, '') ?? ''}`,
   );
   protected readonly dateOf = formatLocalDate;
+  /** Sat, Nov 28 */
+  protected readonly dayOf = (localDate: string): string => dateInWords(localDate, 'short');
   protected readonly rangeText = rangeText;
 
   protected reload(): void {
