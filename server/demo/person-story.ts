@@ -79,7 +79,8 @@ function enroll(telling: Telling, course: Course, at: Date): void {
   telling.rangesBefore = telling.ranges.length;
   telling.firstSession = null;
   if (telling.ranges.length === 0) {
-    writeIntake(telling.rows, scribeAt(telling, at), telling.chart, plan.enrolledOn);
+    const { anchor } = telling.clock;
+    writeIntake(telling.rows, scribeAt(telling, at), telling.chart, plan.enrolledOn, anchor);
   } else {
     const scribe = scribeAt(telling, at);
     const seated = seatedAfter(telling.chart, telling.attended);

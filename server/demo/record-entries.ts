@@ -16,6 +16,10 @@ export interface RecordRows {
   readonly thresholds: RowOf<'thresholds'>[];
   readonly walkTests: RowOf<'walkTests'>[];
   readonly riskStratifications: RowOf<'riskStratifications'>[];
+  readonly restingEcgs: RowOf<'restingEcgs'>[];
+  readonly chairStands: RowOf<'chairStands'>[];
+  readonly restrictions: RowOf<'restrictions'>[];
+  readonly questionnaireAnswers: RowOf<'questionnaireAnswers'>[];
 }
 
 export const emptyRecord = (): RecordRows => ({
@@ -32,6 +36,10 @@ export const emptyRecord = (): RecordRows => ({
   thresholds: [],
   walkTests: [],
   riskStratifications: [],
+  restingEcgs: [],
+  chairStands: [],
+  restrictions: [],
+  questionnaireAnswers: [],
 });
 
 /** Who writes in whose record, and when. */

@@ -1,9 +1,12 @@
 import { conditionKinds } from '@shared/contracts/record-lists';
 import type { ClinicalEventKind, ConditionKind } from '@shared/contracts/record-lists';
+import { stagesOf } from '@shared/clinical/exercise-test/protocols';
 import { anginaInClass } from './chart';
 import type { Chart } from './chart';
 import { isoOf } from './days';
 import type { Day } from './days';
+import { dice } from './dice';
+import { writeAssessments, writeRestrictions, writeRisk } from './record-assessments';
 import { writeDrugs } from './record-drugs';
 import { entry } from './record-entries';
 import type { RecordRows, Scribe } from './record-entries';
@@ -91,6 +94,11 @@ export function writeRestingRates(
   });
 }
 
+function pacingModeOf({ facts }: Chart) {
+  if (facts.devices.upperTrackingRate !== null) return 'DDD' as const;
+  return facts.rhythm === 'sensor-paced' ? ('VVIR' as const) : ('VVI' as const);
+}
+
 function writeDevices(rows: RecordRows, scribe: Scribe, chart: Chart, day: Day) {
   const { devices, pacemaker, test } = chart.facts;
   const check = (on: Day, upperTrackingRate: number | null) =>
@@ -99,7 +107,10 @@ function writeDevices(rows: RecordRows, scribe: Scribe, chart: Chart, day: Day) 
       icdStatus: devices.icd.status,
       icdZones: devices.icd.zones,
       pacemaker,
+      pacingMode: pacemaker ? pacingModeOf(chart) : null,
+      lowerRate: pacemaker ? 50 : null,
       upperTrackingRate,
+      upperSensorRate: null,
       checkedOn: isoOf(on),
     });
   if (test && !test.sameRhythmAndDevice) {
@@ -111,6 +122,30 @@ function writeDevices(rows: RecordRows, scribe: Scribe, chart: Chart, day: Day) 
 
 const protocols = { treadmill: 'Modified Bruce', cycle: 'Ramp 10 W/min', arm: 'Arm ramp 5 W/min' };
 
+const protocolKinds = {
+  treadmill: 'modified-bruce',
+  cycle: 'cycle-ramp',
+  arm: 'other',
+} as const;
+
+const submaximalEnds: readonly string[] = ['protocol-end', 'target-rate', 'orthopedic', 'other'];
+
+/** Three finished stages of the protocol, the rate rising evenly towards the peak. */
+const stagesUpTo = (resting: number, peak: number) =>
+  stagesOf('modified-bruce')
+    .slice(0, 3)
+    .map(({ label, minutes, speedMph, gradePercent }, index) => ({
+      label,
+      minutes,
+      speedMph,
+      gradePercent,
+      powerWatts: null,
+      heartRate: Math.round(resting + ((peak - resting) * (index + 1)) / 4),
+      systolic: 134 + 10 * index,
+      diastolic: 80,
+      exertion: 9 + 2 * index,
+    }));
+
 export function writeTest(
   rows: RecordRows,
   scribe: Scribe,
@@ -119,10 +154,25 @@ export function writeTest(
 ): string | null {
   const { test } = facts;
   if (!test) return null;
+  const treadmill = test.mode === 'treadmill';
   const row = {
     ...entry(scribe, 'test', on),
     mode: test.mode,
     protocol: protocols[test.mode],
+    protocolKind: protocolKinds[test.mode],
+    peakSystolic: 168,
+    peakDiastolic: 82,
+    peakExertion: 16,
+    exerciseMinutes: treadmill ? 10.5 : 9,
+    stages: treadmill ? stagesUpTo(test.restingHeartRate ?? 70, test.peakHeartRate) : [],
+    gait: treadmill ? ('walk' as const) : null,
+    handrail: treadmill ? false : null,
+    effort: submaximalEnds.includes(test.endedBy) ? ('submaximal' as const) : ('maximal' as const),
+    recoveryOne: Math.max(50, test.peakHeartRate - 19),
+    recoveryTwo: null,
+    recoveryPosture: 'upright' as const,
+    signs: [],
+    drugsTaken: null,
     performedOn: isoOf(on),
     endedBy: test.endedBy,
     restingHeartRate: test.restingHeartRate,
@@ -154,19 +204,25 @@ const thresholdRow = (scribe: Scribe, name: string | number) => ({
   supersedes: null,
   note: null,
   status: 'active' as const,
+  supersededByTestId: null,
   endedAt: null,
   endedBy: null,
   endedReason: null,
 });
 
 /** All that is asked, measured and copied from letters on the day of enrollment. */
-export function writeIntake(rows: RecordRows, scribe: Scribe, chart: Chart, day: Day) {
+export function writeIntake(rows: RecordRows, scribe: Scribe, chart: Chart, day: Day, anchor: Day) {
   const { facts, testOn, heightCm, weightKg } = chart;
   for (const kind of conditionKinds) {
     rows.conditions.push({
       ...entry(scribe, 'condition', kind),
       kind,
       value: conditionValue(chart, kind),
+      since: null,
+      evidence:
+        kind === 'transplant' && facts.conditions.transplant === 'recovered'
+          ? 'Rate fell 24 bpm in the first minute after the test'
+          : null,
     });
   }
   if (facts.measured) {
@@ -199,12 +255,13 @@ export function writeIntake(rows: RecordRows, scribe: Scribe, chart: Chart, day:
       performedOn: isoOf(day),
     });
   }
-  rows.riskStratifications.push({
-    ...entry(scribe, 'risk', day),
-    level: facts.risk,
-    assessedOn: isoOf(day),
-    note: null,
-  });
+  writeRisk(rows, scribe, chart, day);
+  writeRestrictions(rows, scribe, chart, day);
+  // One person of the last two days waits to be spoken with, so that the page of today shows what that looks like.
+  const draw = dice(chart.person.key, 'told of self-harm');
+  const recent = day >= anchor - 1 && day <= anchor;
+  const selfHarm = draw.chance(recent ? 0.4 : 0.02);
+  writeAssessments(rows, scribe, chart, day, { selfHarm, open: selfHarm && day >= anchor - 1 });
 }
 
 export function writeAnginaInClass(rows: RecordRows, scribe: Scribe, chart: Chart, day: Day) {

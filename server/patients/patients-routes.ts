@@ -18,6 +18,7 @@ import { route } from '../http/route';
 import { changeEnrollment, openEnrollment } from './enrollments-service';
 import { chartRoles, registrarRoles, searchRoles } from './patients-policy';
 import { changePatient, readPatient, registerPatient, search } from './patients-service';
+import { recordEndingsRoutes } from './record-endings-routes';
 import { recordRoutes } from './record-routes';
 import { readVitals } from './vitals-service';
 
@@ -156,4 +157,5 @@ export const patientsRoutes = [
     handler: async ({ tx, input }) => ok(await readVitals(tx, input.params.id, input.query)),
   }),
   ...recordRoutes,
+  ...recordEndingsRoutes,
 ];

@@ -6,6 +6,7 @@ import {
   endThreshold,
   hasTest,
   restoreThreshold,
+  restoreThresholdsEndedBy,
   resumeMedication,
   stopMedication,
   type Scribe,
@@ -78,6 +79,7 @@ export async function unlinkEntry(
   entry: RecordEntry,
   scribe: Scribe,
 ): Promise<void> {
+  if (kind === 'exercise-tests') await restoreThresholdsEndedBy(tx, entry.id);
   if (entry.ended) return;
   const { supersedes, replaces, stoppedOn } = entry.values as Partial<
     Record<string, string | null>

@@ -24,11 +24,17 @@ const columnOf = (field: string): string =>
 const person = (id: unknown, displayName: string | null) =>
   displayName === null ? null : { id: id as string, displayName };
 
-function endOf({ row, endedBy }: EntryRow): RecordEntry['ended'] {
+/** What the end of an entry is called; a threshold's row says it itself. */
+const endNames: Partial<Record<RecordKind, string>> = {
+  restrictions: 'lifted',
+  questionnaires: 'closed',
+};
+
+function endOf({ kind, row, endedBy }: EntryRow): RecordEntry['ended'] {
   const by = person(row['ended_by'], endedBy);
   if (by === null) return null;
-  const { status, ended_at: at, ended_reason: reason } = row;
-  return { status, at, by, reason } as RecordEntry['ended'];
+  const { ended_at: at, ended_reason: reason } = row;
+  return { status: endNames[kind] ?? row['status'], at, by, reason } as RecordEntry['ended'];
 }
 
 function entryOf(found: EntryRow): RecordEntry {
@@ -82,7 +88,8 @@ async function entryRows(
       JOIN users AS writer ON writer.id = (e.row ->> 'recorded_by')::uuid
       LEFT JOIN users AS corrector ON corrector.id = (e.row ->> 'entered_in_error_by')::uuid
       LEFT JOIN users AS ender
-        ON ender.id = CASE e.kind WHEN 'thresholds' THEN (e.row ->> 'ended_by')::uuid END`);
+        ON ender.id = CASE WHEN e.kind IN ('thresholds', 'restrictions', 'questionnaires')
+                          THEN (e.row ->> 'ended_by')::uuid END`);
   return rows;
 }
 

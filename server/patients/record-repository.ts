@@ -48,18 +48,26 @@ export async function markEnteredInError(
 interface ThresholdEnd {
   readonly status: 'superseded' | 'retired';
   readonly reason: string;
+  /** The clean test that a person took for its end. */
+  readonly byTestId?: string;
 }
 
 /** Ends an active threshold. @returns its kind and date, undefined when it binds no more or is another patient's */
 export async function endThreshold(
   tx: Transaction,
   id: string,
-  { status, reason }: ThresholdEnd,
+  { status, reason, byTestId }: ThresholdEnd,
   { patientId, userId, now }: Scribe,
 ) {
   const [ended] = await tx
     .update(thresholds)
-    .set({ status, endedAt: now, endedBy: userId, endedReason: reason })
+    .set({
+      status,
+      endedAt: now,
+      endedBy: userId,
+      endedReason: reason,
+      supersededByTestId: byTestId ?? null,
+    })
     .where(
       and(
         eq(thresholds.id, id),
@@ -78,6 +86,35 @@ export async function restoreThreshold(tx: Transaction, id: string): Promise<voi
     .update(thresholds)
     .set({ status: 'active', endedAt: null, endedBy: null, endedReason: null })
     .where(and(eq(thresholds.id, id), eq(thresholds.status, 'superseded')));
+}
+
+/** Lets the thresholds bind again that a test was taken to end, since that test was entered in error. */
+export async function restoreThresholdsEndedBy(tx: Transaction, testId: string): Promise<void> {
+  await tx
+    .update(thresholds)
+    .set({
+      status: 'active',
+      endedAt: null,
+      endedBy: null,
+      endedReason: null,
+      supersededByTestId: null,
+    })
+    .where(eq(thresholds.supersededByTestId, testId));
+}
+
+/** Ends a restriction or a follow-up. @returns false when it has ended, was entered in error or is another patient's */
+export async function endEntry(
+  tx: Transaction,
+  kind: 'restrictions' | 'questionnaires',
+  id: string,
+  reason: string,
+  { patientId, userId, now }: Scribe,
+): Promise<boolean> {
+  const { table } = recordRegistry[kind];
+  const { rowCount } = await tx.execute(sql`
+    UPDATE ${table} SET ended_at = ${now.toISOString()}::timestamptz, ended_by = ${userId}::uuid, ended_reason = ${reason}
+     WHERE id = ${id}::uuid AND patient_id = ${patientId}::uuid AND ended_at IS NULL AND entered_in_error_at IS NULL`);
+  return rowCount === 1;
 }
 
 /** @returns false when there is none running that began by then */

@@ -6,17 +6,16 @@ import {
   recordKinds,
   recordResponseSchema,
   recordValues,
-  retireThresholdRequestSchema,
   stopMedicationRequestSchema,
   type NewRecordEntry,
   type RecordKind,
 } from '@shared/contracts/record-contract';
 import { created, ok } from '../http/answers';
 import { route, type RouteDefinition } from '../http/route';
-import { chartRoles, retiringRoles } from './patients-policy';
+import { chartRoles } from './patients-policy';
 import { patientRecord } from './record-queries';
 import { recordRegistry } from './record-registry';
-import { addEntries, enterInError, retireThreshold, stopMedication } from './record-service';
+import { addEntries, enterInError, stopMedication } from './record-service';
 
 const patientParams = z.object({ id: z.uuid() });
 const entryParams = z.object({ id: z.uuid(), entryId: z.uuid() });
@@ -149,24 +148,6 @@ export const recordRoutes: RouteDefinition[] = [
           { tx, actor, patientId: params.id, now: context.clock.now() },
           params.entryId,
           body.stoppedOn,
-        ),
-      ),
-  }),
-  route({
-    method: 'post',
-    path: '/api/patients/:id/record/thresholds/:entryId/retire',
-    summary: 'Retires a threshold, by a physician, with the reason',
-    access: { roles: retiringRoles },
-    ...ofPatient,
-    audit: entryEvent('threshold.retired', 'thresholds'),
-    request: { params: entryParams, body: retireThresholdRequestSchema },
-    response: { 200: recordEntrySchema },
-    handler: async ({ tx, actor, input: { params, body }, context }) =>
-      ok(
-        await retireThreshold(
-          { tx, actor, patientId: params.id, now: context.clock.now() },
-          params.entryId,
-          body.reason,
         ),
       ),
   }),

@@ -15,7 +15,6 @@ import { checkLinks, linkEntry, unlinkEntry } from './record-links';
 import { recordEntry } from './record-queries';
 import { recordRegistry } from './record-registry';
 import {
-  endThreshold,
   insertEntry,
   markEnteredInError,
   resumeMedication,
@@ -31,7 +30,7 @@ export interface RecordCall {
   readonly now: Date;
 }
 
-const scribeOf = ({ actor, patientId, now }: RecordCall): Scribe => ({
+export const scribeOf = ({ actor, patientId, now }: RecordCall): Scribe => ({
   patientId,
   userId: actor.id,
   now,
@@ -56,11 +55,13 @@ function checkDates({ kind, values }: NewRecordEntry, path: string, dates: Dates
   checkDate(fields['stoppedOn'], `${path}stoppedOn`, dates);
 }
 
-/** Equal as the database keeps them, in single precision. */
+/** Equal as the database keeps them: numbers in single precision, the keys of JSON in no order. */
 const kept = (values: object): string =>
-  JSON.stringify(values, (_, value: unknown) =>
-    typeof value === 'number' ? Math.fround(value) : value,
-  );
+  JSON.stringify(values, (_, value: unknown) => {
+    if (typeof value === 'number') return Math.fround(value);
+    if (value === null || typeof value !== 'object' || Array.isArray(value)) return value;
+    return Object.fromEntries(Object.entries(value).sort(([a], [b]) => (a < b ? -1 : 1)));
+  });
 
 /** The entry of an id that is taken: the same again is answered, anything else refused. */
 async function alreadyEntered(
@@ -119,7 +120,12 @@ export async function addEntries(
   return added;
 }
 
-async function existing(call: RecordCall, kind: RecordKind, entryId: string): Promise<RecordEntry> {
+/** @throws Failure `not-found` */
+export async function existing(
+  call: RecordCall,
+  kind: RecordKind,
+  entryId: string,
+): Promise<RecordEntry> {
   const entry = await recordEntry(call.tx, call.patientId, kind, entryId);
   if (!entry) throw fail('not-found');
   return entry;
@@ -157,16 +163,4 @@ export async function stopMedication(
   }
   if (!(await stop(call.tx, entryId, stoppedOn, scribeOf(call)))) throw fail('stale-version');
   return existing(call, 'medications', entryId);
-}
-
-/** A physician's word that a threshold binds no more. @throws Failure `not-found`, `stale-version` when it has ended already */
-export async function retireThreshold(
-  call: RecordCall,
-  entryId: string,
-  reason: string,
-): Promise<RecordEntry> {
-  await existing(call, 'thresholds', entryId);
-  const ended = await endThreshold(call.tx, entryId, { status: 'retired', reason }, scribeOf(call));
-  if (!ended) throw fail('stale-version');
-  return existing(call, 'thresholds', entryId);
 }

@@ -1,25 +1,17 @@
 import * as z from 'zod';
-import {
-  icdStatuses,
-  icdZoneKinds,
-  rateActingDrugs,
-  rhythms,
-  riskLevels,
-  testEndings,
-  testModes,
-  thresholdKinds,
-  vo2Sources,
-} from '../clinical/prescribing/request';
+import { rhythms } from '../clinical/prescribing/request';
 import { requestBounds } from '../clinical/prescribing/request-bounds';
 import { clinicalEventKinds, conditionAnswers, conditionKinds } from './record-lists';
 import { localDateField, noteField, numberField, textField } from './fields';
 import { diagnosisKindSchema } from './patients-contract';
+import { questionnaire, riskStratification } from './record-assessments-contract';
+import { chairStand, exerciseTest, restingEcg, threshold, walkTest } from './record-tests-contract';
+import { device, medication, restriction } from './record-treatment-contract';
 
-// The clinical record: dated entries of thirteen kinds. What a request may hold is what the database's checks allow.
+// The clinical record: dated entries of seventeen kinds. What a request may hold is what the database's checks allow.
 
-const note = noteField(1000).nullable().default(null);
 const optional = <T extends z.ZodType>(field: T) => field.nullable().default(null);
-const { thresholdRate, mets, vo2, peakRate, seatedRate, heightCm, weightKg } = requestBounds;
+const { seatedRate, heightCm, weightKg } = requestBounds;
 
 const diagnosis = z.strictObject({
   kind: diagnosisKindSchema,
@@ -28,11 +20,23 @@ const diagnosis = z.strictObject({
 });
 
 const condition = z
-  .strictObject({ kind: z.enum(conditionKinds, 'Choose a condition'), value: z.string() })
+  .strictObject({
+    kind: z.enum(conditionKinds, 'Choose a condition'),
+    value: z.string(),
+    /** Since when: of a transplant or an assist device, the date of the operation. */
+    since: optional(localDateField),
+    /** What shows it, as how a transplanted heart’s rate was seen to respond again. */
+    evidence: optional(textField(300, 'Say what shows it')),
+  })
   .refine(({ kind, value }) => conditionAnswers[kind].includes(value), {
     path: ['value'],
     error: 'Choose one of the answers to this condition',
-  });
+  })
+  .refine(
+    ({ kind, value, evidence }) =>
+      kind !== 'transplant' || value !== 'recovered' || evidence !== null,
+    { path: ['evidence'], error: 'Say what showed that the heart rate responds again' },
+  );
 
 const clinicalEvent = z.strictObject({
   kind: z.enum(clinicalEventKinds, 'Choose what happened'),
@@ -62,93 +66,6 @@ const restingRate = z.strictObject({
   measuredOn: localDateField,
 });
 
-const medication = z
-  .strictObject({
-    name: textField(120, 'Enter the name of the drug'),
-    /** Null for a drug that does not act on the heart rate. */
-    rateActing: optional(z.enum(rateActingDrugs)),
-    dose: textField(80, 'Enter the dose with its unit'),
-    schedule: textField(80, 'Enter how often it is taken'),
-    startedOn: localDateField,
-    stoppedOn: optional(localDateField),
-    /** The entry that this one takes the place of: it stops on the day this one starts. */
-    replaces: optional(z.uuid()),
-  })
-  .refine((drug) => drug.stoppedOn === null || drug.stoppedOn >= drug.startedOn, {
-    path: ['stoppedOn'],
-    error: 'It cannot stop before it started',
-  });
-
-const device = z
-  .strictObject({
-    icdStatus: z.enum(icdStatuses, 'Say whether there is a defibrillator'),
-    icdZones: z
-      .array(
-        z.strictObject({
-          rate: numberField(requestBounds.icdRate, 'bpm'),
-          kind: z.enum(icdZoneKinds, 'Choose what the zone does'),
-        }),
-      )
-      .max(20, 'Enter at most 20 zones')
-      .default([]),
-    pacemaker: z.boolean().default(false),
-    upperTrackingRate: optional(numberField(requestBounds.trackingRate, 'bpm')),
-    checkedOn: localDateField,
-  })
-  .refine((entry) => entry.icdStatus === 'present' || entry.icdZones.length === 0, {
-    path: ['icdZones'],
-    error: 'Only a defibrillator that is present has zones',
-  })
-  .refine((entry) => entry.pacemaker || entry.upperTrackingRate === null, {
-    path: ['upperTrackingRate'],
-    error: 'Only a device that paces has a tracking rate',
-  });
-
-const exerciseTest = z
-  .strictObject({
-    mode: z.enum(testModes, 'Choose the mode'),
-    protocol: textField(80, 'Enter the protocol'),
-    performedOn: localDateField,
-    endedBy: z.enum(testEndings, 'Say why the test ended'),
-    restingHeartRate: optional(numberField(seatedRate, 'bpm')),
-    peakHeartRate: numberField(peakRate, 'bpm'),
-    peakVo2: optional(numberField(vo2, 'mL/kg/min')),
-    peakMets: optional(numberField(mets, 'METs')),
-    vo2Source: optional(z.enum(vo2Sources)),
-    note,
-  })
-  .refine((test) => test.restingHeartRate === null || test.peakHeartRate > test.restingHeartRate, {
-    path: ['peakHeartRate'],
-    error: 'The peak is above the resting rate',
-  })
-  .refine((test) => test.vo2Source !== null || (test.peakVo2 === null && test.peakMets === null), {
-    path: ['vo2Source'],
-    error: 'Say whether it was measured or estimated',
-  });
-
-const threshold = z.strictObject({
-  kind: z.enum(thresholdKinds, 'Choose what was found'),
-  heartRate: numberField(thresholdRate, 'bpm'),
-  /** The highest work tolerated before onset. */
-  clearMets: optional(numberField(mets, 'METs')),
-  exerciseTestId: optional(z.uuid()),
-  foundOn: localDateField,
-  note,
-  /** The active threshold of the same kind that this one takes the place of. */
-  supersedes: optional(z.uuid()),
-});
-
-const walkTest = z.strictObject({
-  distanceMeters: numberField({ lowest: 10, highest: 1200 }, 'm'),
-  performedOn: localDateField,
-});
-
-const riskStratification = z.strictObject({
-  level: z.enum(riskLevels, 'Choose the risk'),
-  assessedOn: localDateField,
-  note,
-});
-
 /** What an entry of each kind holds; the kinds stand in addresses. */
 export const recordValues = {
   diagnoses: diagnosis,
@@ -164,6 +81,10 @@ export const recordValues = {
   thresholds: threshold,
   'walk-tests': walkTest,
   'risk-stratifications': riskStratification,
+  'resting-ecgs': restingEcg,
+  'chair-stands': chairStand,
+  restrictions: restriction,
+  questionnaires: questionnaire,
 } as const;
 
 export type RecordKind = keyof typeof recordValues;
@@ -181,16 +102,20 @@ const entryOf = <V extends z.ZodType>(values: V) =>
     recordedBy: person,
     enteredInErrorAt: z.iso.datetime({ offset: true }).nullable(),
     enteredInErrorBy: person.nullable(),
-    /** Why and when a threshold stopped to bind; null while it does, and for other kinds. */
+    /** Why and when a threshold stopped to bind, a restriction was lifted, a questionnaire's follow-up was closed; else null. */
     ended: z
       .object({
-        status: z.enum(['superseded', 'retired']),
+        status: z.enum(['superseded', 'retired', 'lifted', 'closed']),
         at: z.iso.datetime({ offset: true }),
         by: person,
         reason: z.string(),
       })
       .nullable(),
   });
+
+/** An entry as it is read: what was entered before a rule was made is read all the same. */
+const readEntry = <S extends z.ZodRawShape>({ shape }: { readonly shape: S }) =>
+  entryOf(z.object(shape));
 
 /** An entry as it stands in the record. */
 export const recordEntrySchema = entryOf(z.record(z.string(), z.unknown()));
@@ -203,19 +128,23 @@ export interface RecordEntry<K extends RecordKind = RecordKind> extends Omit<
 
 /** `GET /api/patients/:id/record`: every entry of every kind, the newest of its date first, those in error too. */
 export const recordResponseSchema = z.object({
-  diagnoses: z.array(entryOf(diagnosis)),
-  conditions: z.array(entryOf(condition)),
-  'clinical-events': z.array(entryOf(clinicalEvent)),
-  'body-measurements': z.array(entryOf(bodyMeasurement)),
-  rhythms: z.array(entryOf(rhythmEntry)),
-  'resting-rates': z.array(entryOf(restingRate)),
-  medications: z.array(entryOf(medication)),
-  'medication-reviews': z.array(entryOf(recordValues['medication-reviews'])),
-  devices: z.array(entryOf(device)),
-  'exercise-tests': z.array(entryOf(exerciseTest)),
-  thresholds: z.array(entryOf(threshold)),
-  'walk-tests': z.array(entryOf(walkTest)),
-  'risk-stratifications': z.array(entryOf(riskStratification)),
+  diagnoses: z.array(readEntry(diagnosis)),
+  conditions: z.array(readEntry(condition)),
+  'clinical-events': z.array(readEntry(clinicalEvent)),
+  'body-measurements': z.array(readEntry(bodyMeasurement)),
+  rhythms: z.array(readEntry(rhythmEntry)),
+  'resting-rates': z.array(readEntry(restingRate)),
+  medications: z.array(readEntry(medication)),
+  'medication-reviews': z.array(readEntry(recordValues['medication-reviews'])),
+  devices: z.array(readEntry(device)),
+  'exercise-tests': z.array(readEntry(exerciseTest)),
+  thresholds: z.array(readEntry(threshold)),
+  'walk-tests': z.array(readEntry(walkTest)),
+  'risk-stratifications': z.array(readEntry(riskStratification)),
+  'resting-ecgs': z.array(readEntry(restingEcg)),
+  'chair-stands': z.array(readEntry(chairStand)),
+  restrictions: z.array(readEntry(restriction)),
+  questionnaires: z.array(readEntry(questionnaire)),
 });
 export type PatientRecord = z.infer<typeof recordResponseSchema>;
 
@@ -243,6 +172,10 @@ export const recordBatchRequestSchema = z.strictObject({
         entryRequest('thresholds'),
         entryRequest('walk-tests'),
         entryRequest('risk-stratifications'),
+        entryRequest('resting-ecgs'),
+        entryRequest('chair-stands'),
+        entryRequest('restrictions'),
+        entryRequest('questionnaires'),
       ]),
     )
     .min(1, 'Enter at least one')
@@ -257,6 +190,21 @@ export const recordBatchResponseSchema = z.object({ entries: z.array(recordEntry
 /** `POST …/record/medications/:entryId/stop`; null takes a stop back. */
 export const stopMedicationRequestSchema = z.strictObject({
   stoppedOn: localDateField.nullable(),
+});
+
+/** `POST …/record/thresholds/:entryId/supersede`: a later clean test, confirmed by a person, takes its place. */
+export const supersedeThresholdRequestSchema = z.strictObject({
+  exerciseTestId: z.uuid(),
+});
+
+/** `POST …/record/restrictions/:entryId/lift`. */
+export const liftRestrictionRequestSchema = z.strictObject({
+  reason: textField(300, 'Say who lifted it and why'),
+});
+
+/** `POST …/record/questionnaires/:entryId/close-follow-up`, by who spoke with the patient. */
+export const closeFollowUpRequestSchema = z.strictObject({
+  done: textField(500, 'Say what was done'),
 });
 
 /** `POST …/record/thresholds/:entryId/retire`, by a physician. */

@@ -120,6 +120,13 @@ export const accessTable: Readonly<Record<string, AccessRow>> = {
     who: ['physician'],
     guarded: true,
   },
+  'POST /api/patients/:id/record/thresholds/:entryId/supersede': { who: chart, guarded: true },
+  'POST /api/patients/:id/record/restrictions/:entryId/lift': { who: chart, guarded: true },
+  'POST /api/patients/:id/record/questionnaires/:entryId/close-follow-up': {
+    who: chart,
+    guarded: true,
+  },
+  'GET /api/follow-ups': { who: chart, strangers: 200, record: () => ({}) },
 
   'POST /api/patients/:id/invitation': {
     who: ['front-desk', 'nurse', 'administrator'],

@@ -12,6 +12,15 @@ import {
   uuid,
 } from 'drizzle-orm/pg-core';
 import type { AnyPgColumn } from 'drizzle-orm/pg-core';
+import type { DosingTime, DrugFlag } from '@shared/clinical/drugs/drug';
+import type { TestProtocol } from '@shared/clinical/exercise-test/protocols';
+import type { StandEnding } from '@shared/clinical/five-times-sit-to-stand';
+import type { RiskFinding } from '@shared/clinical/risk/criteria';
+import type { RestrictionKind } from '@shared/clinical/training/restrictions';
+import type { EcgHindrance } from '@shared/clinical/thresholds/ecg-readable';
+import type { QuestionnaireKey } from '@shared/contracts/record-assessments-contract';
+import type { RecordValues } from '@shared/contracts/record-contract';
+import type { PacingMode } from '@shared/contracts/record-treatment-contract';
 import { users } from './accounts';
 import { id, instant, madeAt } from './columns';
 import { diagnosisKind, patients } from './patients';
@@ -25,6 +34,13 @@ const attribution = () => ({
   enteredInErrorAt: instant(),
   enteredInErrorBy: uuid().references(() => users.id),
 });
+
+type TestValues = RecordValues<'exercise-tests'>;
+type QuestionnaireValues = RecordValues<'questionnaires'>;
+
+/** An end has its instant, its person and its reason, or nothing. */
+const endedWhole = (t: Record<'endedAt' | 'endedBy' | 'endedReason', AnyPgColumn>) =>
+  sql`num_nulls(${t.endedAt}, ${t.endedBy}, ${t.endedReason}) in (0, 3)`;
 
 const ofPatient = () =>
   uuid()
@@ -53,9 +69,17 @@ export const conditions = pgTable(
     /** A key of the evaluate request's `conditions`. */
     kind: text().notNull(),
     value: text().notNull(),
+    since: date({ mode: 'string' }),
+    evidence: text(),
     ...attribution(),
   },
-  (t) => [index('conditions_patient').on(t.patientId, t.kind, t.recordedAt)],
+  (t) => [
+    index('conditions_patient').on(t.patientId, t.kind, t.recordedAt),
+    check(
+      'conditions_recovered_by_evidence',
+      sql`${t.kind} <> 'transplant' or ${t.value} <> 'recovered' or ${t.evidence} is not null`,
+    ),
+  ],
 );
 
 /** An event, procedure or stay after which a test no longer stands. */
@@ -146,6 +170,9 @@ export const medications = pgTable(
     id: id(),
     patientId: ofPatient(),
     name: text().notNull(),
+    salt: text(),
+    flags: text().array().$type<DrugFlag[]>().notNull().default([]),
+    times: text().array().$type<DosingTime[]>().notNull().default([]),
     /** Null for a drug that does not act on the heart rate. */
     rateActing: rateActingClass(),
     dose: text().notNull(),
@@ -162,6 +189,14 @@ export const medications = pgTable(
   (t) => [
     index('medications_patient').on(t.patientId, t.startedOn),
     check('medications_order', sql`${t.stoppedOn} >= ${t.startedOn}`),
+    check(
+      'medications_flags',
+      sql`${t.flags} <@ array['anticoagulant', 'nitrate', 'glucose-lowering']`,
+    ),
+    check(
+      'medications_times',
+      sql`${t.times} <@ array['morning', 'noon', 'evening', 'bedtime', 'as-needed']`,
+    ),
   ],
 );
 
@@ -186,13 +221,26 @@ export const cardiacDevices = pgTable(
       .notNull()
       .default([]),
     pacemaker: boolean().notNull().default(false),
+    pacingMode: text().$type<PacingMode>(),
+    lowerRate: real(),
     upperTrackingRate: real(),
+    upperSensorRate: real(),
     checkedOn: date({ mode: 'string' }).notNull(),
     ...attribution(),
   },
   (t) => [
     index('cardiac_devices_patient').on(t.patientId, t.checkedOn),
     check('cardiac_devices_tracking', sql`${t.upperTrackingRate} between 50 and 220`),
+    check('cardiac_devices_lower', sql`${t.lowerRate} between 30 and 150`),
+    check('cardiac_devices_sensor', sql`${t.upperSensorRate} between 50 and 220`),
+    check(
+      'cardiac_devices_order',
+      sql`${t.lowerRate} is null or (${t.lowerRate} < coalesce(${t.upperTrackingRate}, 999) and ${t.lowerRate} < coalesce(${t.upperSensorRate}, 999))`,
+    ),
+    check(
+      'cardiac_devices_paces',
+      sql`${t.pacemaker} or (${t.pacingMode} is null and ${t.lowerRate} is null and ${t.upperSensorRate} is null)`,
+    ),
     check(
       'cardiac_devices_zones',
       sql`${t.icdStatus} = 'present' or jsonb_array_length(${t.icdZones}) = 0`,
@@ -223,10 +271,25 @@ export const exerciseTests = pgTable(
     patientId: ofPatient(),
     mode: testMode().notNull(),
     protocol: text().notNull(),
+    protocolKind: text().$type<TestProtocol>().notNull().default('other'),
     performedOn: date({ mode: 'string' }).notNull(),
     endedBy: testEnd().notNull(),
     restingHeartRate: real(),
     peakHeartRate: real().notNull(),
+    peakSystolic: real(),
+    peakDiastolic: real(),
+    peakExertion: real(),
+    exerciseMinutes: real(),
+    stages: jsonb().$type<TestValues['stages']>().notNull().default([]),
+    gait: text().$type<TestValues['gait']>(),
+    handrail: boolean(),
+    effort: text().$type<TestValues['effort']>(),
+    recoveryOne: real(),
+    recoveryTwo: real(),
+    recoveryPosture: text().$type<TestValues['recoveryPosture']>(),
+    signs: jsonb().$type<TestValues['signs']>().notNull().default([]),
+    /** Null: not asked. */
+    drugsTaken: jsonb().$type<TestValues['drugsTaken']>(),
     peakVo2: real(),
     peakMets: real(),
     vo2Source: vo2Source(),
@@ -239,6 +302,26 @@ export const exerciseTests = pgTable(
     check('exercise_tests_peak', sql`${t.peakHeartRate} between 60 and 230`),
     check('exercise_tests_vo2', sql`${t.peakVo2} between 4 and 80`),
     check('exercise_tests_mets', sql`${t.peakMets} between 1 and 25`),
+    check(
+      'exercise_tests_pressure',
+      sql`${t.peakDiastolic} is null or (${t.peakSystolic} is not null and ${t.peakDiastolic} < ${t.peakSystolic})`,
+    ),
+    check(
+      'exercise_tests_bounds',
+      sql`${t.peakSystolic} between 50 and 300 and ${t.peakDiastolic} between 20 and 200 and ${t.peakExertion} between 6 and 20 and ${t.exerciseMinutes} between 0.1 and 60 and ${t.recoveryOne} between 30 and 230 and ${t.recoveryTwo} between 30 and 230`,
+    ),
+    check(
+      'exercise_tests_lists',
+      sql`jsonb_typeof(${t.stages}) = 'array' and jsonb_typeof(${t.signs}) = 'array' and coalesce(jsonb_typeof(${t.drugsTaken}), 'array') in ('array', 'null')`,
+    ),
+    check(
+      'exercise_tests_treadmill',
+      sql`${t.mode} = 'treadmill' or (${t.gait} is null and ${t.handrail} is null)`,
+    ),
+    check(
+      'exercise_tests_words',
+      sql`${t.gait} in ('walk', 'run') and ${t.effort} in ('maximal', 'submaximal') and ${t.recoveryPosture} in ('upright', 'seated', 'supine')`,
+    ),
   ],
 );
 
@@ -270,10 +353,16 @@ export const thresholds = pgTable(
     endedAt: instant(),
     endedBy: uuid().references(() => users.id),
     endedReason: text(),
+    /** The later clean test that a person took for its end. */
+    supersededByTestId: uuid().references(() => exerciseTests.id),
     ...attribution(),
   },
   (t) => [
     index('thresholds_patient').on(t.patientId, t.status),
+    check(
+      'thresholds_superseded_by_test',
+      sql`${t.supersededByTestId} is null or ${t.status} = 'superseded'`,
+    ),
     check('thresholds_rate', sql`${t.heartRate} between 40 and 230`),
     check('thresholds_clear_mets', sql`${t.clearMets} between 1 and 25`),
     check(
@@ -306,9 +395,126 @@ export const riskStratifications = pgTable(
     id: id(),
     patientId: ofPatient(),
     level: riskLevel().notNull(),
+    /** Each criterion there, not there or missing (null). */
+    findings: jsonb().$type<Partial<Record<RiskFinding, boolean | null>>>().notNull().default({}),
+    ejectionFraction: real(),
+    capacity: real(),
+    overrideReason: text(),
     assessedOn: date({ mode: 'string' }).notNull(),
     note: text(),
     ...attribution(),
   },
-  (t) => [index('risk_stratifications_patient').on(t.patientId, t.assessedOn)],
+  (t) => [
+    index('risk_stratifications_patient').on(t.patientId, t.assessedOn),
+    check('risk_stratifications_ejection', sql`${t.ejectionFraction} between 5 and 90`),
+    check('risk_stratifications_capacity', sql`${t.capacity} between 1 and 25`),
+    // What is missing never counts as low, nor does a person's word make it so.
+    check(
+      'risk_stratifications_low_is_whole',
+      sql`${t.level} <> 'low' or (jsonb_array_length(jsonb_path_query_array(${t.findings}, '$.* ? (@ != null)')) = 14 and ${t.ejectionFraction} is not null and ${t.capacity} is not null)`,
+    ),
+  ],
+);
+
+/** Whether the ECG can show ischemia in exercise: what hides it; none listed, it can. */
+export const restingEcgs = pgTable(
+  'resting_ecgs',
+  {
+    id: id(),
+    patientId: ofPatient(),
+    hindrances: text().array().$type<EcgHindrance[]>().notNull(),
+    observedOn: date({ mode: 'string' }).notNull(),
+    note: text(),
+    ...attribution(),
+  },
+  (t) => [index('resting_ecgs_patient').on(t.patientId, t.observedOn)],
+);
+
+export const chairStands = pgTable(
+  'chair_stands',
+  {
+    id: id(),
+    patientId: ofPatient(),
+    /** Null: could not be done. */
+    seconds: real(),
+    ending: text().$type<StandEnding>().notNull(),
+    performedOn: date({ mode: 'string' }).notNull(),
+    ...attribution(),
+  },
+  (t) => [
+    index('chair_stands_patient').on(t.patientId, t.performedOn),
+    check('chair_stands_seconds', sql`${t.seconds} between 3 and 300`),
+    check('chair_stands_ending', sql`${t.ending} in ('standing-fifth-time', 'seated-fifth-time')`),
+  ],
+);
+
+/** Ordered for one patient; lifted by a person, or over after its last day. */
+export const restrictions = pgTable(
+  'restrictions',
+  {
+    id: id(),
+    patientId: ofPatient(),
+    kind: text().$type<RestrictionKind>().notNull(),
+    limit: real(),
+    diastolic: real(),
+    detail: text().notNull(),
+    orderedBy: text().notNull(),
+    orderedOn: date({ mode: 'string' }).notNull(),
+    until: date({ mode: 'string' }),
+    endedAt: instant(),
+    endedBy: uuid().references(() => users.id),
+    endedReason: text(),
+    ...attribution(),
+  },
+  (t) => [
+    index('restrictions_patient').on(t.patientId, t.orderedOn),
+    check(
+      'restrictions_kind',
+      sql`${t.kind} in ('sternum', 'device-arm', 'joint', 'fall', 'lifting', 'oxygen', 'pressure', 'claudication')`,
+    ),
+    check('restrictions_order', sql`${t.until} >= ${t.orderedOn}`),
+    check(
+      'restrictions_limit',
+      sql`(${t.kind} in ('lifting', 'oxygen', 'pressure')) = (${t.limit} is not null)`,
+    ),
+    check(
+      'restrictions_pressure',
+      sql`${t.diastolic} is null or (${t.kind} = 'pressure' and ${t.diastolic} < ${t.limit})`,
+    ),
+    check('restrictions_lifted_by_someone', endedWhole(t)),
+  ],
+);
+
+/** Answers as given; scores are computed from them. A PHQ-9 whose ninth item is above zero waits for a person. */
+export const questionnaireAnswers = pgTable(
+  'questionnaire_answers',
+  {
+    id: id(),
+    patientId: ofPatient(),
+    instrument: text().$type<QuestionnaireKey>().notNull(),
+    answers: jsonb().$type<QuestionnaireValues['answers']>().notNull(),
+    answeredOn: date({ mode: 'string' }).notNull(),
+    /** Thoughts of self-harm were told: someone speaks with the patient the same day. */
+    selfHarm: boolean()
+      .notNull()
+      .generatedAlwaysAs(
+        sql`instrument = 'phq-9' and coalesce(answers ->> 8, '0') in ('1', '2', '3')`,
+      ),
+    endedAt: instant(),
+    endedBy: uuid().references(() => users.id),
+    endedReason: text(),
+    ...attribution(),
+  },
+  (t) => [
+    index('questionnaire_answers_patient').on(t.patientId, t.answeredOn),
+    index('questionnaire_answers_follow_up')
+      .on(t.recordedAt)
+      .where(sql`self_harm and ended_at is null and entered_in_error_at is null`),
+    check(
+      'questionnaire_answers_length',
+      sql`jsonb_array_length(${t.answers}) = case ${t.instrument} when 'phq-2' then 2 when 'phq-9' then 9 when 'gad-7' then 7 when 'dasi' then 12 else -1 end`,
+    ),
+    check('questionnaire_answers_closed_by_someone', endedWhole(t)),
+    check('questionnaire_answers_closed_follow_up', sql`${t.endedAt} is null or ${t.selfHarm}`),
+  ],
 );

@@ -50,12 +50,24 @@ type Device = RecordFacts['record']['devices'][number];
 const settingsOf = ({ values }: Device): string =>
   JSON.stringify([values.icdStatus, values.icdZones, values.pacemaker, values.upperTrackingRate]);
 
+/** How the device paces; what was not written down is not known, and becoming known is no change. */
+const pacingKeys = ['pacingMode', 'lowerRate', 'upperSensorRate'] as const;
+
+const pacesOtherwise = (entry: Device, before: Device): boolean =>
+  pacingKeys.some((key) => {
+    const [now, then] = [entry.values[key], before.values[key]];
+    return now !== null && then !== null && now !== then;
+  });
+
 function deviceChanges({ record }: RecordFacts): Change[] {
   // What was unknown and became known did not change by it.
   const known = [...record.devices]
     .reverse()
     .filter(({ values }) => values.icdStatus !== 'unknown');
-  const changed = differences(known, (entry, before) => settingsOf(entry) !== settingsOf(before));
+  const changed = differences(
+    known,
+    (entry, before) => settingsOf(entry) !== settingsOf(before) || pacesOtherwise(entry, before),
+  );
   return changed.map(({ id, values }) => ({
     text: 'device settings changed',
     date: values.checkedOn,

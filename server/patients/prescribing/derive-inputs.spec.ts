@@ -301,7 +301,11 @@ describe('conditions', () => {
 
   it('take the latest answer before what a diagnosis implies', () => {
     const answer = (value: string, on: string) =>
-      entry('conditions', { kind: 'transplant', value }, on);
+      entry(
+        'conditions',
+        { kind: 'transplant', value, evidence: 'The rate fell by 24 bpm in a minute' },
+        on,
+      );
     const { conditions } = inputsOf({
       diagnoses: [entry('diagnoses', { kind: 'transplant', description: 'Heart' })],
       conditions: [answer('recovered', today), answer('denervated', '2026-10-01')],

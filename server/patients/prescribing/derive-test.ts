@@ -24,14 +24,15 @@ export function testOf(facts: RecordFacts, changes: LatestChanges, today: string
   const [latest] = facts.record['exercise-tests'];
   if (!latest)
     return { value: null, origins: { test: nothingEntered('No exercise test entered') } };
-  const { performedOn, protocol, note: _note, vo2Source, ...measured } = latest.values;
+  const { performedOn, protocol, mode, endedBy, vo2Source } = latest.values;
+  const { restingHeartRate, peakHeartRate, peakVo2, peakMets } = latest.values;
   const drugsKnown = facts.record['medication-reviews'].length > 0;
   const drugsChanged = isSince(changes.drugs, performedOn);
   const rhythmChanged = isSince(changes.rhythmOrDevice, performedOn);
   const eventSince = isSince(changes.event, performedOn);
   return {
     value: {
-      ...measured,
+      ...{ mode, endedBy, restingHeartRate, peakHeartRate, peakVo2, peakMets },
       daysAgo: daysBetween(performedOn, today),
       sameRateActingDrugs: drugsKnown && !drugsChanged,
       sameRhythmAndDevice: !rhythmChanged,
@@ -41,7 +42,7 @@ export function testOf(facts: RecordFacts, changes: LatestChanges, today: string
     },
     origins: {
       test: {
-        text: `${protocol}, ${measured.mode}, ended by ${measured.endedBy.replaceAll('-', ' ')}`,
+        text: `${protocol}, ${mode}, ended by ${endedBy.replaceAll('-', ' ')}`,
         date: performedOn,
         old: isOld(performedOn, today, oldAfterDays.test),
         entryId: latest.id,

@@ -82,6 +82,34 @@ export class PatientChart {
     );
   }
 
+  async supersedeThreshold(entryId: string, testId: string): Promise<void> {
+    await this.#told('Superseded: it no longer binds.', () =>
+      firstValueFrom(
+        this.#client.endEntry(this.#opened(), `thresholds/${entryId}/supersede`, {
+          exerciseTestId: testId,
+        }),
+      ),
+    );
+  }
+
+  async liftRestriction(entryId: string, reason: string): Promise<void> {
+    await this.#told('Lifted: it no longer holds.', () =>
+      firstValueFrom(
+        this.#client.endEntry(this.#opened(), `restrictions/${entryId}/lift`, { reason }),
+      ),
+    );
+  }
+
+  async closeFollowUp(entryId: string, done: string): Promise<void> {
+    await this.#told('Closed, with what was done.', () =>
+      firstValueFrom(
+        this.#client.endEntry(this.#opened(), `questionnaires/${entryId}/close-follow-up`, {
+          done,
+        }),
+      ),
+    );
+  }
+
   /** Does a change, reads the page again and says so; a failure is said in the same place. */
   async #told(said: string, change: () => Promise<unknown>): Promise<void> {
     try {

@@ -143,6 +143,13 @@ export class PatientsClient {
     return this.#http.post(`/api/patients/${id}/record/thresholds/${entryId}/retire`, { reason });
   }
 
+  /** @param path the entry and what is done to it, as `restrictions/:id/lift` */
+  endEntry(id: string, path: string, body: object): Observable<unknown> {
+    return this.#http
+      .post(`/api/patients/${id}/record/${path}`, body)
+      .pipe(map((answer) => recordEntrySchema.parse(answer)));
+  }
+
   prescriptions(id: Signal<string | undefined>): HttpResourceRef<Prescription[] | undefined> {
     return httpResource(
       () => (id() === undefined ? undefined : `/api/patients/${id()}/prescriptions`),

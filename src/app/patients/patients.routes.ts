@@ -41,8 +41,15 @@ export const patientsRoutes: Routes = [
           (await import('./progress-section/progress-section')).ProgressSection,
       },
       chart('medicines', ['medications']),
-      chart('devices', ['devices']),
-      chart('tests', ['exercise-tests', 'thresholds', 'walk-tests']),
+      chart('devices', ['devices', 'restrictions']),
+      chart('questionnaires', ['questionnaires']),
+      chart('tests', [
+        'exercise-tests',
+        'thresholds',
+        'resting-ecgs',
+        'walk-tests',
+        'chair-stands',
+      ]),
       chart('resting', ['resting-rates', 'rhythms', 'body-measurements']),
       chart('conditions', ['diagnoses', 'clinical-events', 'risk-stratifications'], true),
       {

@@ -32,6 +32,7 @@ import type { ListedKind } from '../record-section/section-words';
           [record]="record"
           [today]="patient.today"
           [timeZone]="patient.site.timeZone"
+          [patient]="patient"
         >
           @if (kind === 'medications') {
             <app-medication-review [record]="record" [timeZone]="patient.site.timeZone" />

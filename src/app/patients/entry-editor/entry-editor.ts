@@ -9,10 +9,21 @@ import {
   output,
   signal,
 } from '@angular/core';
+import { takeUntilDestroyed, toObservable, toSignal } from '@angular/core/rxjs-interop';
 import { type FormGroup, ReactiveFormsModule } from '@angular/forms';
 import { MatButton } from '@angular/material/button';
 import { recordValues } from '@shared/contracts/record-contract';
 import type { FieldError } from '@shared/errors';
+import {
+  EMPTY,
+  type Observable,
+  distinctUntilChanged,
+  map,
+  merge,
+  startWith,
+  switchMap,
+  tap,
+} from 'rxjs';
 import { v7 as uuidv7 } from 'uuid';
 import { type Problem, toProblem } from '../../core/problem';
 import { showFieldErrors } from '../../ui/field-error/zod-validator';
@@ -20,7 +31,8 @@ import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { EntryField } from '../entry-field/entry-field';
 import { PatientChart } from '../patient-chart';
 import type { EntryForm } from './entry-form';
-import { askAgain, buildGroup, readGroup, unitKey } from './entry-group';
+import { ComputedLines } from '../computed-lines/computed-lines';
+import { askAgain, buildGroup, fillField, readGroup, unitKey } from './entry-group';
 import { UnitMemory } from './unit-memory';
 
 type Entries = ReturnType<EntryForm['toEntries']>;
@@ -30,7 +42,7 @@ const inRequest = /^entries\.(\d+)\.values\.(.*)$/;
 /** The form of an entry: nothing typed is lost on an error, Escape leaves, sending twice enters once. */
 @Component({
   selector: 'app-entry-editor',
-  imports: [EntryField, MatButton, ProblemMessage, ReactiveFormsModule],
+  imports: [ComputedLines, EntryField, MatButton, ProblemMessage, ReactiveFormsModule],
   templateUrl: './entry-editor.html',
   styleUrl: './entry-editor.scss',
   host: { '(keydown.escape)': 'cancel($event)' },
@@ -55,11 +67,46 @@ export class EntryEditor {
     const { fields, rules, initial = {} } = this.form();
     return buildGroup(fields, rules, initial, this.context());
   });
+  /** Counts what is typed, so that what is computed from it follows. */
+  readonly #typed = toSignal(
+    toObservable(this.group).pipe(
+      switchMap((group) => group.valueChanges.pipe(startWith(null))),
+      map((_, count) => count),
+    ),
+  );
+  protected readonly lines = computed(() => {
+    this.#typed();
+    const { fields, lines } = this.form();
+    return lines?.(readGroup(fields, this.group())) ?? [];
+  });
   protected readonly sending = signal(false);
   protected readonly problem = signal<Problem | null>(null);
 
   constructor() {
     afterNextRender(() => this.#focus('input, select, textarea'));
+    toObservable(this.group)
+      .pipe(
+        switchMap((group) => merge(...this.#filling(group))),
+        takeUntilDestroyed(),
+      )
+      .subscribe();
+  }
+
+  /** For each field that fills others: what it fills, whenever another value is chosen in it. */
+  #filling(group: FormGroup): Observable<unknown>[] {
+    const { fills = {}, fields } = this.form();
+    return Object.entries(fills).map(([key, fill]) => {
+      const changes: Observable<unknown> = group.get([key])?.valueChanges ?? EMPTY;
+      return changes.pipe(
+        distinctUntilChanged(),
+        tap(() => {
+          for (const [filled, value] of Object.entries(fill(readGroup(fields, group)))) {
+            const field = fields.find((each) => each.key === filled);
+            if (field) fillField(group, field, value, this.context());
+          }
+        }),
+      );
+    });
   }
 
   protected cancel(event: Event): void {

@@ -18,7 +18,22 @@ interface FieldBase {
 /** One control of a form, by what is entered. */
 export type EntryField = FieldBase &
   (
-    | { readonly type: 'text' | 'note' | 'date' | 'check' }
+    | { readonly type: 'note' | 'date' | 'check' | 'yes-no' }
+    | {
+        readonly type: 'text';
+        /** Left empty it is null. */
+        readonly optional?: true;
+        /** What may be meant by what was typed. */
+        readonly suggest?: (typed: string) => readonly string[];
+      }
+    | { readonly type: 'marks'; readonly options: readonly Option[] }
+    | {
+        /** Questions with the same answers each; one value an item, null where none is given. */
+        readonly type: 'items';
+        readonly question: string;
+        readonly items: readonly string[];
+        readonly answers: readonly { readonly label: string; readonly value: number | boolean }[];
+      }
     | { readonly type: 'number'; readonly units: readonly [Unit, ...Unit[]] }
     | {
         readonly type: 'choice';
@@ -29,6 +44,8 @@ export type EntryField = FieldBase &
     | {
         readonly type: 'rows';
         readonly add: string;
+        /** A table to run through by keyboard, instead of a block each. */
+        readonly asGrid?: true;
         readonly fields: readonly EntryField[];
         readonly rules: Rules;
       }
@@ -39,6 +56,18 @@ export type Rules = Readonly<Record<string, z.ZodType>>;
 
 /** What was read from a form, by key. */
 export type Values = Record<string, unknown>;
+
+/** A value made from what was typed, with what it means and where it comes from. */
+export interface Line {
+  readonly label: string;
+  /** With its unit; null: why says why there is none. */
+  readonly value: string | null;
+  readonly judgment?: string | null;
+  /** Whether the judgment asks for attention. */
+  readonly isDue?: boolean;
+  readonly source?: string | null;
+  readonly why?: string | null;
+}
 
 /** A form that makes entries of the record. */
 export interface EntryForm {
@@ -53,6 +82,10 @@ export interface EntryForm {
   /** Where the values of an entry stand in the form: '' or ending in a dot. */
   readonly pathOf: (index: number) => string;
   readonly saved: string;
+  /** Shown below the fields while one types. */
+  readonly lines?: (values: Values) => readonly Line[];
+  /** What another choice in a field fills into others, by the key of that field; {} for nothing. */
+  readonly fills?: Readonly<Record<string, (values: Values) => Values>>;
 }
 
 interface FormWords {

@@ -30,14 +30,18 @@ function readControl(field: EntryField, control: AbstractControl): unknown {
     case 'rows':
       return (control as FormArray<FormGroup>).controls.map((row) => readGroup(field.fields, row));
     case 'check':
+    case 'marks':
+    case 'items':
       return raw;
+    case 'yes-no':
+      return raw === '' ? null : raw === 'yes';
     case 'note':
       return String(raw).trim() === '' ? null : raw;
     case 'choice':
     case 'date':
       return raw === '' ? null : raw;
     case 'text':
-      return raw;
+      return field.optional && String(raw).trim() === '' ? null : raw;
   }
 }
 
@@ -57,13 +61,11 @@ function validatorOf(field: EntryField, rule: Rules[string] | undefined): Valida
   return [(control) => check(new FormControl(readControl(field, control)))];
 }
 
-function textOf(
-  field: EntryField,
-  value: unknown,
-  unit: Unit | null,
-  today: string,
-): string | boolean {
+function textOf(field: EntryField, value: unknown, unit: Unit | null, today: string): unknown {
   if (field.type === 'check') return value === true;
+  if (field.type === 'marks') return value ?? [];
+  if (field.type === 'items') return value ?? field.items.map(() => null);
+  if (field.type === 'yes-no') return value === true ? 'yes' : value === false ? 'no' : '';
   if (value === null || value === undefined)
     return field.type === 'date' && value === undefined ? today : '';
   if (typeof value === 'number') return unit ? unit.write(value) : String(value);
@@ -94,6 +96,27 @@ function addField(
   if (unit) group.addControl(unitKey(field.key), new FormControl(unit.name, { nonNullable: true }));
   control.addValidators(validators);
   control.updateValueAndValidity();
+}
+
+/** Puts a value into a field that is built already; rows are made anew. */
+export function fillField(
+  group: FormGroup,
+  field: EntryField,
+  value: unknown,
+  context: FormContext,
+): void {
+  const control = group.get([field.key]);
+  if (field.type === 'rows') {
+    const array = control as FormArray<FormGroup>;
+    array.clear();
+    for (const row of value as Values[]) {
+      array.push(buildGroup(field.fields, field.rules, row, context));
+    }
+    return;
+  }
+  const name: unknown = group.get([unitKey(field.key)])?.value;
+  const unit = field.type === 'number' ? unitOf(field, name) : null;
+  control?.setValue(textOf(field, value, unit, context.today));
 }
 
 export interface FormContext {

@@ -1,4 +1,4 @@
-import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, input, signal } from '@angular/core';
 import {
   type FormArray,
   type FormControl,
@@ -11,6 +11,7 @@ import { MatError, MatFormField, MatHint, MatLabel, MatSuffix } from '@angular/m
 import { MatInput } from '@angular/material/input';
 import { FieldError } from '../../ui/field-error/field-error';
 import { Icon } from '../../ui/icon/icon';
+import { EntryGrid } from '../entry-grid/entry-grid';
 import { type FormContext, buildGroup, unitKey } from '../entry-editor/entry-group';
 import type { EntryField as Field } from '../entry-editor/entry-form';
 
@@ -18,6 +19,7 @@ import type { EntryField as Field } from '../entry-editor/entry-form';
 @Component({
   selector: 'app-entry-field',
   imports: [
+    EntryGrid,
     FieldError,
     Icon,
     MatButton,
@@ -59,6 +61,37 @@ export class EntryField {
     const field = this.field();
     if (field.type !== 'rows') return;
     this.rows().push(buildGroup(field.fields, field.rules, {}, this.context()));
+  }
+
+  protected readonly suggestions = computed(() => {
+    const field = this.field();
+    return field.type === 'text' && field.suggest ? field.suggest : null;
+  });
+  protected readonly listId = computed(() => `suggest-${this.field().key}`);
+  protected readonly suggested = signal<readonly string[]>([]);
+
+  protected typed(event: Event): void {
+    const text = (event.target as HTMLInputElement).value;
+    this.suggested.set(this.suggestions()?.(text) ?? []);
+  }
+
+  protected isMarked(value: string): boolean {
+    return (this.control().value as unknown as string[]).includes(value);
+  }
+
+  protected mark(value: string, marked: boolean): void {
+    const control = this.control() as unknown as FormControl<string[]>;
+    const others = control.value.filter((each) => each !== value);
+    control.setValue(marked ? [...others, value] : others);
+  }
+
+  protected answerAt(index: number): unknown {
+    return (this.control().value as unknown as unknown[])[index] ?? null;
+  }
+
+  protected answer(index: number, value: number | boolean): void {
+    const control = this.control() as unknown as FormControl<unknown[]>;
+    control.setValue(control.value.map((each, at) => (at === index ? value : each)));
   }
 
   protected removeRow(index: number): void {

@@ -19,6 +19,8 @@ import {
   retireThresholdRequestSchema,
   stopMedicationRequestSchema,
 } from '@shared/contracts/record-contract';
+import { ComputedLines } from '../computed-lines/computed-lines';
+import type { Line } from '../entry-editor/entry-form';
 import { FieldError } from '../../ui/field-error/field-error';
 import { zodValidator } from '../../ui/field-error/zod-validator';
 import { Icon } from '../../ui/icon/icon';
@@ -29,12 +31,45 @@ import { entryWords } from './entry-words';
 import type { ListedKind } from './section-words';
 
 /** What is asked before an action: a stop's date, a reason, or no more than yes. */
-type Asked = 'in-error' | 'stop' | 'retire';
+type Asked = 'in-error' | 'stop' | 'retire' | 'supersede' | 'lift' | 'close';
+
+/** A later test that may take a limit's place. */
+export interface CleanTest {
+  readonly id: string;
+  readonly performedOn: string;
+  readonly peakHeartRate: number;
+}
+
+interface Question {
+  readonly label: string;
+  readonly button: string;
+}
+
+/** What asks for words, and the button that says them. */
+const asksForWords: Readonly<Partial<Record<Asked, Question>>> = {
+  retire: { label: 'Why it no longer binds', button: 'Retire the limit' },
+  lift: { label: 'Who lifted it, and why', button: 'Lift the order' },
+  close: { label: 'What was done, and with whom', button: 'Close the follow-up' },
+};
+
+const buttons: Readonly<Partial<Record<Asked, string>>> = {
+  stop: 'Stop the drug',
+  supersede: 'It no longer binds',
+  'in-error': 'Mark as entered in error',
+};
+
+const endWords = {
+  retired: 'Retired',
+  superseded: 'Superseded',
+  lifted: 'Lifted',
+  closed: 'Followed up',
+} as const;
 
 /** One entry: what, of when, by whom, and what may be done with it. */
 @Component({
   selector: 'app-entry-row',
   imports: [
+    ComputedLines,
     FieldError,
     Icon,
     MatButton,
@@ -63,6 +98,14 @@ export class EntryRow {
   readonly inError = output();
   readonly stopped = output<string>();
   readonly retired = output<string>();
+  readonly superseded = output<string>();
+  readonly lifted = output<string>();
+  /** A follow-up, with what was done. */
+  readonly closed = output<string>();
+  /** What is computed from the entry. */
+  readonly lines = input<readonly Line[]>([]);
+  /** A later clean test, where there is one. */
+  readonly clean = input<CleanTest | null>(null);
 
   /** Whether the actions are shown. */
   protected readonly open = signal(false);
@@ -84,6 +127,28 @@ export class EntryRow {
   protected readonly binds = computed(
     () => this.kind() === 'thresholds' && this.entry().ended === null && !this.isWrong(),
   );
+  protected readonly question = computed(() => {
+    const asked = this.asked();
+    return (asked && asksForWords[asked]) ?? null;
+  });
+  protected readonly button = computed(
+    () => this.question()?.button ?? buttons[this.asked() ?? 'in-error'] ?? '',
+  );
+  protected readonly holds = computed(() => {
+    const { until } = this.entry().values as { until?: string | null };
+    const open = this.kind() === 'restrictions' && this.entry().ended === null && !this.isWrong();
+    return open && (!until || until >= this.today());
+  });
+  protected readonly waits = computed(() => {
+    const { instrument, answers } = this.entry().values as Partial<
+      RecordEntry<'questionnaires'>['values']
+    >;
+    const told = instrument === 'phq-9' && Number(answers?.[8] ?? 0) > 0;
+    return told && this.entry().ended === null && !this.isWrong();
+  });
+  protected readonly endWords = endWords;
+  protected readonly localDay = formatLocalDate;
+
   protected readonly mayChange = computed(
     () => this.binds() || (this.kind() === 'medications' && !this.isStopped()),
   );
@@ -130,13 +195,21 @@ export class EntryRow {
 
   protected answer(): void {
     const asked = this.asked();
-    const control = asked === 'stop' ? this.stoppedOn : asked === 'retire' ? this.reason : null;
+    const control = asked === 'stop' ? this.stoppedOn : this.question() ? this.reason : null;
     control?.markAsTouched();
     if (control?.invalid) return;
     this.asked.set(null);
     this.open.set(false);
+    this.#tell(asked);
+  }
+
+  #tell(asked: Asked | null): void {
+    const words = this.reason.value;
     if (asked === 'stop') this.stopped.emit(this.stoppedOn.value);
-    else if (asked === 'retire') this.retired.emit(this.reason.value);
+    else if (asked === 'retire') this.retired.emit(words);
+    else if (asked === 'lift') this.lifted.emit(words);
+    else if (asked === 'close') this.closed.emit(words);
+    else if (asked === 'supersede') this.superseded.emit(this.clean()?.id ?? '');
     else this.inError.emit();
   }
 }

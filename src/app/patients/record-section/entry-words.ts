@@ -1,3 +1,8 @@
+import { drugFlagWords } from '@shared/clinical/drugs/drug';
+import { questionnaires } from '@shared/clinical/questionnaires/questionnaires';
+import { limitWords, restrictionWords } from '@shared/clinical/restrictions/restriction-limits';
+import { ecgHindranceWords } from '@shared/clinical/thresholds/ecg-readable';
+import { restrictionEffects } from '@shared/clinical/training/restrictions';
 import type { PatientRecord, RecordKind } from '@shared/contracts/record-contract';
 import {
   conditionAnswerWords,
@@ -14,7 +19,9 @@ import {
   zoneWords,
 } from '../../ui/words/clinical-words';
 import { formatLocalDate } from '../../ui/words/dates';
-import { footAndInch, pound } from '../entry-editor/units';
+import { dosingWords } from '../entry-editor/treatment-forms';
+import { cycleLength, footAndInch, pound } from '../entry-editor/units';
+import { scoreWords } from '../lines/assessment-lines';
 
 /** How an entry reads in a list. */
 export interface EntryWords {
@@ -39,9 +46,13 @@ const words: { readonly [K in RecordKind]: (values: Values<K>) => EntryWords } =
     detail: diagnosisWords[kind],
     date: onsetOn,
   }),
-  conditions: ({ kind, value }) => ({
+  conditions: ({ kind, value, since, evidence }) => ({
     title: conditionWords[kind],
-    detail: conditionAnswerWords(kind)[value] ?? value,
+    detail: line(
+      conditionAnswerWords(kind)[value] ?? value,
+      since !== null && `since ${formatLocalDate(since)}`,
+      evidence,
+    ),
     date: null,
   }),
   'clinical-events': ({ kind, description, occurredOn }) => ({
@@ -67,23 +78,39 @@ const words: { readonly [K in RecordKind]: (values: Values<K>) => EntryWords } =
     detail: bpm(standing, 'Standing') ?? '',
     date: measuredOn,
   }),
-  medications: ({ name, dose, schedule, rateActing, startedOn, stoppedOn }) => ({
-    title: `${name} ${dose}`,
+  medications: ({
+    name,
+    salt,
+    dose,
+    schedule,
+    times,
+    flags,
+    rateActing,
+    startedOn,
+    stoppedOn,
+  }) => ({
+    title: [name, salt, dose].filter(Boolean).join(' '),
     detail: line(
       schedule,
+      times.map((time) => dosingWords[time]?.toLowerCase()).join(', '),
+      ...flags.map((flag) => drugFlagWords[flag].toLowerCase()),
       rateActing !== null && `acts on the heart rate: ${rateActingWords[rateActing].toLowerCase()}`,
       stoppedOn !== null && `stopped ${formatLocalDate(stoppedOn)}`,
     ),
     date: startedOn,
   }),
   'medication-reviews': () => ({ title: 'List verified', detail: '', date: null }),
-  devices: ({ icdStatus, icdZones, pacemaker, upperTrackingRate, checkedOn }) => ({
+  devices: ({ icdStatus, icdZones, pacemaker, upperTrackingRate, checkedOn, ...pacing }) => ({
     title: icdWords[icdStatus],
     detail: line(
-      ...icdZones.map(({ rate, kind }) => `${zoneWords[kind]} from ${rate} bpm`),
+      ...icdZones.map(
+        ({ rate, kind }) => `${zoneWords[kind]} from ${rate} bpm (${cycleLength.write(rate)} ms)`,
+      ),
       icdStatus === 'present' && icdZones.length === 0 && 'zones not known',
-      pacemaker && 'paces',
+      pacemaker && `paces${pacing.pacingMode === null ? '' : ` ${pacing.pacingMode}`}`,
+      bpm(pacing.lowerRate, 'from'),
       bpm(upperTrackingRate, 'tracks up to'),
+      bpm(pacing.upperSensorRate, 'sensor up to'),
     ),
     date: checkedOn,
   }),
@@ -92,6 +119,12 @@ const words: { readonly [K in RecordKind]: (values: Values<K>) => EntryWords } =
     detail: line(
       testModeWords[test.mode],
       `ended by ${testEndWords[test.endedBy].toLowerCase()}`,
+      test.effort === 'submaximal' && 'stopped before the limit',
+      test.exerciseMinutes !== null && `${test.exerciseMinutes} min`,
+      test.peakSystolic !== null &&
+        `peak ${[test.peakSystolic, test.peakDiastolic].filter((each) => each !== null).join('/')} mmHg`,
+      test.stages.length > 0 && `${test.stages.length} stages`,
+      ...test.signs.map(({ kind, heartRate }) => `${signWords[kind]} from ${heartRate} bpm`),
       test.peakVo2 !== null && `VO2 ${test.peakVo2} mL/kg/min`,
       test.peakMets !== null && `${test.peakMets} METs`,
       test.vo2Source,
@@ -114,11 +147,42 @@ const words: { readonly [K in RecordKind]: (values: Values<K>) => EntryWords } =
     detail: '',
     date: performedOn,
   }),
-  'risk-stratifications': ({ level, assessedOn, note }) => ({
+  'risk-stratifications': ({ level, overrideReason, assessedOn, note }) => ({
     title: riskWords[level],
-    detail: note ?? '',
+    detail: line(overrideReason !== null && `not by the criteria: ${overrideReason}`, note),
     date: assessedOn,
   }),
+  'resting-ecgs': ({ hindrances, observedOn, note }) => ({
+    title: hindrances.length > 0 ? 'Cannot show ischemia' : 'Can show ischemia',
+    detail: line(...hindrances.map((each) => ecgHindranceWords[each]), note),
+    date: observedOn,
+  }),
+  'chair-stands': ({ seconds, ending, performedOn }) => ({
+    title: seconds === null ? 'Could not be done' : `${seconds} s`,
+    detail: ending === 'standing-fifth-time' ? 'to the fifth standing' : 'to the fifth sitting',
+    date: performedOn,
+  }),
+  restrictions: ({ kind, limit, diastolic, detail, orderedBy, orderedOn, until }) => ({
+    title: [restrictionWords[kind], limitWords(kind, limit, diastolic)].filter(Boolean).join(' '),
+    detail: line(
+      detail,
+      `ordered by ${orderedBy}`,
+      until === null ? 'until it is lifted' : `until ${formatLocalDate(until)}`,
+      restrictionEffects[kind].words,
+    ),
+    date: orderedOn,
+  }),
+  questionnaires: ({ instrument, answers, answeredOn }) => ({
+    title: questionnaires[instrument].name,
+    detail: scoreWords(instrument, answers) ?? 'not enough answers for a score',
+    date: answeredOn,
+  }),
+};
+
+const signWords: Readonly<Record<string, string>> = {
+  'st-change': 'ST change',
+  angina: 'angina',
+  arrhythmia: 'arrhythmia',
 };
 
 export const entryWords = <K extends RecordKind>(kind: K, values: Values<K>): EntryWords =>

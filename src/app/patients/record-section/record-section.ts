@@ -2,12 +2,15 @@ import { ChangeDetectionStrategy, Component, computed, inject, input, signal } f
 import { MatButton } from '@angular/material/button';
 import type { PatientRecord, RecordEntry } from '@shared/contracts/record-contract';
 import { Icon } from '../../ui/icon/icon';
-import type { EntryForm } from '../entry-editor/entry-form';
+import type { EntryForm, Line } from '../entry-editor/entry-form';
 import { EntryEditor } from '../entry-editor/entry-editor';
-import { changedMedicationForm, supersedingForm } from '../entry-editor/entry-forms';
-import { EntryRow } from './entry-row';
+import { supersedingForm } from '../entry-editor/test-forms';
+import { changedMedicationForm } from '../entry-editor/treatment-forms';
+import type { LineContext } from '../lines/line-context';
+import { supersedingTest } from '@shared/clinical/thresholds/threshold-proposal';
+import { type CleanTest, EntryRow } from './entry-row';
 import { PatientChart } from '../patient-chart';
-import { type ListedKind, sectionWords } from './section-words';
+import { type ListedKind, type SectionWords, sectionWords } from './section-words';
 
 const shownAtFirst = 5;
 
@@ -26,6 +29,8 @@ export class RecordSection {
   readonly record = input.required<PatientRecord>();
   readonly today = input.required<string>();
   readonly timeZone = input.required<string>();
+  /** Whose record it is; without it nothing is computed from age or sex. */
+  readonly patient = input<LineContext['patient']>(null);
 
   protected readonly words = computed(() => sectionWords[this.kind()]);
   protected readonly form = signal<EntryForm | null>(null);
@@ -50,8 +55,40 @@ export class RecordSection {
   ]);
   protected readonly headingId = computed(() => `section-${this.kind()}`);
 
-  protected add(): void {
-    this.form.set(this.words().form(this.record()));
+  readonly #context = computed<LineContext>(() => ({
+    patient: this.patient(),
+    record: this.record(),
+    today: this.today(),
+  }));
+
+  protected add(adding: Pick<SectionWords, 'form'> = this.words()): void {
+    this.form.set(adding.form(this.#context()));
+  }
+
+  protected lines({ values }: RecordEntry): readonly Line[] {
+    return this.words().lines?.(values, this.#context()) ?? [];
+  }
+
+  /** The later clean test that may take a limit's place, with the words to ask by; null for none. */
+  protected clean(entry: RecordEntry): CleanTest | null {
+    if (this.kind() !== 'thresholds') return null;
+    const record = this.record();
+    const threshold = entry as PatientRecord['thresholds'][number];
+    const id = supersedingTest(record, threshold, this.today());
+    const test = record['exercise-tests'].find((each) => each.id === id);
+    return test ? { id: test.id, ...test.values } : null;
+  }
+
+  protected supersede(entry: RecordEntry, testId: string): void {
+    void this.#chart.supersedeThreshold(entry.id, testId);
+  }
+
+  protected lift(entry: RecordEntry, reason: string): void {
+    void this.#chart.liftRestriction(entry.id, reason);
+  }
+
+  protected closeFollowUp(entry: RecordEntry, done: string): void {
+    void this.#chart.closeFollowUp(entry.id, done);
   }
 
   protected change(entry: RecordEntry): void {
