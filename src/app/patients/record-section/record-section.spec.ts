@@ -36,6 +36,9 @@ const recordWith = (kinds: object): PatientRecord => ({
 
 const drug = {
   name: 'Metoprolol tartrate',
+  salt: null,
+  flags: [],
+  times: [],
   rateActing: 'beta-blocker',
   dose: '50 mg',
   schedule: 'twice a day',
