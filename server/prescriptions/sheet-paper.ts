@@ -1,7 +1,5 @@
-import { createRequire } from 'node:module';
 import PDFDocument from 'pdfkit';
-
-const fileOf = createRequire(import.meta.url).resolve;
+import { latoFont } from './sheet-fonts';
 
 const weights = { plain: 400, bold: 700, black: 900 } as const;
 type Weight = keyof typeof weights;
@@ -69,9 +67,8 @@ export class SheetPaper {
     this.doc.on('data', (chunk: Buffer) => void this.#chunks.push(chunk));
     this.doc.on('pageAdded', () => (this.#pages += 1));
     for (const [name, weight] of Object.entries(weights)) {
-      for (const subset of ['latin', 'latin-ext']) {
-        const file = fileOf(`@fontsource/lato/files/lato-${subset}-${weight}-normal.woff`);
-        this.doc.registerFont(`${name}-${subset}`, file);
+      for (const subset of ['latin', 'latin-ext'] as const) {
+        this.doc.registerFont(`${name}-${subset}`, latoFont(subset, weight));
       }
     }
   }
