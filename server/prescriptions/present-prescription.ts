@@ -81,11 +81,12 @@ export function presentAwaiting(
 export function presentTasks(rows: readonly TaskRow[], now: Date): PrescribingTasks {
   const groups = taskKinds.map((kind) => {
     const ofKind = rows.filter((row) => row.kind === kind);
-    const items = ofKind.map(({ patient, prescriptionId, since, by, flags }) => ({
+    const items = ofKind.map(({ patient, prescriptionId, since, by, step, flags }) => ({
       patient: withAge(patient, now),
       prescriptionId,
       since: isoOrNull(since),
       by,
+      step,
       flags: flags.map(presentFlag),
     }));
     return { kind, total: ofKind[0]?.total ?? 0, items };

@@ -1,6 +1,7 @@
 import { v7 as uuidv7 } from 'uuid';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { Roster } from '@shared/contracts/floor-contract';
+import type { PrescribingTasks } from '@shared/contracts/prescriptions-waiting-contract';
 import type { CourseSoFar, Proposal } from '@shared/contracts/progression-contract';
 import { agentFor } from '../../test/builders/agent';
 import { boutBody, buildAppointment, readingBody, recordBody } from '../../test/builders/floor';
@@ -204,6 +205,36 @@ describe('PUT /api/exercise-bouts/:id', () => {
     await world.sign(visit.recordId, { exercised: true }).expect(200);
     const late = await world.nurse.put(`/api/exercise-bouts/${uuidv7()}`).send(later);
     expect(late.body.code).toBe('record-signed');
+  });
+});
+
+describe('what a physiologist sees to', () => {
+  const tasksOf = async (patientId: string) => {
+    const agent = await physiologist();
+    const { body } = await agent.get('/api/prescriptions/tasks').expect(200);
+    return (body as PrescribingTasks).groups.flatMap(({ kind, items }) =>
+      items.filter(({ patient }) => patient.id === patientId).map(({ step }) => [kind, step]),
+    );
+  };
+
+  it('holds next steps, sessions out of range and records that nobody signed', async () => {
+    const { first } = await twoSessions();
+    expect(await tasksOf(first.patient.id)).toEqual([['next-step', 'harder']]);
+    const fast = await world.begun();
+    await session(fast, {}, 115);
+    world.house.clock.advance(1000);
+    await session(await again(fast, '2026-12-03'), {}, 115);
+    expect(await tasksOf(fast.patient.id)).toEqual([
+      ['ran-above', null],
+      ['next-step', 'review'],
+    ]);
+    const slow = await world.begun();
+    await session(slow, {}, 80);
+    world.house.clock.advance(1000);
+    await session(await again(slow, '2026-12-03'), {}, 80);
+    expect(await tasksOf(slow.patient.id)).toContainEqual(['ran-below', null]);
+    const open = await world.begun();
+    expect(await tasksOf(open.patient.id)).toEqual([['record-unsigned', null]]);
   });
 });
 

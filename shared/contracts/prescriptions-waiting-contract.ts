@@ -14,6 +14,7 @@ import {
 } from './prescription-answer';
 import { rangeCourseSchema, rangePatientSchema } from './prescriptions-worksheet-contract';
 import { computed } from './quantities';
+import { progressionActions } from '../clinical/progression/propose-progression';
 import { rangeFlagSchema } from './range-flag';
 
 // What waits for somebody: ranges for a physician's signature, and what a physiologist has to see to.
@@ -69,11 +70,16 @@ export const awaitingListSchema = z.object({
   total: z.int(),
 });
 
+/** What waits for somebody, the most urgent first. */
 export const taskKinds = [
   'withdrawn',
+  'ran-above',
   'without-range',
+  'record-unsigned',
   'unsigned',
   'awaiting-physician',
+  'next-step',
+  'ran-below',
   'review-due',
 ] as const;
 export type TaskKind = (typeof taskKinds)[number];
@@ -85,6 +91,8 @@ const taskSchema = z.object({
   /** Since when: written, signed, or in force; null for a patient without a range. */
   since: instant.nullable(),
   by: z.string().nullable(),
+  /** Of a next step: what is proposed. */
+  step: z.enum(progressionActions).nullable(),
   /** What touches the range in force, the oldest first. */
   flags: z.array(rangeFlagSchema),
 });

@@ -7,58 +7,31 @@ import type { PrescribingTask, TaskKind } from '@shared/contracts/prescriptions-
 import { LiveChanges } from '../../core/live-changes';
 import { failureOf, valueOf } from '../../core/resource-state';
 import { EmptyState } from '../../ui/empty-state/empty-state';
-import { Icon } from '../../ui/icon/icon';
-import type { IconName } from '../../ui/icon/icon-names';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { Skeleton } from '../../ui/skeleton/skeleton';
+import { StateChip, type Tone } from '../../ui/state-chip/state-chip';
 import { formatDay } from '../../ui/words/dates';
+import { actionWords } from '../../ui/words/load-words';
 import { TodayClient } from '../today-client';
 
 interface Kind {
-  readonly heading: string;
-  readonly explains: string;
-  readonly icon: IconName;
+  readonly words: string;
+  readonly tone: Tone;
   readonly action: string;
-  /** Whether one goes on from the range that there is, rather than to a new worksheet. */
-  readonly opens: 'range' | 'new';
+  /** Where one sees to it. */
+  readonly opens: 'range' | 'new' | 'progress' | 'vitals';
 }
 
 const kinds: Readonly<Record<TaskKind, Kind>> = {
-  withdrawn: {
-    heading: 'Range withdrawn',
-    explains: 'Effort leads and the ceiling stays until a new range is signed.',
-    icon: 'priority-high',
-    action: 'Write a new one',
-    opens: 'new',
-  },
-  'without-range': {
-    heading: 'In a course without a range',
-    explains: 'Nothing is in force and nothing is written yet.',
-    icon: 'add',
-    action: 'Write one',
-    opens: 'new',
-  },
-  unsigned: {
-    heading: 'Drafts not signed',
-    explains: 'Written, and in force for nobody.',
-    icon: 'draw',
-    action: 'Open',
-    opens: 'range',
-  },
-  'awaiting-physician': {
-    heading: 'Waiting for a physician',
-    explains: 'Signed by staff. Not in force until a physician signs too.',
-    icon: 'hourglass',
-    action: 'Open',
-    opens: 'range',
-  },
-  'review-due': {
-    heading: 'Review due',
-    explains: 'Older than the policy’s days of review. The range stays in force.',
-    icon: 'schedule',
-    action: 'Write a new one',
-    opens: 'new',
-  },
+  withdrawn: { words: 'Range withdrawn', tone: 'over', action: 'Write a new one', opens: 'new' },
+  'ran-above': { words: 'Ran above', tone: 'over', action: 'See the course', opens: 'progress' },
+  'without-range': { words: 'New intake', tone: 'due', action: 'Write a range', opens: 'new' },
+  'record-unsigned': { words: 'Record not signed', tone: 'due', action: 'Open', opens: 'vitals' },
+  unsigned: { words: 'Draft not signed', tone: 'due', action: 'Open', opens: 'range' },
+  'awaiting-physician': { words: 'Co-signature', tone: 'due', action: 'Open', opens: 'range' },
+  'next-step': { words: 'Next step', tone: 'plain', action: 'Decide', opens: 'progress' },
+  'ran-below': { words: 'Ran below', tone: 'plain', action: 'See the course', opens: 'progress' },
+  'review-due': { words: 'Review due', tone: 'plain', action: 'Write a new one', opens: 'new' },
 };
 
 const reasonsOf = (flags: readonly RangeFlag[], wanted: RangeFlag['effect']): string =>
@@ -69,26 +42,41 @@ const reasonsOf = (flags: readonly RangeFlag[], wanted: RangeFlag['effect']): st
     )
     .join('; ');
 
-function detailOf(kind: TaskKind, { since, by, flags, patient }: PrescribingTask): string {
+function detailOf(kind: TaskKind, { since, by, step, flags, patient }: PrescribingTask): string {
   const day = since === null ? '' : formatDay(since, patient.site.timeZone);
   switch (kind) {
     case 'withdrawn':
-      return reasonsOf(flags, 'withdrawn');
+      return `${reasonsOf(flags, 'withdrawn')}. Effort leads and the ceiling stays until a new range is signed`;
+    case 'ran-above':
+      return `the last two sessions ran mostly above the range, the last on ${day}`;
+    case 'ran-below':
+      return `the last two sessions ran mostly below the range, the last on ${day}`;
     case 'without-range':
-      return patient.site.name;
+      return `in a course at ${patient.site.name}, and nothing is written yet`;
+    case 'record-unsigned':
+      return `the class is over since ${day}; begun by ${by ?? ''}`;
     case 'unsigned':
-      return `${by ?? ''}, ${day}`;
+      return `written by ${by ?? ''}, ${day}; in force for nobody`;
     case 'awaiting-physician':
-      return `signed by ${by ?? ''}, ${day}`;
+      return `signed by ${by ?? ''}, ${day}; not in force until a physician signs too`;
+    case 'next-step':
+      return `${step === null ? '' : actionWords[step]}, proposed ${day}`;
     case 'review-due':
       return `${reasonsOf(flags, 'review-due')}; in force since ${day}`;
   }
 }
 
-/** What a physiologist has to see to, by kind, the most urgent first. */
+function linkOf({ opens }: Kind, { prescriptionId, patient }: PrescribingTask): string[] {
+  const page = ['/patients', patient.id];
+  if (opens === 'range' && prescriptionId) return ['/prescriptions', prescriptionId];
+  if (opens === 'progress' || opens === 'vitals') return [...page, opens];
+  return [...page, 'prescriptions', 'new'];
+}
+
+/** What a physiologist has to see to: one list, the most urgent first, each with its why. */
 @Component({
   selector: 'app-tasks-section',
-  imports: [EmptyState, Icon, MatButton, ProblemMessage, RouterLink, Skeleton],
+  imports: [EmptyState, MatButton, ProblemMessage, RouterLink, Skeleton, StateChip],
   templateUrl: './tasks-section.html',
   styleUrl: './tasks-section.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -96,24 +84,26 @@ function detailOf(kind: TaskKind, { since, by, flags, patient }: PrescribingTask
 export class TasksSection {
   readonly #resource = inject(TodayClient).tasks();
   protected readonly failure = computed(() => failureOf(this.#resource));
-  protected readonly groups = computed(() =>
+  protected readonly totals = computed(() =>
     valueOf(this.#resource)
       ?.groups.filter(({ total }) => total > 0)
-      .map(({ kind, total, items }) => ({
-        ...kinds[kind],
-        kind,
-        total,
-        items: items.map((item) => ({
-          key: item.prescriptionId ?? item.patient.id,
-          patient: item.patient,
-          detail: detailOf(kind, item),
-          link:
-            kinds[kind].opens === 'range' && item.prescriptionId
-              ? ['/prescriptions', item.prescriptionId]
-              : ['/patients', item.patient.id, 'prescriptions', 'new'],
-        })),
-      })),
+      .map(({ kind, total }) => ({ kind, words: `${total} ${kinds[kind].words.toLowerCase()}` })),
   );
+  protected readonly rows = computed(() =>
+    valueOf(this.#resource)?.groups.flatMap(({ kind, items }) =>
+      items.map((item) => ({
+        ...kinds[kind],
+        key: `${kind} ${item.prescriptionId ?? item.patient.id} ${item.since ?? ''}`,
+        patient: item.patient,
+        detail: detailOf(kind, item),
+        link: linkOf(kinds[kind], item),
+      })),
+    ),
+  );
+  protected readonly left = computed(() => {
+    const groups = valueOf(this.#resource)?.groups ?? [];
+    return groups.reduce((sum, { total, items }) => sum + total - items.length, 0);
+  });
 
   constructor() {
     inject(LiveChanges)
