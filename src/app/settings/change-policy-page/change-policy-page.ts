@@ -1,6 +1,6 @@
 import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
 import { toObservable, toSignal } from '@angular/core/rxjs-interop';
-import { FormControl, ReactiveFormsModule } from '@angular/forms';
+import { FormControl, FormGroup, ReactiveFormsModule } from '@angular/forms';
 import { MatButton } from '@angular/material/button';
 import { MatError, MatFormField, MatLabel, MatSuffix } from '@angular/material/form-field';
 import { MatInput } from '@angular/material/input';
@@ -104,6 +104,7 @@ export class ChangePolicyPage {
     nonNullable: true,
     validators: zodValidator(policyPublishRequestSchema.shape.reason),
   });
+  protected readonly publishing = new FormGroup({ reason: this.reason });
   protected readonly busy = signal(false);
   readonly #refused = signal<Problem | null>(null);
   protected readonly problem = computed(() => this.#refused() ?? failureOf(this.read));
