@@ -1,5 +1,5 @@
 import type { DeskArrival, DeskClass, DeskSite } from '@shared/contracts/desk-contract';
-import { classesToShow, dueAt, figuresOf, missingAt } from './desk-day';
+import { classesToShow, dueAt, figuresOf, isAtHand, missingAt } from './desk-day';
 
 const at = '2026-12-01T15:00:00Z';
 const someone = (status: DeskArrival['status'], due: DeskArrival['due'] = null): DeskArrival => ({
@@ -16,7 +16,7 @@ const classAt = (startsAt: string, given: Partial<DeskClass> = {}): DeskClass =>
   id: startsAt,
   name: 'Class',
   startsAt,
-  endsAt: startsAt,
+  endsAt: new Date(Date.parse(startsAt) + 3_600_000).toISOString(),
   capacity: 4,
   booked: given.arrivals?.length ?? 0,
   status: 'scheduled',
@@ -49,6 +49,13 @@ describe('the desk’s day', () => {
       [at, 'booked'],
     ]);
     expect(dueAt(site).map(({ arrival }) => arrival.due)).toEqual([owed]);
+  });
+
+  it('has at hand what is on or begins within the hour', () => {
+    const atHand = site.classes.filter((date) => isAtHand(date, at)).map(({ id }) => id);
+    expect(atHand).toEqual([at]);
+    expect(isAtHand(classAt('2026-12-01T16:00:00Z'), at)).toBe(true);
+    expect(isAtHand(classAt('2026-12-01T14:00:00Z'), at)).toBe(false);
   });
 
   it('leaves out empty classes that are over or closed', () => {

@@ -36,9 +36,17 @@ export const freePlaces = ({ status, capacity, booked }: DeskClass): number =>
 const expectedAt = ({ classes }: DeskSite): Expected[] =>
   classes.flatMap((date) => date.arrivals.map((arrival) => ({ arrival, date })));
 
-/** Who has a place in a class that has begun, and has not come. */
+const isOver = ({ endsAt }: DeskClass, at: string): boolean => Date.parse(endsAt) <= Date.parse(at);
+
+/** Whether a class is on, or begins within the hour. */
+export const isAtHand = (date: DeskClass, at: string): boolean =>
+  !isOver(date, at) && Date.parse(date.startsAt) <= Date.parse(at) + 3_600_000;
+
+/** Who has a place in a class that is on, and has not come. */
 export const missingAt = (site: DeskSite, at: string): Expected[] =>
-  expectedAt(site).filter(({ arrival, date }) => arrival.status === 'booked' && hasBegun(date, at));
+  expectedAt(site).filter(
+    ({ arrival, date }) => arrival.status === 'booked' && hasBegun(date, at) && !isOver(date, at),
+  );
 
 export const dueAt = (site: DeskSite): Expected[] =>
   expectedAt(site).filter(({ arrival }) => arrival.due !== null);

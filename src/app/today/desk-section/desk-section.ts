@@ -21,6 +21,7 @@ import {
   figuresOf,
   freePlaces,
   hasBegun,
+  isAtHand,
   isHere,
   missingAt,
 } from './desk-day';
@@ -36,6 +37,7 @@ function viewOf(site: DeskSite, at: string) {
       ...date,
       time: timeOf(date.startsAt, site.timeZone),
       begun: hasBegun(date, at),
+      open: date.arrivals.length > 0 && isAtHand(date, at),
       free: freePlaces(date),
       here: date.arrivals.filter(isHere).length,
     })),
