@@ -1,4 +1,3 @@
-import { PercentPipe, DecimalPipe, DatePipe } from '@angular/common';
 import {
   ChangeDetectionStrategy,
   Component,
@@ -21,6 +20,7 @@ import { toProblem } from '../../core/problem';
 import { Notices } from '../../core/notices';
 import { Session } from '../../core/session';
 import { EmptyState } from '../../ui/empty-state/empty-state';
+import { DecimalsPipe, InstantPipe, SharePipe } from '../../ui/format/format-pipes';
 import { Icon } from '../../ui/icon/icon';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
@@ -51,15 +51,15 @@ const localToday = (): string => new Date().toLocaleDateString('sv-SE');
   imports: [
     CompletionChart,
     CompletionFilters,
-    DatePipe,
-    DecimalPipe,
+    InstantPipe,
+    DecimalsPipe,
     EmptyState,
     Icon,
     MatButton,
     MatRadioButton,
     MatRadioGroup,
     PageHeader,
-    PercentPipe,
+    SharePipe,
     ProblemMessage,
     RouterLink,
     Skeleton,

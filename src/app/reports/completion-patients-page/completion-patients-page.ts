@@ -1,4 +1,3 @@
-import { DatePipe } from '@angular/common';
 import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
 import { MatButton } from '@angular/material/button';
 import { ActivatedRoute, RouterLink } from '@angular/router';
@@ -6,6 +5,7 @@ import type { CompletionPatient } from '@shared/contracts/reports-contract';
 import { type Problem, toProblem } from '../../core/problem';
 import { Session } from '../../core/session';
 import { EmptyState } from '../../ui/empty-state/empty-state';
+import { LocalDatePipe } from '../../ui/format/format-pipes';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { Skeleton } from '../../ui/skeleton/skeleton';
@@ -30,7 +30,7 @@ const states: Readonly<Record<CompletionPatient['state'], { word: string; tone: 
 @Component({
   selector: 'app-completion-patients-page',
   imports: [
-    DatePipe,
+    LocalDatePipe,
     EmptyState,
     MatButton,
     PageHeader,

@@ -1,10 +1,10 @@
-import { DatePipe } from '@angular/common';
 import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
 import { MatButton } from '@angular/material/button';
 import { RouterLink } from '@angular/router';
 import { changedKeys } from '@shared/clinical/program-policy';
 import type { PolicyVersion } from '@shared/contracts/policy-change-contract';
 import { failureOf, valueOf } from '../../core/resource-state';
+import { InstantPipe } from '../../ui/format/format-pipes';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { Skeleton } from '../../ui/skeleton/skeleton';
@@ -23,7 +23,7 @@ const differencesOf = (from: PolicyVersion, to: PolicyVersion) =>
 /** Every version of the policy: who, when, why, and how it differs from any other. */
 @Component({
   selector: 'app-policy-history-page',
-  imports: [DatePipe, MatButton, PageHeader, ProblemMessage, RouterLink, Skeleton],
+  imports: [InstantPipe, MatButton, PageHeader, ProblemMessage, RouterLink, Skeleton],
   templateUrl: './policy-history-page.html',
   styleUrls: ['../settings-page.scss', './policy-history-page.scss'],
   changeDetection: ChangeDetectionStrategy.OnPush,

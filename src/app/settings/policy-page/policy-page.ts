@@ -1,9 +1,9 @@
-import { DatePipe } from '@angular/common';
 import { ChangeDetectionStrategy, Component, computed, inject } from '@angular/core';
 import { MatButton } from '@angular/material/button';
 import { RouterLink } from '@angular/router';
 import type { PolicyItem } from '@shared/contracts/policy-in-force-contract';
 import { failureOf, valueOf } from '../../core/resource-state';
+import { InstantPipe } from '../../ui/format/format-pipes';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { Skeleton } from '../../ui/skeleton/skeleton';
@@ -22,7 +22,7 @@ const shown = (item: PolicyItem) => ({
 /** The policy in force: every number, where it comes from and since when it is what it is. */
 @Component({
   selector: 'app-policy-page',
-  imports: [DatePipe, MatButton, PageHeader, ProblemMessage, RouterLink, Skeleton, StateChip],
+  imports: [InstantPipe, MatButton, PageHeader, ProblemMessage, RouterLink, Skeleton, StateChip],
   templateUrl: './policy-page.html',
   styleUrls: ['../settings-page.scss', './policy-page.scss'],
   changeDetection: ChangeDetectionStrategy.OnPush,
