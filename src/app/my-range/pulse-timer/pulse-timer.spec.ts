@@ -68,7 +68,9 @@ describe('PulseTimer', () => {
     await timer.pass(10_100);
     timer.press('Count again');
     expect(timer.text()).toContain('10seconds left');
+    const cleared = vi.spyOn(globalThis, 'clearInterval');
     timer.fixture.destroy();
-    expect(vi.getTimerCount()).toBe(0);
+    expect(cleared).toHaveBeenCalledOnce();
+    cleared.mockRestore();
   });
 });

@@ -134,7 +134,9 @@ describe('ChangePolicyPage', () => {
     await vi.waitFor(() => {
       expect(page.say).toHaveBeenCalledWith('Version 2 is in force.');
     });
-    expect(TestBed.inject(Router).url).toBe('/settings/policy');
+    await vi.waitFor(() => {
+      expect(TestBed.inject(Router).url).toBe('/settings/policy');
+    });
   });
 
   it('takes what was seen away once something else is typed', async () => {
