@@ -1,7 +1,15 @@
 import type { PoolClient } from 'pg';
-import { charges, ledgerEntries, payments, sessionRecords, vitalSigns } from '../database/schema';
+import {
+  charges,
+  exerciseBouts,
+  ledgerEntries,
+  payments,
+  sessionRecords,
+  vitalSigns,
+} from '../database/schema';
 import { againstStanding, standingRanges } from './apply-ranges';
 import { insertRows, updateUntouched } from './bulk';
+import { workRow } from './work-rows';
 import type { StoryChanges } from './story-changes';
 
 function grouped<R>(rows: readonly R[], keyOf: (row: R) => string): Map<string, R[]> {
@@ -46,6 +54,11 @@ export async function applySessions(
     connection,
     vitalSigns,
     sessions.flatMap(({ readings }) => readings),
+  );
+  await insertRows(
+    connection,
+    exerciseBouts,
+    sessions.flatMap(({ readings }) => workRow(readings) ?? []),
   );
   await updateUntouched(
     connection,

@@ -17,6 +17,7 @@ import { bookingDays, classDateRows, daysOfHistory, programRows } from './progra
 import { emptyRecord } from './record-entries';
 import type { RecordRows } from './record-entries';
 import { noRows } from './rows';
+import { applySteps } from './apply-steps';
 import type { PeopleRows } from './rows';
 import { tellStory } from './story';
 import { storyChanges, withoutPatients } from './story-changes';
@@ -136,6 +137,7 @@ async function play(
   const before = last ? tellStory(clockAt(anchor, last.playedTo), last.playedTo) : noRows();
   const after = tellStory(clockAt(anchor, now), last?.playedTo);
   await applyPeople(connection, before, after, firstDayNeeded);
+  await applySteps(tx, now);
   const id = idAt(now, 'play');
   const mark = { id, story: storyVersion, firstDay: isoOf(anchor), playedTo: now };
   await insertRows(connection, schema.demoPlays, [mark]);

@@ -53,14 +53,14 @@ export class LiveChanges {
 
   /**
    * Emits when what a page shows may have changed, and the page reads it again.
-   * @param of whose record it shows; left out: anybody's
+   * @param shows whether the patient's record is on the page; left out: anybody's
    */
-  of(topics: readonly ChangeTopic[], of?: () => string | null | undefined): Observable<void> {
+  of(topics: readonly ChangeTopic[], shows?: (patientId: string) => boolean): Observable<void> {
     return this.#changes.pipe(
       filter((change) => {
         if (change === everything) return true;
         const { topic, patientId } = change;
-        return topics.includes(topic) && (!of || patientId === null || patientId === of());
+        return topics.includes(topic) && (!shows || patientId === null || shows(patientId));
       }),
       auditTime(gatherMs),
       map(() => undefined),

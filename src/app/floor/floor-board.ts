@@ -63,10 +63,17 @@ export class FloorBoard {
     interval(tickEvery)
       .pipe(ended)
       .subscribe(() => this.#localNow.set(new Date()));
-    inject(LiveChanges)
-      .of(['range', 'visit'])
+    const live = inject(LiveChanges);
+    const isHere = (patientId: string): boolean =>
+      this.#roster()?.items.some((item) => item.patientId === patientId) ?? false;
+    live
+      .of(['range'], isHere)
       .pipe(takeUntilDestroyed())
       .subscribe(() => void this.reload());
+    live
+      .of(['visit'], isHere)
+      .pipe(takeUntilDestroyed())
+      .subscribe(() => void this.#poll());
     interval(pollEvery)
       .pipe(takeUntilDestroyed())
       .subscribe(() => void this.#poll());

@@ -28,7 +28,7 @@ export class PatientChart {
 
   constructor() {
     inject(LiveChanges)
-      .of(['range'], this.id)
+      .of(['range'], (patientId) => patientId === this.id())
       .pipe(takeUntilDestroyed())
       .subscribe(() => this.reload());
   }

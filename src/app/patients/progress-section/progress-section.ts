@@ -82,7 +82,7 @@ export class ProgressSection {
 
   constructor() {
     inject(LiveChanges)
-      .of(['range', 'visit'], this.#id)
+      .of(['range', 'visit'], (patientId) => patientId === this.#id())
       .pipe(takeUntilDestroyed())
       .subscribe(() => {
         if (this.ways() === 'none' && !this.busy()) this.#resource.reload();

@@ -73,7 +73,7 @@ export class RangesSection {
 
   constructor() {
     inject(LiveChanges)
-      .of(['range'], this.id)
+      .of(['range'], (patientId) => patientId === this.id())
       .pipe(takeUntilDestroyed())
       .subscribe(() => this.#resource.reload());
   }

@@ -168,7 +168,7 @@ export class WorksheetPage {
 
   constructor() {
     inject(LiveChanges)
-      .of(['range'], () => this.range.worksheet()?.patient.id)
+      .of(['range'], (patientId) => patientId === this.range.worksheet()?.patient.id)
       .pipe(takeUntilDestroyed())
       .subscribe(() => {
         if (!this.busy()) void this.range.recordChanged(this.state.changed());

@@ -5,6 +5,7 @@ import { RouterLink } from '@angular/router';
 import { type RangeFlag, factWords } from '@shared/clinical/range-flags';
 import type { PrescribingTask, TaskKind } from '@shared/contracts/prescriptions-waiting-contract';
 import { LiveChanges } from '../../core/live-changes';
+import { auditTime, merge } from 'rxjs';
 import { failureOf, valueOf } from '../../core/resource-state';
 import { EmptyState } from '../../ui/empty-state/empty-state';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
@@ -21,6 +22,8 @@ interface Kind {
   /** Where one sees to it. */
   readonly opens: 'range' | 'new' | 'progress' | 'vitals';
 }
+
+const visitsWaitMs = 10_000;
 
 const kinds: Readonly<Record<TaskKind, Kind>> = {
   withdrawn: { words: 'Range withdrawn', tone: 'over', action: 'Write a new one', opens: 'new' },
@@ -106,8 +109,9 @@ export class TasksSection {
   });
 
   constructor() {
-    inject(LiveChanges)
-      .of(['range', 'visit'])
+    const live = inject(LiveChanges);
+    // A class signs many records at once: those may wait a little.
+    merge(live.of(['range']), live.of(['visit']).pipe(auditTime(visitsWaitMs)))
       .pipe(takeUntilDestroyed())
       .subscribe(() => this.reload());
   }
