@@ -28,6 +28,11 @@ export const newPrescriptionRoutes: Routes = [
 /** Below `prescriptions`. */
 export const prescriptionRoutes: Routes = [
   {
+    path: 'compare/:oneId/:otherId',
+    title: 'Two versions of a range',
+    loadComponent: async () => (await import('./compare-page/compare-page')).ComparePage,
+  },
+  {
     path: ':prescriptionId',
     title: 'Range',
     loadComponent: worksheetPage,

@@ -1,4 +1,6 @@
-import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
+import { ChangeDetectionStrategy, Component, computed, input, linkedSignal } from '@angular/core';
+import { MatButton } from '@angular/material/button';
+import { MatCheckbox } from '@angular/material/checkbox';
 import { RouterLink } from '@angular/router';
 import type { Prescription } from '@shared/contracts/prescription-record-contract';
 import { StateChip, type Tone } from '../../ui/state-chip/state-chip';
@@ -33,7 +35,7 @@ export function standingOf({
 /** Every version of a patient's range: when, by whom, by which policy, signed by whom. */
 @Component({
   selector: 'app-history-list',
-  imports: [RouterLink, StateChip],
+  imports: [MatButton, MatCheckbox, RouterLink, StateChip],
   template: `
     <div class="scroll-x" tabindex="0" role="region" aria-label="Table of versions">
       <table class="data">
@@ -44,6 +46,9 @@ export function standingOf({
             <th scope="col">State</th>
             <th scope="col">Signed</th>
             <th scope="col">Policy</th>
+            @if (comparable()) {
+              <th scope="col">Compare</th>
+            }
           </tr>
         </thead>
         <tbody>
@@ -71,11 +76,38 @@ export function standingOf({
                 }
               </td>
               <td>{{ item.policyVersion }}</td>
+              @if (comparable()) {
+                <td>
+                  <mat-checkbox
+                    [checked]="chosen().includes(item.id)"
+                    [disabled]="chosen().length === 2 && !chosen().includes(item.id)"
+                    disabledInteractive
+                    [aria-label]="'Compare the version of ' + item.written"
+                    (change)="choose(item.id, $event.checked)"
+                  />
+                </td>
+              }
             </tr>
           }
         </tbody>
       </table>
     </div>
+    @if (comparable()) {
+      <p class="compare">
+        @if (chosen().length === 2) {
+          <a matButton="outlined" [routerLink]="['/prescriptions/compare', ...chosen()]"
+            >Compare the two chosen</a
+          >
+        } @else {
+          <span class="muted">Choose two versions to see them beside each other.</span>
+        }
+        @if (againstInForce(); as two) {
+          <a matButton="outlined" [routerLink]="['/prescriptions/compare', ...two]"
+            >Compare this one with the one in force</a
+          >
+        }
+      </p>
+    }
   `,
   styleUrl: './history-list.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -85,6 +117,18 @@ export class HistoryList {
   readonly timeZone = input.required<string>();
   /** The one that the page shows. */
   readonly currentId = input<string | null>(null);
+
+  protected readonly comparable = computed(() => this.prescriptions().length > 1);
+  /** Chosen to be compared; begins anew when the list does. */
+  protected readonly chosen = linkedSignal<readonly string[]>(() => {
+    this.prescriptions();
+    return [];
+  });
+  protected readonly againstInForce = computed(() => {
+    const current = this.currentId();
+    const inForce = this.prescriptions().find(({ status }) => status === 'active')?.id;
+    return current && inForce && current !== inForce ? [inForce, current] : null;
+  });
 
   protected readonly items = computed(() => {
     const zone = this.timeZone();
@@ -101,6 +145,10 @@ export class HistoryList {
       policyVersion: one.policyVersion,
     }));
   });
+
+  protected choose(id: string, isChosen: boolean): void {
+    this.chosen.update((ids) => (isChosen ? [...ids, id] : ids.filter((one) => one !== id)));
+  }
 }
 
 /** Who signed and when; a physician alone signs for both. */

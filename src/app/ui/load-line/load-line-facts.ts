@@ -47,3 +47,12 @@ export function scaleFor(facts: LoadLineFacts, least: RateScale): RateScale {
     max: Math.ceil((Math.max(least.max - 15, ...rates) + 15) / 10) * 10,
   };
 }
+
+/** One scale for several load lines beside each other. */
+export function commonScale(lines: readonly LoadLineFacts[], least: RateScale): RateScale {
+  const scales = lines.map((facts) => scaleFor(facts, least));
+  return {
+    min: Math.min(least.min, ...scales.map(({ min }) => min)),
+    max: Math.max(least.max, ...scales.map(({ max }) => max)),
+  };
+}

@@ -1,8 +1,8 @@
 import { ChangeDetectionStrategy, Component, computed, input } from '@angular/core';
 import { describeLoadLine } from './describe-load-line';
-import type { LoadLineFacts, LoadLineSize } from './load-line-facts';
+import type { LoadLineFacts, LoadLineSize, RateScale } from './load-line-facts';
 import { drawTile } from './tile-drawing';
-import { drawUpright, labelX, uprightSizes } from './upright-drawing';
+import { drawUpright, labelX, leastScale, uprightSizes } from './upright-drawing';
 
 let drawn = 0;
 
@@ -26,6 +26,8 @@ export class LoadLine {
   readonly askLine = input<LoadLineFacts['askLine']>(null);
   readonly ticks = input<LoadLineFacts['ticks']>([]);
   readonly marker = input<LoadLineFacts['marker']>(null);
+  /** What an upright scale shows in any case: beside another load line, what both need. */
+  readonly scale = input<RateScale>(leastScale);
 
   // A pattern is found by its id, so each load line of a page needs its own.
   protected readonly hatching = `load-line-hatching-${(drawn += 1)}`;
@@ -46,7 +48,7 @@ export class LoadLine {
   );
   protected readonly upright = computed(() => {
     const size = this.size();
-    return size === 'tile' ? null : drawUpright(this.#facts(), uprightSizes[size]);
+    return size === 'tile' ? null : drawUpright(this.#facts(), uprightSizes[size], this.scale());
   });
   protected readonly labelX = labelX;
 }

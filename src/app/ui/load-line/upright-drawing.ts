@@ -76,7 +76,8 @@ interface Wanted {
   readonly lines: readonly { readonly text: string; readonly large: boolean }[];
 }
 
-const leastScale: RateScale = { min: 50, max: 140 };
+/** What a scale shows at the least. */
+export const leastScale: RateScale = { min: 50, max: 140 };
 const leading = 1.25;
 const gap = 4;
 /** Room left of the bar for the scale, and how far left of it the names of ticks end. */
@@ -189,9 +190,16 @@ export function labelX(size: UprightSize): number {
   return size.barX + size.barWidth + 26;
 }
 
-/** Where everything of an upright load line stands; no label overlaps another. */
-export function drawUpright(facts: LoadLineFacts, size: UprightSize): UprightDrawing {
-  const scale = scaleFor(facts, leastScale);
+/**
+ * Where everything of an upright load line stands; no label overlaps another.
+ * @param least what its scale shows in any case, so that two can stand on one scale
+ */
+export function drawUpright(
+  facts: LoadLineFacts,
+  size: UprightSize,
+  least: RateScale = leastScale,
+): UprightDrawing {
+  const scale = scaleFor(facts, least);
   const top = 12;
   const bottom = size.height - 12;
   const y = (rate: number): number =>
