@@ -16,9 +16,7 @@ function fieldText(spec: FieldSpec, inputs: PrescriptionRequest): string | null 
       return spec.unit === '' ? String(shown) : `${shown} ${spec.unit}`;
     }
     case 'choice':
-      return (
-        spec.options.find((option) => option.value === value)?.label ?? String(value as string)
-      );
+      return spec.options.find((option) => option.value === value)?.label ?? null;
     case 'yes-no':
       return value === true ? 'Yes' : 'No';
   }
