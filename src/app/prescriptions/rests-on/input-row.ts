@@ -8,6 +8,7 @@ import { formatLocalDate } from '../../ui/words/dates';
 import { InputField } from '../input-field/input-field';
 import { WorksheetState } from '../worksheet/worksheet-state';
 import { DrugChoice } from './drug-choice';
+import { ageWords } from './age-words';
 import { thresholdFields, zoneFields } from './field-specs';
 import { rowWords } from './row-words';
 import { type Row, isSameAt, valueAt } from './rows';
@@ -29,6 +30,8 @@ export class InputRow {
   /** The inputs of a signed range; null: those of the worksheet. */
   readonly signed = input<PrescriptionRequest | null>(null);
   readonly answer = input.required<PrescriptionAnswer | null>();
+  /** The site's date of today. */
+  readonly today = input.required<string>();
 
   protected readonly open = signal(false);
   protected readonly thresholdFields = thresholdFields;
@@ -52,6 +55,12 @@ export class InputRow {
     const origin = this.origin();
     if (!origin) return null;
     return origin.date === null ? origin.text : `${origin.text} · ${formatLocalDate(origin.date)}`;
+  });
+  /** How old the entry is, in words. */
+  protected readonly age = computed(() => {
+    const { date, old } = this.origin() ?? { date: null, old: false };
+    const validDays = this.row().id === 'test' ? this.state.policy()?.test.validDays : undefined;
+    return date === null ? null : ageWords(date, this.today(), old, validDays);
   });
   /** Whether another value is tried here than the record's. */
   protected readonly differs = computed(() => {

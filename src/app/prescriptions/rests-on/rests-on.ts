@@ -10,7 +10,13 @@ import { rows } from './rows';
   imports: [InputRow],
   template: `
     @for (row of rows; track row.id) {
-      <app-input-row [row]="row" [record]="record()" [signed]="signed()" [answer]="answer()" />
+      <app-input-row
+        [row]="row"
+        [record]="record()"
+        [signed]="signed()"
+        [answer]="answer()"
+        [today]="today()"
+      />
     }
   `,
   styles: ':host { display: block }',
@@ -20,5 +26,7 @@ export class RestsOn {
   readonly record = input.required<PrescribingInputs | null>();
   readonly signed = input<PrescriptionRequest | null>(null);
   readonly answer = input.required<PrescriptionAnswer | null>();
+  /** The site's date of today. */
+  readonly today = input.required<string>();
   protected readonly rows = rows;
 }

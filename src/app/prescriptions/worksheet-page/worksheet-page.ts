@@ -38,6 +38,7 @@ import { PrescriptionsClient } from '../prescriptions-client';
 import { RestsOn } from '../rests-on/rests-on';
 import { isSameAt, rows } from '../rests-on/rows';
 import { ResultPanel } from '../result-panel/result-panel';
+import { TriedChange } from '../tried-change/tried-change';
 import { WaysTable } from '../ways-table/ways-table';
 import { WorkloadsTable } from '../workloads-table/workloads-table';
 import { WorksheetState } from '../worksheet/worksheet-state';
@@ -67,6 +68,7 @@ import { causesText, signingQuestion } from './signing-words';
     RouterLink,
     Skeleton,
     StateChip,
+    TriedChange,
     WaysTable,
     WorkloadsTable,
   ],

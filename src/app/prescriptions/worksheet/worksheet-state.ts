@@ -78,6 +78,7 @@ export class WorksheetState {
   readonly lastAnswer = signal<PrescriptionAnswer | null>(null);
   readonly lastRequest = signal<PrescriptionRequest | null>(null);
   readonly changed = computed(() => JSON.stringify(this.#value()) !== this.#kept());
+  readonly policy = this.#policy.asReadonly();
   /** The raw value, for what is said of it in words. */
   readonly value = this.#value.asReadonly();
 
