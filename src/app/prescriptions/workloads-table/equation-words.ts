@@ -13,12 +13,12 @@ function rangeWords({ setting, unit, lowest, highest }: MetabolicEquation['range
   return `${settingWords[setting]}${ends}${shown}`;
 }
 
-/** Between which settings the machine's equation was validated. */
+/** The machine’s equation, and between which settings it was validated. */
 export function validatedText(modality: EquationModality): string {
   const equation = metabolicEquations.find((one) => one.modality === modality);
   if (!equation) return '';
-  const { ranges, note } = equation;
-  return `Equation validated for ${ranges.map(rangeWords).join(', ')}.${note ? ` ${note}` : ''}`;
+  const { formula, ranges, note } = equation;
+  return `Equation ${formula}, validated: ${ranges.map(rangeWords).join(', ')}.${note ? ` ${note}` : ''}`;
 }
 
 const centimeters = (meters: number): number => Math.round(meters * 100);

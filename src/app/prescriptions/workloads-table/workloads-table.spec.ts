@@ -23,8 +23,8 @@ describe('WorkloadsTable', () => {
 
   it('shows where each equation was validated, the handrail note and the steps of the policy', async () => {
     const table = await show([]);
-    expect(table.text()).toContain('Equation validated for 50–100 m/min.');
-    expect(table.text()).toContain('Equation validated for 50–200 W.');
+    expect(table.text()).toContain('3.5 + 0.1 S + 1.8 S G, validated: 50–100 m/min.');
+    expect(table.text()).toContain('validated: 50–200 W.');
     expect(table.text()).toContain('Holding the handrail makes the work lighter');
     expect(table.text()).toContain('steps of 0.1 mph and 0.5 % on the treadmill');
     expect(table.text()).toContain('(policy 1)');
