@@ -9,6 +9,7 @@ import type {
 import type { RangeFlag } from '@shared/clinical/range-flags';
 import type { AppointmentStatus } from '@shared/contracts/schedule-contract';
 import type { Transaction } from '../database/client';
+import { restrictionsOn } from '../patients/restrictions-queries';
 import { floorRanges, type FloorRange } from '../prescriptions/floor-ranges-queries';
 import { nextStarts } from '../progression/progression-queries';
 import { RANGE_WITHDRAWN, READING_COLUMNS, type ReadingRow } from './floor-repository';
@@ -39,6 +40,7 @@ interface VisitRow {
   readonly status: AppointmentStatus;
   readonly version: number;
   readonly monitored: boolean;
+  readonly localDate: string;
   readonly arrivedAt: Date | null;
   readonly checkedInAt: Date | null;
   readonly recordId: string | null;
@@ -61,13 +63,14 @@ const VISITS = `
   SELECT a.id AS "appointmentId", a.patient_id AS "patientId", p.site_id AS "siteId",
          p.given_name || ' ' || p.family_name AS "displayName", p.family_name AS "familyName",
          p.record_number AS "recordNumber", p.birth_date::text AS "birthDate", a.status, a.version, a.monitored,
-         a.arrived_at AS "arrivedAt", a.checked_in_at AS "checkedInAt",
+         a.local_date::text AS "localDate", a.arrived_at AS "arrivedAt", a.checked_in_at AS "checkedInAt",
          r.id AS "recordId", r.started_at AS "startedAt", r.identity_confirmed_with AS "identityConfirmedWith",
          began.display_name AS "beganBy", r.signed_at AS "signedAt", signer.display_name AS "signedBy",
          r.prescription_id AS "rangeId", ${RANGE_WITHDRAWN} AS "rangeWithdrawn",
          device.icd_status AS "icdStatus", device.lowest AS "icdLowest", device.pacemaker,
          EXISTS (SELECT FROM medications m
-                  WHERE m.patient_id = p.id AND m.name ILIKE '%insulin%' AND m.entered_in_error_at IS NULL
+                  WHERE m.patient_id = p.id AND (m.name ILIKE '%insulin%' OR 'glucose-lowering' = ANY(m.flags))
+                    AND m.entered_in_error_at IS NULL
                     AND (m.stopped_on IS NULL OR m.stopped_on > a.local_date)) AS insulin,
          vitals.readings,
          (SELECT json_build_object('setting', b.setting, 'minutes', b.minutes, 'shortBouts', b.short_bouts)
@@ -155,6 +158,7 @@ function presentVisit(
   row: VisitRow,
   ranges: readonly FloorRange[],
   startOf: Awaited<ReturnType<typeof nextStarts>>,
+  restrictions: Awaited<ReturnType<typeof restrictionsOn>>,
 ): RosterItem {
   const visitRange = rangeOf(row, ranges);
   const { appointmentId, patientId, displayName, familyName, recordNumber, birthDate } = row;
@@ -168,6 +172,7 @@ function presentVisit(
     ...presentRange(visitRange),
     icd: { status: row.icdStatus ?? 'unknown', lowestRate: row.icdLowest },
     flags: flagsOf(row, visitRange),
+    restrictions: [...(restrictions.get(row.patientId) ?? [])],
     nextStart: startOf(row.patientId, leadingRangeOf(row, ranges)),
     work: row.work,
     record: row.recordId === null ? null : { id: row.recordId, ...presentRecordFacts(row) },
@@ -215,8 +220,9 @@ export async function classRoster(
     },
     now,
   );
+  const restrictions = await restrictionsOn(tx, patientIds, rows[0]?.localDate ?? '');
   return {
-    items: visible.map((row) => presentVisit(row, ranges, startOf)),
+    items: visible.map((row) => presentVisit(row, ranges, startOf, restrictions)),
     notShown: rows.length - visible.length,
   };
 }

@@ -69,6 +69,47 @@ describe('the roster', () => {
     );
   });
 
+  it('shows what may not be done, by order and by policy', async () => {
+    const { database } = world.house.context;
+    const classDate = await buildClassDate(database, world.site, { localDate: '2026-12-01' });
+    const { patient } = await buildVisit(database, world.site, classDate);
+    await world.nurse
+      .post(`/api/patients/${patient.id}/record`)
+      .send({
+        entries: [
+          {
+            kind: 'clinical-events',
+            values: { kind: 'bypass', description: '', occurredOn: '2026-11-01' },
+          },
+          {
+            kind: 'restrictions',
+            values: {
+              kind: 'lifting',
+              limit: 4.5,
+              orderedBy: 'The surgeon',
+              orderedOn: '2026-11-02',
+              until: '2026-12-01',
+            },
+          },
+          {
+            kind: 'restrictions',
+            values: {
+              kind: 'fall',
+              orderedBy: 'The surgeon',
+              orderedOn: '2026-11-02',
+              until: '2026-11-30',
+            },
+          },
+        ],
+      })
+      .expect(201);
+    const { body } = await world.nurse.get(`/api/class-dates/${classDate.id}/roster`).expect(200);
+    expect((body as Roster).items[0]?.restrictions).toMatchObject([
+      { kind: 'lifting', title: 'Lifting limit 4.5 kg', byPolicy: false },
+      { kind: 'sternum', byPolicy: true },
+    ]);
+  });
+
   it('says when the range has changed since the record began', async () => {
     const { recordId, prescription, classDate } = await world.begun();
     await world.sql(`UPDATE prescriptions SET status = 'revoked', ended_at = now() WHERE id = $1`, [

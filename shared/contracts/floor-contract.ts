@@ -1,6 +1,7 @@
 import * as z from 'zod';
 import { placements } from '../clinical/placement';
 import { leads, limitKinds } from '../clinical/prescribing';
+import { restrictionKinds } from '../clinical/training/restrictions';
 import { vitalPhases, vitalSignBounds } from '../clinical/vital-sign-bounds';
 import { instantField, noteField, textField, wholeNumberField } from './fields';
 import { appointmentStatusSchema } from './schedule-contract';
@@ -223,6 +224,15 @@ export const rosterItemSchema = z.object({
     lowestRate: z.number().nullable(),
   }),
   flags: z.array(z.enum(floorFlags)),
+  /** What may not be done, ordered or by the program's policy. */
+  restrictions: z.array(
+    z.object({
+      kind: z.enum(restrictionKinds),
+      title: z.string(),
+      words: z.string(),
+      byPolicy: z.boolean(),
+    }),
+  ),
   record: z.object(recordFacts).nullable(),
   /** All of this visit, in the order of measuring. */
   readings: z.array(readingSchema),

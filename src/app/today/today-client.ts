@@ -1,6 +1,7 @@
 import { HttpClient, type HttpResourceRef, httpResource } from '@angular/common/http';
 import { Injectable, inject } from '@angular/core';
 import { type DeskToday, deskTodaySchema } from '@shared/contracts/desk-contract';
+import { type FollowUp, followUpsSchema } from '@shared/contracts/follow-ups-contract';
 import {
   type Prescription,
   prescriptionSchema,
@@ -24,6 +25,13 @@ export class TodayClient {
   desk(): HttpResourceRef<DeskToday | undefined> {
     return httpResource(() => '/api/desk/today', {
       parse: (answer) => deskTodaySchema.parse(answer),
+    });
+  }
+
+  /** Who told of thoughts of self-harm and was not spoken with yet. */
+  followUps(): HttpResourceRef<FollowUp[] | undefined> {
+    return httpResource(() => '/api/follow-ups', {
+      parse: (answer) => followUpsSchema.parse(answer).items,
     });
   }
 

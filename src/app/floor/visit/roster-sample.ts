@@ -57,6 +57,7 @@ export function sampleItem(given: Partial<RosterItem> = {}): RosterItem {
     work: null,
     icd: { status: 'none', lowestRate: null },
     flags: [],
+    restrictions: [],
     record: {
       id: id(900),
       startedAt: '2026-12-01T13:56:00.000Z',

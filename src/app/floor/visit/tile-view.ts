@@ -144,13 +144,14 @@ function rangeFlagWords({ rangeFlags }: Visit): string[] {
 }
 
 function flagsOf(visit: Visit): string[] {
-  const { icd, flags, ceiling, leadBy } = visit;
+  const { icd, flags, restrictions, ceiling, leadBy } = visit;
   return [
     ...rangeFlagWords(visit),
     ...(leadBy === null ? [] : [ceiling === null ? 'no ceiling' : `ceiling ${ceiling.value}`]),
     ...(icd.lowestRate === null ? [] : [`ICD ${icd.lowestRate}`]),
     ...(icd.status === 'present' && icd.lowestRate === null ? ['ICD, zones unknown'] : []),
     ...flags.map((flag) => flagWords[flag]),
+    ...restrictions.map(({ title }) => title.toLowerCase()),
   ];
 }
 

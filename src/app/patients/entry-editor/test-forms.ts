@@ -199,7 +199,7 @@ const signsOf = (rows: readonly Values[]) =>
     const sign = signOf[String(kind)];
     return sign === undefined
       ? []
-      : [{ kind: sign, heartRate, clearMets, detail: detail === null ? null : String(detail) }];
+      : [{ kind: sign, heartRate, clearMets, detail: typeof detail === 'string' ? detail : null }];
   });
 
 /** A test with what was found in it, entered together or not at all; rate-acting drugs that are taken stand in it to begin with. */

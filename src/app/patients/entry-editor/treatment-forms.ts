@@ -25,7 +25,10 @@ export const dosingWords: Readonly<Record<string, string>> = {
   'as-needed': 'As needed',
 };
 
-const salts = (name: unknown): readonly string[] => genericDrugOf(String(name ?? ''))?.salts ?? [];
+const knownDrug = (name: unknown) =>
+  typeof name === 'string' ? genericDrugOf(name) : undefined;
+
+const salts = (name: unknown): readonly string[] => knownDrug(name)?.salts ?? [];
 
 const medicationFields: readonly EntryField[] = [
   {
@@ -63,7 +66,7 @@ const medicationFields: readonly EntryField[] = [
 
 /** What our list knows of a drug by its name; a drug that it does not know is left as it was filled in. */
 function knownOf({ name }: Values): Values {
-  const drug = genericDrugOf(String(name ?? ''));
+  const drug = knownDrug(name);
   if (!drug) return {};
   const [salt] = drug.salts;
   return {

@@ -3,14 +3,18 @@ import { Session } from '../../core/session';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { AwaitingSection } from '../awaiting-section/awaiting-section';
 import { DeskSection } from '../desk-section/desk-section';
+import { FollowUpsSection } from '../follow-ups-section/follow-ups-section';
 import { TasksSection } from '../tasks-section/tasks-section';
 
 /** What waits for the person today: signatures for a physician, who comes for the front desk, ranges to see to for the others. */
 @Component({
   selector: 'app-today-page',
-  imports: [AwaitingSection, DeskSection, PageHeader, TasksSection],
+  imports: [AwaitingSection, DeskSection, FollowUpsSection, PageHeader, TasksSection],
   template: `
     <app-page-header heading="Today" />
+    @if (signs() || prescribes()) {
+      <app-follow-ups-section />
+    }
     @if (signs()) {
       <app-awaiting-section />
     }
