@@ -135,8 +135,8 @@ describe('the roster', () => {
     };
     const one = await statements(1);
     expect(await statements(12)).toBe(one);
-    // Session, begin, three of the roster's own, audit, commit.
-    expect(one).toBe(7);
+    // Session, begin, four of the roster's own, audit, commit.
+    expect(one).toBe(8);
   });
 
   it('has a stamp that moves with every write', async () => {

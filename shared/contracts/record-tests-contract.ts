@@ -19,7 +19,7 @@ const optional = <T extends z.ZodType>(field: T) => field.nullable().default(nul
 const { thresholdRate, mets, vo2, peakRate, seatedRate } = requestBounds;
 
 /** What the test's own numbers may be; the database's checks say the same. */
-export const testBounds = {
+const testBounds = {
   minutes: { lowest: 0.1, highest: 60 },
   speedMph: { lowest: 0, highest: 15 },
   gradePercent: { lowest: 0, highest: 40 },
@@ -59,8 +59,7 @@ const stage = z
   })
   .refine(pressuresAgree, { path: ['diastolic'], error: 'Diastolic must be below systolic' });
 
-export const testSigns = ['st-change', 'angina', 'arrhythmia'] as const;
-export type TestSign = (typeof testSigns)[number];
+const testSigns = ['st-change', 'angina', 'arrhythmia'] as const;
 
 const sign = z.strictObject({
   kind: z.enum(testSigns, 'Choose what was seen'),

@@ -287,7 +287,7 @@ function drugOf(entry: string, { drugClass, rateActing, flags = [] }: Group): Ge
 }
 
 /** Common generic names in the order of the alphabet. @see genericDrugsSource */
-export const genericDrugs: readonly GenericDrug[] = groups
+const genericDrugs: readonly GenericDrug[] = groups
   .flatMap((group) => group.names.map((entry) => drugOf(entry, group)))
   .sort((a, b) => (a.name < b.name ? -1 : 1));
 

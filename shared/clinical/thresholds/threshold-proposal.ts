@@ -56,7 +56,7 @@ const kindOfSign: Readonly<Record<string, ThresholdKind>> = {
 const paced: readonly Rhythm[] = ['sinus-tracked', 'sensor-paced', 'fixed-paced'];
 
 /** Whether the ECG could show ischemia on a date. */
-export function ecgOn(record: ThresholdRecord, date: string) {
+function ecgOn(record: ThresholdRecord, date: string) {
   const ecg = record['resting-ecgs'].find((e) => stands(e) && e.values.observedOn <= date);
   const rhythm = record.rhythms.find((e) => stands(e) && e.values.observedOn <= date);
   const verified = record['medication-reviews'].some(stands);

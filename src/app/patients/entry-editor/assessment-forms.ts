@@ -43,7 +43,7 @@ function withLevel(values: Values): Values {
   const risk = riskOf(values);
   if (!isJudgeable(risk)) return risk;
   const byCriteria = riskLevelOf(stratificationOf(risk), null);
-  return { ...risk, level: (values['level']) ?? byCriteria };
+  return { ...risk, level: values['level'] ?? byCriteria };
 }
 
 /** Each criterion there, not there, or not known; the class follows, and another is chosen only with a reason. */

@@ -1,5 +1,9 @@
 import { dosingTimes, drugFlagWords, drugFlags } from '@shared/clinical/drugs/drug';
-import { genericDrugOf, suggestDrugs } from '@shared/clinical/drugs/generic-drugs';
+import {
+  genericDrugOf,
+  genericDrugsSource,
+  suggestDrugs,
+} from '@shared/clinical/drugs/generic-drugs';
 import { icdStatuses, icdZoneKinds, rateActingDrugs } from '@shared/clinical/prescribing/request';
 import {
   restrictionLimits,
@@ -10,7 +14,7 @@ import { type PatientRecord, recordValues } from '@shared/contracts/record-contr
 import { pacingModes } from '@shared/contracts/record-treatment-contract';
 import { icdWords, rateActingWords, zoneWords } from '../../ui/words/clinical-words';
 import { date, number, options, rate } from './common-fields';
-import { type EntryField, type EntryForm, type Values, formOf } from './entry-form';
+import { type EntryField, type EntryForm, type Line, type Values, formOf } from './entry-form';
 import { bpm, cycleLength, inUnit } from './units';
 
 type Entry<K extends keyof PatientRecord> = PatientRecord[K][number];
@@ -25,10 +29,7 @@ export const dosingWords: Readonly<Record<string, string>> = {
   'as-needed': 'As needed',
 };
 
-const knownDrug = (name: unknown) =>
-  typeof name === 'string' ? genericDrugOf(name) : undefined;
-
-const salts = (name: unknown): readonly string[] => knownDrug(name)?.salts ?? [];
+const knownDrug = (name: unknown) => (typeof name === 'string' ? genericDrugOf(name) : undefined);
 
 const medicationFields: readonly EntryField[] = [
   {
@@ -76,6 +77,15 @@ function knownOf({ name }: Values): Values {
   };
 }
 
+/** What our list says of a drug that is typed. */
+function linesOf(drug: ReturnType<typeof knownDrug>): Line[] {
+  if (!drug) return [];
+  const known: Line = { label: 'Class', value: drug.drugClass, source: genericDrugsSource };
+  if (drug.salts.length < 2) return [known];
+  const why = 'They act for different times: say which.';
+  return [known, { label: 'Salt', value: drug.salts.join(' or '), why }];
+}
+
 const withSalts = (field: EntryField): EntryField =>
   field.key === 'salt' && field.type === 'text'
     ? { ...field, suggest: () => ['succinate', 'tartrate', 'dinitrate', 'mononitrate'] }
@@ -88,16 +98,7 @@ export const medicationForm = (): EntryForm => ({
     medicationFields.map(withSalts),
   ),
   fills: { name: knownOf },
-  lines: ({ name }) =>
-    salts(name).length > 1
-      ? [
-          {
-            label: 'Salt',
-            value: salts(name).join(' or '),
-            why: 'They act for different times: say which.',
-          },
-        ]
-      : [],
+  lines: ({ name }) => linesOf(knownDrug(name)),
 });
 
 /** A change of dose or schedule: the entry stops on the day the new one starts. */

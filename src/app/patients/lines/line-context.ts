@@ -34,9 +34,7 @@ export const stands = (entry: Pick<RecordEntry, 'enteredInErrorAt'>): boolean =>
 
 /** The entries of a kind that stand, the newest first. */
 export const standing = <K extends RecordKind>(record: PatientRecord, kind: K): PatientRecord[K] =>
-  (record[kind] as { enteredInErrorAt: string | null }[]).filter(
-    stands,
-  ) as PatientRecord[K];
+  (record[kind] as { enteredInErrorAt: string | null }[]).filter(stands) as PatientRecord[K];
 
 /** The last measurement up to a date; null where there is none. */
 export function bodyOn(record: PatientRecord, key: 'heightCm' | 'weightKg', date: string) {

@@ -1,6 +1,7 @@
 import type { RecordKind } from '@shared/contracts/record-contract';
 import type { EntryForm } from '../entry-editor/entry-form';
 import { questionnaires } from '@shared/clinical/questionnaires/questionnaires';
+import { ecgReadableSource } from '@shared/clinical/thresholds/ecg-readable';
 import { instruments } from '@shared/contracts/record-assessments-contract';
 import { questionnaireForm, riskForm } from '../entry-editor/assessment-forms';
 import {
@@ -119,6 +120,14 @@ export const sectionWords: Readonly<Record<ListedKind, SectionWords>> = {
     add: 'Add a resting ECG',
     empty: 'None entered: it is not known whether the ECG can show ischemia.',
     form: ecgForm,
+    lines: ({ hindrances }) => [
+      {
+        label: 'Ischemia in exercise',
+        value: (hindrances as string[]).length > 0 ? 'cannot be seen' : 'can be seen',
+        source: ecgReadableSource,
+        why: 'Digoxin and ventricular pacing entered elsewhere count too.',
+      },
+    ],
   },
   'chair-stands': {
     heading: 'Five stands from a chair',
