@@ -194,7 +194,7 @@ const presentRecordFacts = (row: RecordFacts) => ({
 });
 
 /**
- * The roster of a class date in the order of its places, in three statements whatever its size; null when there is no
+ * The roster of a class date in the order of its places, in four statements whatever its size; null when there is no
  * such class date.
  * @param siteIds the sites whose patients the caller may see
  */
