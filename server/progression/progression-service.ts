@@ -139,6 +139,11 @@ export async function decideProposal(
   const prescription = await findPrescription(tx, row.prescriptionId);
   if (!prescription) return overtaken();
   const { proposal } = row;
+  if (request.decision === 'accepted' && proposal.action === 'review' && proposal.to === null) {
+    return fail('not-applicable', {
+      title: 'This asks for a review first: see to it, then set a load or dismiss the proposal.',
+    });
+  }
   const decision =
     request.decision === 'accepted'
       ? { kind: 'accepted' as const, load: proposal.to ?? proposal.from, reason: null }

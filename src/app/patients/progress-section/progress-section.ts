@@ -68,6 +68,11 @@ export class ProgressSection {
       this.proposal()?.decision === null &&
       this.#roles().some((role) => role === 'exercise-physiologist' || role === 'physician'),
   );
+  /** A review without an easier load is not to be accepted: something comes first. */
+  protected readonly acceptable = computed(() => {
+    const next = this.proposal();
+    return next !== null && (next.to ?? (next.action === 'review' ? null : next.from)) !== null;
+  });
   protected readonly ways = signal<'none' | 'edit' | 'dismiss'>('none');
   protected readonly reason = new FormControl('', { nonNullable: true });
   protected readonly busy = signal(false);

@@ -67,6 +67,11 @@ export class RangesSection {
   protected readonly effortLeads = computed(() =>
     this.flags().some(({ effect }) => effect === 'withdrawn' || effect === 'effort-today'),
   );
+  /** As it stands now: a withdrawn range asks for no more than usual. */
+  protected readonly effortNow = computed(() => {
+    const range = valueOf(this.#chart.patient)?.clinical?.range;
+    return range ? `${range.perceivedExertion.lower}–${range.perceivedExertion.upper}` : null;
+  });
   protected readonly timeZone = computed(
     () => valueOf(this.#chart.patient)?.site.timeZone ?? 'UTC',
   );
