@@ -6,9 +6,8 @@ const desk = useDesk();
 
 /** Writes and signs the first range of whoever is in a course without one; whose it is, and what it says. */
 async function signFirstRange(page: Page): Promise<{ name: string; range: string }> {
-  await page.getByRole('heading', { name: /In a course without a range/ }).waitFor();
-  const link = page.getByRole('link', { name: /^Write one: / }).first();
-  const name = (await link.getAttribute('aria-label'))?.replace('Write one: ', '') ?? '';
+  const link = page.getByRole('link', { name: /^Write a range: / }).first();
+  const name = (await link.getAttribute('aria-label'))?.replace('Write a range: ', '') ?? '';
   await link.click();
   await page.getByRole('heading', { name, level: 1 }).waitFor();
   await page.getByRole('region', { name: 'What it comes to' }).getByText('Target range').waitFor();
@@ -27,7 +26,7 @@ async function signFirstRange(page: Page): Promise<{ name: string; range: string
 it('shows at once what another input would come to, and refuses what cannot be', async () => {
   const page = await desk.signIn('physiologist');
   await page
-    .getByRole('link', { name: /^Write one: / })
+    .getByRole('link', { name: /^Write a range: / })
     .first()
     .click();
   await page.getByRole('button', { name: 'Try another Resting rate' }).click();
