@@ -4,11 +4,18 @@ import { expectAccessible, useDesk } from './browser';
 
 const desk = useDesk();
 
-/** Writes and signs the first range of whoever is in a course without one; whose it is, and what it says. */
-async function signFirstRange(page: Page): Promise<{ name: string; range: string }> {
-  const link = page.getByRole('link', { name: /^Write a range: / }).first();
-  const name = (await link.getAttribute('aria-label'))?.replace('Write a range: ', '') ?? '';
+/** Opens the first range of whoever has none in force: not written yet, or a draft. */
+async function openFirstRange(page: Page): Promise<string> {
+  const row = page.getByRole('listitem').filter({ hasText: /New intake|Draft not signed/ });
+  const link = row.getByRole('link', { name: /^(Write a range|Open): / }).first();
+  const label = (await link.getAttribute('aria-label')) ?? '';
   await link.click();
+  return label.slice(label.indexOf(': ') + 2);
+}
+
+/** Writes and signs a first range; whose it is, and what it says. */
+async function signFirstRange(page: Page): Promise<{ name: string; range: string }> {
+  const name = await openFirstRange(page);
   await page.getByRole('heading', { name, level: 1 }).waitFor();
   await page.getByRole('region', { name: 'What it comes to' }).getByText('Target range').waitFor();
   await page.getByRole('heading', { name: 'Every way to set it' }).waitFor();
@@ -25,10 +32,7 @@ async function signFirstRange(page: Page): Promise<{ name: string; range: string
 
 it('shows at once what another input would come to, and refuses what cannot be', async () => {
   const page = await desk.signIn('physiologist');
-  await page
-    .getByRole('link', { name: /^Write a range: / })
-    .first()
-    .click();
+  await openFirstRange(page);
   await page.getByRole('button', { name: 'Try another Resting rate' }).click();
   const rate = page.getByRole('textbox', { name: 'Seated', exact: true });
   const before = await page.locator('app-result-panel').textContent();
