@@ -8,6 +8,9 @@ import { buildUser } from '../builders/people';
 import { createTestApp, type TestApp } from '../builders/test-app';
 import { minutes } from '../builders/test-clock';
 
+/** Requests that are under way, each held until it is let go on. */
+const underWay: (() => void)[] = [];
+
 /** Changes its session and takes its time, as a slow request would. */
 const slow = route({
   method: 'post',
@@ -18,9 +21,9 @@ const slow = route({
   transaction: 'none',
   request: {},
   response: { 204: null },
-  handler: async ({ http, context }) => {
+  handler: async ({ http }) => {
     Object.assign(http.request.session, { seen: 'slowly' });
-    await context.database.$client.query('SELECT pg_sleep(0.05)');
+    await new Promise<void>((goOn) => underWay.push(goOn));
     return noContent();
   },
 });
@@ -47,15 +50,13 @@ describe('a session that ends while a request is under way', () => {
     const users = await Promise.all(
       Array.from({ length: count }, () => buildUser(house.context.database)),
     );
-    return Promise.all(
-      users.map(async (user) => {
-        const agent = await agentFor(house, user);
-        const pending = agent.post('/api/slow').then((reply) => reply.status);
-        await new Promise((resolve) => setTimeout(resolve, 15));
-        await agent.post('/api/auth/sign-out').expect(204);
-        return [await pending, await sessionsOf(user.id)];
-      }),
-    );
+    const agents = await Promise.all(users.map((user) => agentFor(house, user)));
+    const pending = agents.map((agent) => agent.post('/api/slow').then((reply) => reply.status));
+    await vi.waitFor(() => expect(underWay).toHaveLength(count), 20_000);
+    await Promise.all(agents.map((agent) => agent.post('/api/auth/sign-out').expect(204)));
+    for (const goOn of underWay.splice(0)) goOn();
+    const statuses = await Promise.all(pending);
+    return Promise.all(users.map(async ({ id }, at) => [statuses[at], await sessionsOf(id)]));
   }
 
   it('does not come back when the slow request saves it: 0 of 60', async () => {
@@ -82,7 +83,10 @@ describe('a session that ends while a request is under way', () => {
     const store = new SessionStore(database.$client, clock);
     const user = await buildUser(database);
     const agent = await agentFor(house, user);
-    await agent.post('/api/slow').expect(204);
+    const pending = agent.post('/api/slow').then((reply) => reply.status);
+    await vi.waitFor(() => expect(underWay).toHaveLength(1));
+    underWay.pop()?.();
+    expect(await pending).toBe(204);
     const { rows } = await database.$client.query('SELECT sess FROM sessions WHERE user_id = $1', [
       user.id,
     ]);
