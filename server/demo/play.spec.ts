@@ -102,7 +102,7 @@ describe('the first load', () => {
     );
     expect(ranges.length).toBeGreaterThan(40);
     for (const { patientId, inputs, day } of ranges) {
-      const derived = await prescribingInputs(database, patientId, day);
+      const derived = await prescribingInputs(database, patientId, day, 180);
       expect(derived?.missing).toEqual([]);
       const found = derived?.inputs;
       expect({

@@ -10,6 +10,7 @@ import type { RangeFlag } from '@shared/clinical/range-flags';
 import type { AppointmentStatus } from '@shared/contracts/schedule-contract';
 import type { Transaction } from '../database/client';
 import { restrictionsOn } from '../patients/restrictions-queries';
+import { programPolicyInForce } from '../prescriptions/policy-queries';
 import { floorRanges, type FloorRange } from '../prescriptions/floor-ranges-queries';
 import { nextStarts } from '../progression/progression-queries';
 import { RANGE_WITHDRAWN, READING_COLUMNS, type ReadingRow } from './floor-repository';
@@ -194,7 +195,7 @@ const presentRecordFacts = (row: RecordFacts) => ({
 });
 
 /**
- * The roster of a class date in the order of its places, in four statements whatever its size; null when there is no
+ * The roster of a class date in the order of its places, in five statements whatever its size; null when there is no
  * such class date.
  * @param siteIds the sites whose patients the caller may see
  */
@@ -220,7 +221,9 @@ export async function classRoster(
     },
     now,
   );
-  const restrictions = await restrictionsOn(tx, patientIds, rows[0]?.localDate ?? '');
+  const { training } = await programPolicyInForce(tx.connection, now);
+  const today = rows[0]?.localDate ?? '';
+  const restrictions = await restrictionsOn(tx, patientIds, today, training.resistance);
   return {
     items: visible.map((row) => presentVisit(row, ranges, startOf, restrictions)),
     notShown: rows.length - visible.length,

@@ -103,11 +103,23 @@ describe('the roster', () => {
         ],
       })
       .expect(201);
-    const { body } = await world.nurse.get(`/api/class-dates/${classDate.id}/roster`).expect(200);
-    expect((body as Roster).items[0]?.restrictions).toMatchObject([
-      { kind: 'lifting', title: 'Lifting limit 4.5 kg', byPolicy: false },
-      { kind: 'sternum', byPolicy: true },
-    ]);
+    const restrictions = async () => {
+      const roster = await world.nurse.get(`/api/class-dates/${classDate.id}/roster`).expect(200);
+      return (roster.body as Roster).items[0]?.restrictions;
+    };
+    const lifting = { kind: 'lifting', title: 'Lifting limit 4.5 kg', byPolicy: false };
+    const sternum = (week: number) => ({
+      kind: 'sternum',
+      words: expect.stringContaining(`Until week ${week}.`),
+      byPolicy: true,
+    });
+    expect(await restrictions()).toMatchObject([lifting, sternum(12)]);
+    await world.sql(
+      `INSERT INTO policies (version, content, training, note, effective_from)
+       SELECT 2, content || '{"version": 2}', '{"resistance": {"upperAfterSternotomy": 9}}', 'by hand', $1 FROM policies`,
+      [world.house.clock.now()],
+    );
+    expect(await restrictions()).toMatchObject([lifting, sternum(9)]);
   });
 
   it('says when the range has changed since the record began', async () => {
@@ -135,8 +147,8 @@ describe('the roster', () => {
     };
     const one = await statements(1);
     expect(await statements(12)).toBe(one);
-    // Session, begin, four of the roster's own, audit, commit.
-    expect(one).toBe(8);
+    // Session, begin, five of the roster's own, audit, commit.
+    expect(one).toBe(9);
   });
 
   it('has a stamp that moves with every write', async () => {

@@ -95,7 +95,7 @@ it('takes observed work from signed sessions, of an amended reading the amendmen
     measuredOn: '2026-12-01',
     recordedBy: nurse.id,
   });
-  const derived = await prescribingInputs(house.context.database, patient.id, '2026-12-01');
+  const derived = await prescribingInputs(house.context.database, patient.id, '2026-12-01', 180);
   expect(prescribingInputsSchema.parse(derived)).toEqual(derived);
   expect(derived?.inputs.observedWork).toEqual({
     medianHeartRate: 97,
@@ -130,6 +130,6 @@ it('lists sessions with their readings, the newest first, page by page', async (
 
 it('knows no patient of another id', async () => {
   expect(
-    await prescribingInputs(house.context.database, randomUUID(), '2026-12-01'),
+    await prescribingInputs(house.context.database, randomUUID(), '2026-12-01', 180),
   ).toBeUndefined();
 });

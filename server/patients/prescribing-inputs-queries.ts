@@ -14,12 +14,14 @@ const readingDays = 90;
 /**
  * What a prescription would rest on today.
  * @param today the site's local date, YYYY-MM-DD
+ * @param testValidDays after how many days a test no longer counts, by the policy
  * @returns undefined when there is no such patient
  */
 export async function prescribingInputs(
   tx: Queryable,
   patientId: string,
   today: string,
+  testValidDays: number,
 ): Promise<PrescribingInputs | undefined> {
   const [found] = await tx
     .select({
@@ -46,6 +48,7 @@ export async function prescribingInputs(
       course: qualifyingDiagnosis === null ? null : { firstSessionOn, qualifyingDiagnosis },
       record: withoutErrors(record),
       readings,
+      testValidDays,
     },
     today,
   );

@@ -3,6 +3,7 @@ import {
   type RestrictedRecord,
   type StandingRestriction,
 } from '@shared/clinical/restrictions/standing-restrictions';
+import type { ResistancePolicy } from '@shared/clinical/training/resistance-policy';
 import type { Transaction } from '../database/client';
 
 interface Row extends RestrictedRecord {
@@ -29,16 +30,18 @@ const TEXT = `
 /**
  * What holds for each of these patients, by patient, in one statement.
  * @param today the local date of their class
+ * @param policy for how many weeks an operation restricts where nobody has ordered
  */
 export async function restrictionsOn(
   tx: Transaction,
   patientIds: readonly string[],
   today: string,
+  policy: ResistancePolicy,
 ): Promise<ReadonlyMap<string, readonly StandingRestriction[]>> {
   const { rows } = await tx.connection.query<Row>({
     name: 'standing-restrictions',
     text: TEXT,
     values: [[...patientIds]],
   });
-  return new Map(rows.map((row) => [row.patientId, standingRestrictions(row, today)]));
+  return new Map(rows.map((row) => [row.patientId, standingRestrictions(row, today, policy)]));
 }

@@ -55,7 +55,8 @@ export async function worksheetOf(
 ): Promise<Worksheet> {
   const { patient, course, first } = await headOf(tx, patientId);
   const today = localDateAt(now, patient.site.timeZone);
-  const record = await prescribingInputs(tx, patientId, today);
+  const policy = await policyInForce(tx.connection, now);
+  const record = await prescribingInputs(tx, patientId, today, policy.test.validDays);
   if (!record) throw fail('not-found');
   const range = await rangeInForce(tx, patientId, now);
   return {
@@ -63,7 +64,7 @@ export async function worksheetOf(
     course,
     today,
     record,
-    policy: await policyInForce(tx.connection, now),
+    policy,
     first,
     student: actor.student,
     inForce: range

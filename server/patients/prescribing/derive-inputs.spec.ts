@@ -40,6 +40,7 @@ function facts(
     patient: { birthDate: '1961-12-02', sexAtBirth: 'female' },
     course: null,
     readings: [],
+    testValidDays: 180,
     ...rest,
     record: { ...empty, ...record } as unknown as PatientRecord,
   };

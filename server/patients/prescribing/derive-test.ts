@@ -1,7 +1,7 @@
 import type { InputOrigin, PrefilledInputs } from '@shared/contracts/prescribing-inputs-contract';
 import { daysBetween } from '@shared/scheduling/wall-time';
 import type { Change, LatestChanges } from './derive-changes';
-import { isOld, nothingEntered, oldAfterDays, type RecordFacts } from './record-facts';
+import { isOld, nothingEntered, type RecordFacts } from './record-facts';
 
 type Test = PrefilledInputs['test'];
 
@@ -44,7 +44,7 @@ export function testOf(facts: RecordFacts, changes: LatestChanges, today: string
       test: {
         text: `${protocol}, ${mode}, ended by ${endedBy.replaceAll('-', ' ')}`,
         date: performedOn,
-        old: isOld(performedOn, today, oldAfterDays.test),
+        old: isOld(performedOn, today, facts.testValidDays),
         entryId: latest.id,
       },
       'test.sameRateActingDrugs': drugsKnown

@@ -21,6 +21,8 @@ export interface RecordFacts {
   } | null;
   readonly record: PatientRecord;
   readonly readings: readonly ExerciseReading[];
+  /** After how many days a test no longer counts, by the policy. */
+  readonly testValidDays: number;
 }
 
 /** An input with where it comes from. */
@@ -30,8 +32,8 @@ export interface Derived<T> {
 }
 
 /**
- * After how many days an entry is called old, which warns and changes nothing: our own figures from common practice. A
- * test's age is the policy's `test.validDays`, which the engine judges; 180 is its default.
+ * After how many days an entry is called old, which warns and changes nothing: our own figures from common practice. How
+ * long a test counts is the policy's own number.
  */
 export const oldAfterDays = {
   resting: 30,
@@ -40,7 +42,6 @@ export const oldAfterDays = {
   rhythm: 90,
   medicationReview: 30,
   devices: 180,
-  test: 180,
   walkTest: 90,
   risk: 180,
 } as const;

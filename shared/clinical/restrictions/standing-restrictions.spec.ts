@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { RestrictedRecord, RestrictionOrder } from './standing-restrictions';
 import { standingRestrictions } from './standing-restrictions';
+import { defaultResistancePolicy as policy } from '../training/resistance-policy';
 
 const today = '2026-12-01';
 const none: RestrictedRecord = {
@@ -19,7 +20,7 @@ const order = (changes: Partial<RestrictionOrder> = {}): RestrictionOrder => ({
   ...changes,
 });
 const titles = (changes: Partial<RestrictedRecord>) =>
-  standingRestrictions({ ...none, ...changes }, today).map(({ title }) => title);
+  standingRestrictions({ ...none, ...changes }, today, policy).map(({ title }) => title);
 
 describe('restrictions that hold', () => {
   it.each<[string, Partial<RestrictedRecord>, string[]]>([
@@ -58,6 +59,7 @@ describe('restrictions that hold', () => {
     const [ordered, byPolicy] = standingRestrictions(
       { ...none, orders: [order({ detail: 'Left arm' })], peripheralArteryDisease: true },
       today,
+      policy,
     );
     expect(ordered).toMatchObject({ words: 'Left arm', byPolicy: false });
     expect(byPolicy).toMatchObject({ kind: 'claudication', byPolicy: true });

@@ -1,5 +1,5 @@
 import { daysBetween } from '../../scheduling/wall-time';
-import { defaultResistancePolicy } from '../training/resistance-policy';
+import type { ResistancePolicy } from '../training/resistance-policy';
 import type { WeeksSince } from '../training/resistance';
 import type { RestrictionKind } from '../training/restrictions';
 import { defaultRestrictions, restrictionEffects } from '../training/restrictions';
@@ -61,7 +61,7 @@ const ofOrder = ({ kind, limit, diastolic, detail }: RestrictionOrder): Standing
 export function standingRestrictions(
   record: RestrictedRecord,
   today: string,
-  policy = defaultResistancePolicy,
+  policy: ResistancePolicy,
 ): StandingRestriction[] {
   const { orders, dissection, peripheralArteryDisease } = record;
   const holding = orders.filter(
