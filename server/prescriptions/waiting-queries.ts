@@ -108,13 +108,14 @@ const sessionTasks = (siteIds: readonly string[]): SQL => sql`
         AND v.status NOT IN ('amended', 'entered-in-error')) s
    GROUP BY e.id`;
 
-/** Next steps that say more than to hold, under the range in force, that nobody has decided on. */
-const stepTasks = (siteIds: readonly string[]): SQL => sql`
+/** Next steps that say more than to hold, under a range in force and not withdrawn, that nobody has decided on. */
+const stepTasks = (siteIds: readonly string[], now: Date): SQL => sql`
   SELECT 'next-step', e.id, g.prescription_id, g.made_at, NULL::uuid, '[]'::jsonb, g.proposal ->> 'action'
     FROM ${activeCourses(siteIds)}
     JOIN progression_proposals g ON g.patient_id = e.patient_id AND g.decision IS NULL
     JOIN prescriptions p ON p.id = g.prescription_id AND p.status = 'active'
-   WHERE g.proposal ->> 'action' <> 'hold'
+   CROSS JOIN LATERAL (SELECT ${flagsOfPrescription(sql`${now.toISOString()}::timestamptz`)} AS flags) w
+   WHERE (w.flags @? '$[*] ? (@.effect == "withdrawn")') IS NOT TRUE AND g.proposal ->> 'action' <> 'hold'
      AND NOT EXISTS (SELECT FROM progression_proposals l WHERE l.patient_id = g.patient_id AND l.made_at > g.made_at)`;
 
 /** What to see to for these sites' patients: by kind, the longest waiting first, in one statement. */
@@ -128,7 +129,7 @@ export async function prescribingTasks(
     draftTasks(siteIds),
     recordTasks(siteIds, now),
     sessionTasks(siteIds),
-    stepTasks(siteIds),
+    stepTasks(siteIds, now),
   ];
   const { rows } = await db.execute<TaskRow>(sql`
     SELECT * FROM (

@@ -236,6 +236,15 @@ describe('what a physiologist sees to', () => {
     const open = await world.begun();
     expect(await tasksOf(open.patient.id)).toEqual([['record-unsigned', null]]);
   });
+
+  it('asks for a new range, and for no step under the one that is withdrawn', async () => {
+    const { first } = await twoSessions();
+    await world.nurse
+      .post(`/api/patients/${first.patient.id}/record/clinical-events`)
+      .send({ kind: 'syncope', description: 'At home', occurredOn: '2026-12-01' })
+      .expect(201);
+    expect(await tasksOf(first.patient.id)).toEqual([['withdrawn', null]]);
+  });
 });
 
 async function nobody() {

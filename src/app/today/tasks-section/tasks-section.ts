@@ -17,6 +17,8 @@ import { TodayClient } from '../today-client';
 
 interface Kind {
   readonly words: string;
+  /** As it is counted: one, more. */
+  readonly counted: readonly [string, string];
   readonly tone: Tone;
   readonly action: string;
   /** Where one sees to it. */
@@ -26,15 +28,69 @@ interface Kind {
 const visitsWaitMs = 10_000;
 
 const kinds: Readonly<Record<TaskKind, Kind>> = {
-  withdrawn: { words: 'Range withdrawn', tone: 'over', action: 'Write a new one', opens: 'new' },
-  'ran-above': { words: 'Ran above', tone: 'over', action: 'See the course', opens: 'progress' },
-  'without-range': { words: 'New intake', tone: 'due', action: 'Write a range', opens: 'new' },
-  'record-unsigned': { words: 'Record not signed', tone: 'due', action: 'Open', opens: 'vitals' },
-  unsigned: { words: 'Draft not signed', tone: 'due', action: 'Open', opens: 'range' },
-  'awaiting-physician': { words: 'Co-signature', tone: 'due', action: 'Open', opens: 'range' },
-  'next-step': { words: 'Next step', tone: 'plain', action: 'Decide', opens: 'progress' },
-  'ran-below': { words: 'Ran below', tone: 'plain', action: 'See the course', opens: 'progress' },
-  'review-due': { words: 'Review due', tone: 'plain', action: 'Write a new one', opens: 'new' },
+  withdrawn: {
+    words: 'Range withdrawn',
+    counted: ['range withdrawn', 'ranges withdrawn'],
+    tone: 'over',
+    action: 'Write a new one',
+    opens: 'new',
+  },
+  'ran-above': {
+    words: 'Ran above',
+    counted: ['ran above', 'ran above'],
+    tone: 'over',
+    action: 'See the course',
+    opens: 'progress',
+  },
+  'without-range': {
+    words: 'New intake',
+    counted: ['new intake', 'new intakes'],
+    tone: 'due',
+    action: 'Write a range',
+    opens: 'new',
+  },
+  'record-unsigned': {
+    words: 'Record not signed',
+    counted: ['record not signed', 'records not signed'],
+    tone: 'due',
+    action: 'Open',
+    opens: 'vitals',
+  },
+  unsigned: {
+    words: 'Draft not signed',
+    counted: ['draft not signed', 'drafts not signed'],
+    tone: 'due',
+    action: 'Open',
+    opens: 'range',
+  },
+  'awaiting-physician': {
+    words: 'Co-signature',
+    counted: ['co-signature', 'co-signatures'],
+    tone: 'due',
+    action: 'Open',
+    opens: 'range',
+  },
+  'next-step': {
+    words: 'Next step',
+    counted: ['next step', 'next steps'],
+    tone: 'plain',
+    action: 'Decide',
+    opens: 'progress',
+  },
+  'ran-below': {
+    words: 'Ran below',
+    counted: ['ran below', 'ran below'],
+    tone: 'plain',
+    action: 'See the course',
+    opens: 'progress',
+  },
+  'review-due': {
+    words: 'Review due',
+    counted: ['review due', 'reviews due'],
+    tone: 'plain',
+    action: 'Write a new one',
+    opens: 'new',
+  },
 };
 
 const reasonsOf = (flags: readonly RangeFlag[], wanted: RangeFlag['effect']): string =>
@@ -90,7 +146,10 @@ export class TasksSection {
   protected readonly totals = computed(() =>
     valueOf(this.#resource)
       ?.groups.filter(({ total }) => total > 0)
-      .map(({ kind, total }) => ({ kind, words: `${total} ${kinds[kind].words.toLowerCase()}` })),
+      .map(({ kind, total }) => ({
+        kind,
+        words: `${total} ${kinds[kind].counted[total === 1 ? 0 : 1]}`,
+      })),
   );
   protected readonly rows = computed(() =>
     valueOf(this.#resource)?.groups.flatMap(({ kind, items }) =>
