@@ -18,6 +18,7 @@ import { Icon } from '../../ui/icon/icon';
 import { EmptyState } from '../../ui/empty-state/empty-state';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
+import { ShowMore } from '../../ui/show-more/show-more';
 import { Skeleton } from '../../ui/skeleton/skeleton';
 import { StateChip } from '../../ui/state-chip/state-chip';
 import { BillingClient } from '../billing-client';
@@ -29,8 +30,8 @@ const typingPauseMs = 250;
   selector: 'app-charges-page',
   imports: [
     EmptyState,
-    MatButton,
     Icon,
+    MatButton,
     MatFormField,
     MatInput,
     MatLabel,
@@ -41,6 +42,7 @@ const typingPauseMs = 250;
     ProblemMessage,
     ReactiveFormsModule,
     RouterLink,
+    ShowMore,
     Skeleton,
     StateChip,
   ],

@@ -8,6 +8,7 @@ import { Session } from '../../core/session';
 import { EmptyState } from '../../ui/empty-state/empty-state';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
+import { ShowMore } from '../../ui/show-more/show-more';
 import { Skeleton } from '../../ui/skeleton/skeleton';
 import { BillingClient } from '../billing-client';
 
@@ -31,7 +32,7 @@ const reasons: Readonly<Record<Undelivered['reason'], string>> = {
 /** Whom no message reached, so that the desk can call. */
 @Component({
   selector: 'app-messages-page',
-  imports: [EmptyState, MatButton, PageHeader, ProblemMessage, RouterLink, Skeleton],
+  imports: [EmptyState, MatButton, PageHeader, ProblemMessage, RouterLink, ShowMore, Skeleton],
   templateUrl: './messages-page.html',
   styleUrl: '../charges-page/charges-page.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,

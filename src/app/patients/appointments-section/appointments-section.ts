@@ -3,6 +3,7 @@ import { MatButton } from '@angular/material/button';
 import type { AppointmentItem, AppointmentStatus } from '@shared/contracts/schedule-contract';
 import { EmptyState } from '../../ui/empty-state/empty-state';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
+import { ShowMore } from '../../ui/show-more/show-more';
 import { Skeleton } from '../../ui/skeleton/skeleton';
 import { StateChip, type Tone } from '../../ui/state-chip/state-chip';
 import { formatDay, formatTime } from '../../ui/words/dates';
@@ -31,7 +32,7 @@ const tones: Readonly<Partial<Record<AppointmentStatus, Tone>>> = {
 /** A patient's classes, what is ahead first at the top; booking is the schedule's. */
 @Component({
   selector: 'app-appointments-section',
-  imports: [EmptyState, MatButton, ProblemMessage, Skeleton, StateChip],
+  imports: [EmptyState, MatButton, ProblemMessage, ShowMore, Skeleton, StateChip],
   templateUrl: './appointments-section.html',
   styles: ':host { display: grid; gap: 1rem; }',
   changeDetection: ChangeDetectionStrategy.OnPush,

@@ -4,6 +4,7 @@ import type { VitalReading, VitalsSession } from '@shared/contracts/vitals-histo
 import { EmptyState } from '../../ui/empty-state/empty-state';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
 import { Quantity } from '../../ui/quantity/quantity';
+import { ShowMore } from '../../ui/show-more/show-more';
 import { Skeleton } from '../../ui/skeleton/skeleton';
 import { StateChip, type Tone } from '../../ui/state-chip/state-chip';
 import { formatLocalDate, formatTime } from '../../ui/words/dates';
@@ -29,7 +30,7 @@ const phases: Readonly<Record<VitalReading['phase'], string>> = {
 /** What was logged on the floor, session by session, each reading with its place; an amended one stays beside its amendment. */
 @Component({
   selector: 'app-vitals-section',
-  imports: [EmptyState, MatButton, ProblemMessage, Quantity, Skeleton, StateChip],
+  imports: [EmptyState, MatButton, ProblemMessage, Quantity, ShowMore, Skeleton, StateChip],
   templateUrl: './vitals-section.html',
   styleUrl: './vitals-section.scss',
   changeDetection: ChangeDetectionStrategy.OnPush,

@@ -1,13 +1,22 @@
-import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
+import {
+  ChangeDetectionStrategy,
+  Component,
+  DestroyRef,
+  computed,
+  inject,
+  signal,
+} from '@angular/core';
 import { MatButton } from '@angular/material/button';
 import { ActivatedRoute, RouterLink } from '@angular/router';
 import type { CompletionPatient } from '@shared/contracts/reports-contract';
-import { type Problem, toProblem } from '../../core/problem';
+import { PagedList } from '../../core/paged-list';
+import { tap } from 'rxjs';
 import { Session } from '../../core/session';
 import { EmptyState } from '../../ui/empty-state/empty-state';
 import { LocalDatePipe } from '../../ui/format/format-pipes';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
+import { ShowMore } from '../../ui/show-more/show-more';
 import { Skeleton } from '../../ui/skeleton/skeleton';
 import { StateChip, type Tone } from '../../ui/state-chip/state-chip';
 import { callOf, choicesOf, diagnosisChoices, paramsOf, partOf } from '../completion-query';
@@ -30,12 +39,13 @@ const states: Readonly<Record<CompletionPatient['state'], { word: string; tone: 
 @Component({
   selector: 'app-completion-patients-page',
   imports: [
-    LocalDatePipe,
     EmptyState,
+    LocalDatePipe,
     MatButton,
     PageHeader,
     ProblemMessage,
     RouterLink,
+    ShowMore,
     Skeleton,
     StateChip,
   ],
@@ -44,9 +54,6 @@ const states: Readonly<Record<CompletionPatient['state'], { word: string; tone: 
     .back {
       display: inline-block;
       margin-bottom: 0.75rem;
-    }
-    .more {
-      margin: 1rem 0;
     }
   `,
   changeDetection: ChangeDetectionStrategy.OnPush,
@@ -58,12 +65,11 @@ export class CompletionPatientsPage {
   readonly #choices = choicesOf(this.#query, new Date().toLocaleDateString('sv-SE'));
   readonly #part = partOf(this.#query);
   readonly #group = this.#query.get('group');
-  readonly #next = signal<string | null>(null);
-  protected readonly items = signal<readonly CompletionPatient[] | undefined>(undefined);
   protected readonly total = signal(0);
-  protected readonly problem = signal<Problem | null>(null);
-  protected readonly loading = signal(false);
-  protected readonly hasMore = computed(() => this.#next() !== null);
+  protected readonly list = new PagedList<CompletionPatient>(
+    (cursor) => this.#read(cursor),
+    inject(DestroyRef),
+  );
   protected readonly heading = headings[this.#part];
   protected readonly back = paramsOf(this.#choices);
   /** A director counts courses and opens no chart. */
@@ -72,41 +78,26 @@ export class CompletionPatientsPage {
   );
   protected readonly states = states;
   protected readonly detail = computed(() => {
-    if (this.items() === undefined) return null;
+    if (this.list.items() === null) return null;
     return `${this.total()} ${this.total() === 1 ? 'course' : 'courses'}`;
   });
 
   constructor() {
-    this.load();
+    this.list.load();
   }
 
   protected diagnosis(code: string): string {
     return diagnosisChoices.find(({ value }) => value === code)?.label ?? code;
   }
 
-  /** Reads the first page, or the one after what is shown. */
-  protected load(): void {
-    const cursor = this.#next();
-    this.loading.set(true);
-    this.problem.set(null);
-    this.#client
+  #read(cursor: string | null): ReturnType<ReportsClient['patients']> {
+    return this.#client
       .patients({
         ...callOf(this.#choices),
         part: this.#part,
         ...(this.#group !== null && { group: this.#group }),
         ...(cursor !== null && { cursor }),
       })
-      .subscribe({
-        next: ({ total, items, nextCursor }) => {
-          if (cursor === null) this.total.set(total);
-          this.items.update((shown = []) => [...shown, ...items]);
-          this.#next.set(nextCursor);
-          this.loading.set(false);
-        },
-        error: (error: unknown) => {
-          this.problem.set(toProblem(error));
-          this.loading.set(false);
-        },
-      });
+      .pipe(tap(({ total }) => this.total.set(total)));
   }
 }

@@ -23,6 +23,7 @@ import { FieldError } from '../../ui/field-error/field-error';
 import { zodValidator } from '../../ui/field-error/zod-validator';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
+import { ShowMore } from '../../ui/show-more/show-more';
 import { Skeleton } from '../../ui/skeleton/skeleton';
 import { StateChip } from '../../ui/state-chip/state-chip';
 import { type AuditFilter, SettingsClient } from '../settings-client';
@@ -51,6 +52,7 @@ const text = () => new FormControl('', { nonNullable: true });
     ProblemMessage,
     ReactiveFormsModule,
     RouterLink,
+    ShowMore,
     Skeleton,
     StateChip,
   ],

@@ -17,6 +17,7 @@ import { EmptyState } from '../../ui/empty-state/empty-state';
 import { Icon } from '../../ui/icon/icon';
 import { PageHeader } from '../../ui/page-header/page-header';
 import { ProblemMessage } from '../../ui/problem-message/problem-message';
+import { ShowMore } from '../../ui/show-more/show-more';
 import { Skeleton } from '../../ui/skeleton/skeleton';
 import { StateChip } from '../../ui/state-chip/state-chip';
 import { accountStates } from '../account-state';
@@ -32,6 +33,7 @@ import { SettingsClient } from '../settings-client';
     PageHeader,
     ProblemMessage,
     RouterLink,
+    ShowMore,
     Skeleton,
     StateChip,
   ],
