@@ -1,7 +1,9 @@
 export * from './accounts';
+export * from './assessments';
 export * from './billing';
 export * from './booking';
 export * from './clinical-record';
+export * from './clinical-tests';
 export * from './demo';
 export * from './floor';
 export * from './messages';
@@ -10,3 +12,4 @@ export * from './prescriptions';
 export * from './program';
 export * from './progression';
 export * from './settings';
+export * from './treatment';
