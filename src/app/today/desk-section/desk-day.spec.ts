@@ -48,6 +48,8 @@ describe('the desk’s day', () => {
     expect(missingAt(site, at).map(({ date, arrival }) => [date.id, arrival.status])).toEqual([
       [at, 'booked'],
     ]);
+    const later = '2026-12-01T20:00:00Z';
+    expect(missingAt(site, later).map(({ date }) => date.id)).toContain(at);
     expect(dueAt(site).map(({ arrival }) => arrival.due)).toEqual([owed]);
   });
 

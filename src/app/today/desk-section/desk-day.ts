@@ -42,11 +42,9 @@ const isOver = ({ endsAt }: DeskClass, at: string): boolean => Date.parse(endsAt
 export const isAtHand = (date: DeskClass, at: string): boolean =>
   !isOver(date, at) && Date.parse(date.startsAt) <= Date.parse(at) + 3_600_000;
 
-/** Who has a place in a class that is on, and has not come. */
+/** Who has a place in a class that has begun and has not come; after the class too, until someone says what became of it. */
 export const missingAt = (site: DeskSite, at: string): Expected[] =>
-  expectedAt(site).filter(
-    ({ arrival, date }) => arrival.status === 'booked' && hasBegun(date, at) && !isOver(date, at),
-  );
+  expectedAt(site).filter(({ arrival, date }) => arrival.status === 'booked' && hasBegun(date, at));
 
 export const dueAt = (site: DeskSite): Expected[] =>
   expectedAt(site).filter(({ arrival }) => arrival.due !== null);
