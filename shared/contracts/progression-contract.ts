@@ -32,7 +32,7 @@ export const machineSettingSchema = z.discriminatedUnion('modality', [
   z.strictObject({
     modality: z.literal('step'),
     stepHeightMeters: numberField(bounds.stepHeightMeters, 'm'),
-    stepsPerMinute: numberField(bounds.stepsPerMinute, 'steps/min'),
+    stepsPerMinute: numberField(bounds.stepsPerMinute, 'step cycles/min'),
   }),
   z.strictObject({ modality: z.literal('stepper'), mets: numberField(bounds.mets, 'METs') }),
 ]);

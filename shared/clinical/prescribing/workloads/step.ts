@@ -9,7 +9,7 @@ import type { WorkPoint } from './point';
 /** The step on which work is prescribed, m, where the program has it. */
 const usualHeight = 0.15;
 
-const notInRange = outsideRange('Stepping at this work is', '12–30 steps/min');
+const notInRange = outsideRange('Stepping at this work is', '12–30 step cycles/min');
 
 const row = (
   point: WorkloadPoint,

@@ -1,6 +1,8 @@
 import type { MachineSetting } from '@shared/clinical/progression/machine-setting';
 import type { ProgressionAction } from '@shared/clinical/progression/propose-progression';
 import type { NextStart, Proposal } from '@shared/contracts/progression-contract';
+import { powerText, stepText, treadmillText } from './machine-words';
+import { metsFloor } from './prescription-words';
 
 type Load = NextStart['load'];
 type Modality = MachineSetting['modality'];
@@ -26,13 +28,13 @@ const settingText = (setting: Load['setting']): string => {
   switch (setting.modality) {
     case 'cycle':
     case 'arm':
-      return `${setting.powerWatts} W`;
+      return powerText(setting.powerWatts);
     case 'step':
-      return `${Math.round(setting.stepHeightMeters * 100)} cm, ${setting.stepsPerMinute} steps/min`;
+      return stepText(setting.stepHeightMeters, setting.stepsPerMinute);
     case 'stepper':
-      return `${setting.mets.toFixed(1)} METs`;
+      return `${metsFloor(setting.mets)} METs`;
     default:
-      return `${setting.speedMph.toFixed(1)} mph, ${setting.gradePercent === 0 ? 'level' : `${setting.gradePercent} %`}`;
+      return treadmillText(setting.speedMph, setting.gradePercent);
   }
 };
 

@@ -6,6 +6,7 @@ import type {
   Workload,
 } from '@shared/clinical/prescribing/answer';
 import type { MaximumMethod, Method } from '@shared/clinical/prescribing/request';
+import { powerText, stepText, treadmillText } from './machine-words';
 
 // What people read of a worked-out range.
 
@@ -75,7 +76,7 @@ export const modalityWords: Readonly<Record<Workload['modality'], string>> = {
   cycle: 'Cycle',
   arm: 'Arm ergometer',
   step: 'Step',
-  stepper: 'Stepper',
+  stepper: 'Recumbent stepper',
 };
 
 /** The setting of a machine; null where the equation gives none. */
@@ -84,15 +85,15 @@ export function settingText(workload: Workload): string | null {
     case 'treadmill-walk': {
       const { speedMph, gradePercent } = workload;
       if (speedMph === null) return null;
-      return `${speedMph.toFixed(1)} mph, ${gradePercent ? `${gradePercent} %` : 'level'}`;
+      return treadmillText(speedMph, gradePercent ?? 0);
     }
     case 'cycle':
     case 'arm':
-      return workload.powerWatts === null ? null : `${workload.powerWatts} W`;
+      return workload.powerWatts === null ? null : powerText(workload.powerWatts);
     case 'step': {
       const { stepHeightMeters, stepsPerMinute } = workload;
       if (stepsPerMinute === null || stepHeightMeters === null) return null;
-      return `${Math.round(stepHeightMeters * 100)} cm, ${stepsPerMinute} steps/min`;
+      return stepText(stepHeightMeters, stepsPerMinute);
     }
     case 'stepper':
       return workload.mets === null ? null : `${metsFloor(workload.mets)} METs`;
